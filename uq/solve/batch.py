@@ -1,0 +1,57 @@
+"""What the solve room takes and makes besides `Code`: settings in, a `Batch` of solved members out."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from enum import IntEnum
+
+import numpy as np
+from numpy.typing import NDArray
+
+Floats = NDArray[np.float64]
+
+
+class Status(IntEnum):
+    """How a member ended. The words are public names in result.nc."""
+
+    ok = 0
+    ended_by_event = 1
+    out_of_range = 2
+    not_finite = 3
+    blew_up = 4
+    too_many_steps = 5
+    too_many_events = 6
+    step_too_small = 7
+    out_of_time = 8
+
+
+@dataclass(frozen=True)
+class Settings:
+    """How members are solved: relative tolerance `accuracy`, `scales` [state] in state units (absolute tolerance = accuracy x scale),
+    `lowest` and `highest` [state] valid values (-inf, inf where none), `max_steps` per member."""
+
+    accuracy: float
+    scales: Floats
+    lowest: Floats
+    highest: Floats
+    max_steps: int = 100_000
+
+
+@dataclass(frozen=True)
+class Batch:
+    """Solved members, in the order of the rows of x.
+
+    values [member, observed, time] (float64, C order; nan from the time of failure on), conditions [member, condition, time] (bool; false
+    from failure on), outcomes [member, outcome] (nan where a course has no value or the member failed), status [member] (int8),
+    end_time [member] (time of failure, else the last time), steps and rejections [member] (int32), largest [member, state]
+    (largest |x| over start and accepted steps).
+    """
+
+    values: Floats
+    conditions: NDArray[np.bool_]
+    outcomes: Floats
+    status: NDArray[np.int8]
+    end_time: Floats
+    steps: NDArray[np.int32]
+    rejections: NDArray[np.int32]
+    largest: Floats

@@ -1,0 +1,65 @@
+"""Memory as the written code wants it: groups of slots of eight doubles, on addresses that are multiples of 64."""
+
+from __future__ import annotations
+
+import ctypes
+
+import numpy as np
+from numpy.typing import NDArray
+
+from uq.model.layout import LANES, Layout, Setting
+from uq.solve.batch import Settings
+
+Floats = NDArray[np.float64]
+ALIGNMENT = 64
+# Steps shorter than this part of the whole time are refused even where the time itself is 0.
+SHORTEST_PART = 1e-24
+# A state that is far above its scale and would double within this part of the whole time is running away.
+MOMENT_PART = 1e-6
+
+
+def aligned(slots: int) -> Floats:
+    """Zeros [slot, lane] that begin on an aligned address."""
+    room = np.zeros(slots * LANES + ALIGNMENT // 8)
+    first = (-room.ctypes.data % ALIGNMENT) // 8
+    return room[first : first + slots * LANES].reshape(slots, LANES)
+
+
+def settings_block(layout: Layout, settings: Settings, length: float, times: int) -> Floats:
+    """The settings as slots, followed by the place for scrap; `length`: from start to stop; `times`: number of output times."""
+    states = layout.states
+    given = aligned(layout.setting_slots + 1)
+    words = given.view(np.int64)
+    words[Setting.stride], words[Setting.truth_stride] = 8 * times, times
+    words[Setting.scrap] = words[layout.setting_slots :].ctypes.data
+    given[Setting.accuracy] = settings.accuracy
+    given[Setting.attempts] = settings.max_steps
+    given[Setting.shortest] = SHORTEST_PART * length
+    given[Setting.moment] = MOMENT_PART * length
+    given[layout.first_tolerance : layout.first_tolerance + states] = (settings.accuracy * settings.scales)[:, None]
+    given[layout.first_lowest : layout.first_lowest + states] = settings.lowest[:, None]
+    given[layout.first_highest : layout.first_highest + states] = settings.highest[:, None]
+    return given
+
+
+def through_table(address: int, columns: Floats, width: int) -> Floats:
+    """Send rows through a written function that works on whole tables (`@uq_outcomes`, `@uq_starts`).
+
+    columns [row, given]; returns [row, width]. Rows are padded to a multiple of eight with copies of the last one.
+    """
+    rows, given = columns.shape
+    groups = -(-rows // LANES)
+    source, target = aligned(groups * given), aligned(groups * width)
+    if given and rows:
+        padded = columns[np.minimum(np.arange(groups * LANES), rows - 1)]
+        source[:] = padded.reshape(groups, LANES, given).transpose(0, 2, 1).reshape(groups * given, LANES)
+    function = ctypes.CFUNCTYPE(None, ctypes.c_void_p, ctypes.c_void_p, ctypes.c_int64)(address)
+    function(source.ctypes.data, target.ctypes.data, groups)
+    spread = target.reshape(groups, width, LANES).transpose(0, 2, 1).reshape(groups * LANES, width)
+    return np.ascontiguousarray(spread[:rows])
+
+
+def call_group(address: int, group: Floats, settings: Floats) -> int:
+    """Call a written function on one lane group; returns its mask of lanes."""
+    function = ctypes.CFUNCTYPE(ctypes.c_int64, ctypes.c_void_p, ctypes.c_void_p)(address)
+    return int(function(group.ctypes.data, settings.ctypes.data))
