@@ -1,0 +1,77 @@
+"""How likely a limit is passed, by when, and whether the accepted probability is kept."""
+
+from __future__ import annotations
+
+import numpy as np
+
+from uq.analysis.ask import Ask, Counts, LimitAsked
+from uq.analysis.estimate import Estimate
+from uq.analysis.finding import Finding, Variable
+from uq.analysis.passings import Passings
+from uq.analysis.pieces import Array
+from uq.analysis.policy import WITHHELD, Counted, Named
+from uq.analysis.probabilities import probability_both_ways
+from uq.analysis.quantiles import Levels, weighted_quantiles
+
+NEVER = "it came true for no member"
+
+
+def findings(ask: Ask, passings: Passings) -> tuple[Finding, ...]:
+    """One group limits/L for every limit."""
+    counts = passings.pieces.by_replicate()
+    members = 2 * passings.pieces.rows
+    return tuple(_limit(ask, limit, _of_limit(counts, place), members) for place, limit in enumerate(ask.limits))
+
+
+def _of_limit(counts: dict[str, Array], place: int) -> dict[str, Counts]:
+    return {**{name: counts[name][:, place] for name in ("passed", "unknown", "now")}, "failed": counts["failed"]}
+
+
+def _limit(ask: Ask, limit: LimitAsked, counts: dict[str, Counts], members: int) -> Finding:
+    label = limit.label or limit.name
+    places = np.searchsorted(ask.judged, ask.grid)
+    by = np.searchsorted(ask.judged, [ask.place(time) for time in limit.by])
+    passed, unknown = counts["passed"].cumsum(axis=1), counts["unknown"].cumsum(axis=1)
+    failed = counts["failed"].cumsum(axis=1)
+    ever = probability_both_ways(passed[:, places], unknown[:, places], members, ask.confidence)
+    now = probability_both_ways(counts["now"][:, places], failed[:, places], members, ask.confidence)
+    ever_by = probability_both_ways(passed[:, by], unknown[:, by], members, ask.confidence)
+    variables = Named("ever", ("time",), f"probability that it has been true by then: {label}").counted(ever, ask.failures)
+    variables |= Named("now", ("time",), f"probability that it is true then: {label}").counted(now, ask.failures)
+    variables |= _first_time(ask, limit, counts)
+    variables["by"] = Variable(("by",), np.asarray(limit.by, dtype=np.float64), "time by which", ask.time_unit)
+    variables |= Named("ever_by", ("by",), f"probability that it has been true by then: {label}").counted(ever_by, ask.failures)
+    return Finding(f"limits/{limit.name}", variables, {"when": limit.when, **_verdict(ask, limit, variables, ever_by)})
+
+
+def _first_time(ask: Ask, limit: LimitAsked, counts: dict[str, Counts]) -> dict[str, Variable]:
+    """Quantiles of the first time among the members where it comes true; members not known come in at once, or at the last time."""
+    levels = Levels(ask.quantiles, ask.confidence)
+    times = ask.solved_times[ask.judged]
+    came, unknown = counts["passed"][:, :-1], counts["unknown"][:, :-1]
+    found = Counted.complete(weighted_quantiles(came, times, levels))
+    if unknown.any():
+        late = came.copy()
+        late[:, -1] += unknown.sum(axis=1)
+        early, last = weighted_quantiles(came + unknown, times, levels), weighted_quantiles(late, times, levels)
+        lost = np.ones(len(levels.shares), dtype=np.bool_)
+        if_low = Estimate(*(np.fmin(one, other) for one, other in zip(_ends(early), _ends(found.success), strict=True)))
+        if_high = Estimate(*(np.fmax(one, other) for one, other in zip(_ends(last), _ends(found.success), strict=True)))
+        found = Counted(found.success, if_low, if_high, lost)
+    words = f"first time at which it is true, among members where it comes true: {limit.label or limit.name}"
+    reason = NEVER if np.isnan(found.success.value).any() else ""
+    return Named("first_time", ("quantile",), words, ask.time_unit).counted(found, ask.failures, reason)
+
+
+def _ends(estimate: Estimate) -> tuple[Array, Array, Array]:
+    return estimate.value, estimate.low, estimate.high
+
+
+def _verdict(ask: Ask, limit: LimitAsked, variables: dict[str, Variable], ever_by: Counted) -> dict[str, object]:
+    """Met where the upper end at the last `by` is at most the accepted probability, not met where the lower end is above it."""
+    if limit.accept is None or not limit.by:
+        return {}
+    low, high = (float(variables[name].data[-1]) for name in ("ever_by_low", "ever_by_high"))
+    verdict = "met" if high <= limit.accept else "not met" if low > limit.accept else "not settled"
+    withheld = {"reason": WITHHELD} if ask.failures == "refuse" and bool(ever_by.lost[-1]) else {}
+    return {"accept": limit.accept, "verdict": verdict, **withheld}

@@ -1,0 +1,116 @@
+"""What is said where members failed: bounds, numbers given success, or nothing (design.md 2.5)."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass
+from typing import Any, Literal
+
+import numpy as np
+from numpy.typing import NDArray
+
+from uq.analysis.ask import Floats
+from uq.analysis.estimate import Estimate
+from uq.analysis.finding import Variable
+
+Policy = Literal["bound", "exclude", "refuse"]
+
+# The largest share of base rows that may be lost before means, deviations and indices are missing.
+LARGEST_LOSS = 1e-3
+WITHHELD = "withheld because members failed"
+TOO_MANY_LOST = "more than 0.1 % of the base rows are lost to failed members or missing values"
+
+NOBODY_LEFT = "no member is left that has a value"
+
+
+@dataclass(frozen=True, eq=False)
+class Counted:
+    """An estimate given success, and with the failed members counted both ways; `lost`: where any member failed."""
+
+    success: Estimate
+    if_low: Estimate
+    if_high: Estimate
+    lost: NDArray[np.bool_]
+
+    @classmethod
+    def complete(cls, estimate: Estimate) -> Counted:
+        """Nobody failed."""
+        return cls(estimate, estimate, estimate, np.zeros(estimate.value.shape, dtype=np.bool_))
+
+    def map(self, change: Callable[[NDArray[Any]], NDArray[Any]]) -> Counted:
+        """The same with every array changed in shape."""
+
+        def changed(estimate: Estimate) -> Estimate:
+            return Estimate(change(estimate.value), change(estimate.low), change(estimate.high))
+
+        return Counted(changed(self.success), changed(self.if_low), changed(self.if_high), change(self.lost))
+
+    def at(self, place: int) -> Counted:
+        """The part at one place of the leading axis."""
+        return self.map(lambda array: np.asarray(array[place]))
+
+
+def stacked(parts: list[Counted]) -> Counted:
+    """Estimates of several cells one after another along the first axis."""
+
+    def joined(pick: Callable[[Counted], Estimate]) -> Estimate:
+        ends = [pick(part) for part in parts]
+        return Estimate(*(np.concatenate([getattr(end, name) for end in ends]) for name in ("value", "low", "high")))
+
+    lost = np.concatenate([part.lost for part in parts])
+    return Counted(joined(lambda part: part.success), joined(lambda part: part.if_low), joined(lambda part: part.if_high), lost)
+
+
+@dataclass(frozen=True)
+class Named:
+    """What a variable is called: public name, dimensions, words, unit, further attributes."""
+
+    name: str
+    dims: tuple[str, ...]
+    long_name: str
+    unit: str = "1"
+    attributes: Mapping[str, Any] | None = None
+
+    def variables(self, estimate: Estimate, reason: str = "") -> dict[str, Variable]:
+        """The estimate and the ends of its interval; the reason why some of it is missing as attribute."""
+        return {
+            self.name: self._one(estimate.value, self.long_name, {"reason": reason} if reason else {}),
+            f"{self.name}_low": self._one(estimate.low, f"lower end of the interval: {self.long_name}"),
+            f"{self.name}_high": self._one(estimate.high, f"upper end of the interval: {self.long_name}"),
+        }
+
+    def counted(self, found: Counted, policy: Policy, reason: str = "") -> dict[str, Variable]:
+        """The variables that the policy gives; see the module."""
+        return _POLICIES[policy](self, found, reason)
+
+    def _one(self, data: Floats, long_name: str, further: Mapping[str, Any] | None = None) -> Variable:
+        return Variable(self.dims, np.asarray(data, dtype=np.float64), long_name, self.unit, {**(self.attributes or {}), **(further or {})})
+
+
+def _bound(named: Named, found: Counted, reason: str) -> dict[str, Variable]:
+    reason = reason or _nobody(found)
+    outer = Estimate(found.success.value, found.if_low.low, found.if_high.high)
+    variables = named.variables(outer, reason)
+    if found.lost.any():
+        variables[f"{named.name}_if_low"] = named._one(found.if_low.value, f"failed members counted low: {named.long_name}")
+        variables[f"{named.name}_if_high"] = named._one(found.if_high.value, f"failed members counted high: {named.long_name}")
+    return variables
+
+
+def _exclude(named: Named, found: Counted, reason: str) -> dict[str, Variable]:
+    if found.lost.any():
+        attributes = {**(named.attributes or {}), "given": "success"}
+        named = Named(named.name, named.dims, f"{named.long_name}, given success", named.unit, attributes)
+    return named.variables(found.success, reason or _nobody(found))
+
+
+def _nobody(found: Counted) -> str:
+    return NOBODY_LEFT if np.isnan(found.success.value).any() else ""
+
+
+def _refuse(named: Named, found: Counted, reason: str) -> dict[str, Variable]:
+    kept = found.success.where(~found.lost)
+    return named.variables(kept, WITHHELD if found.lost.any() else reason)
+
+
+_POLICIES: Mapping[str, Callable[[Named, Counted, str], dict[str, Variable]]] = {"bound": _bound, "exclude": _exclude, "refuse": _refuse}
