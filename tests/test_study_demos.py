@@ -1,0 +1,194 @@
+"""The demo studies say what they mean: their equations against the same written by hand, their answers neither 0 nor 1.
+
+Solved here with SciPy's Dormand-Prince pair (solve_ivp, method RK45), all members as one system, so that nothing of uq's solver takes part.
+"""
+
+from __future__ import annotations
+
+from functools import cache
+from pathlib import Path
+from typing import Any
+
+import numpy as np
+import pytest
+from scipy.integrate import solve_ivp
+
+from uq.lang.graph import Node
+from uq.study.read import read_study
+from uq.study.study import Study
+
+FOLDER = Path(__file__).parent.parent / "configs"
+NAMES = ("hold-tank", "orchard-mites", "crane-sway")
+MEMBERS = 96
+APPLY: dict[str, Any] = {
+    "+": np.add,
+    "-": np.subtract,
+    "*": np.multiply,
+    "/": np.divide,
+    "**": np.power,
+    "neg": np.negative,
+    "<": np.less,
+    "<=": np.less_equal,
+    ">": np.greater,
+    ">=": np.greater_equal,
+    "and": np.logical_and,
+    "or": np.logical_or,
+    "not": np.logical_not,
+    "where": np.where,
+    "max": np.maximum,
+    "min": np.minimum,
+    **{name: getattr(np, name) for name in ("exp", "sqrt", "sin", "cos", "abs")},
+}
+
+
+@cache
+def demo(name: str) -> Study:
+    return read_study(FOLDER / f"{name}.toml")
+
+
+def evaluate(study: Study, nodes: tuple[Node, ...], leaves: dict[str, Any]) -> list[Any]:
+    """The values of nodes, plainly."""
+    values: dict[int, Any] = {}
+    for node in study.equations.graph.order(nodes):
+        if node.op in ("number", "name"):
+            values[node.id] = node.value if node.op == "number" else leaves[str(node.value)]
+        else:
+            values[node.id] = APPLY[node.op](*(values[arg.id] for arg in node.args))
+    return [values[node.id] for node in nodes]
+
+
+def leaves_at(study: Study, time: float, x: Any, y: Any) -> dict[str, Any]:
+    inputs = dict(zip(study.inputs.names, x.T, strict=True))
+    forced = {f.name: np.interp(time, f.times, f.values) for f in study.equations.forcings}
+    return {**inputs, **dict(zip(study.equations.states, y, strict=True)), **forced, "time": time}
+
+
+@cache
+def solved(name: str) -> tuple[Any, Any, Any, Any]:
+    """Inputs [member, input], observed [observed, time, member], conditions [condition, time, member], calls of the rates."""
+    study = demo(name)
+    x = study.inputs.values(np.random.default_rng(5).random((MEMBERS, len(study.inputs.names))))
+    nothing = np.zeros((len(study.states), MEMBERS))
+    start = np.array([np.broadcast_to(v, MEMBERS) for v in evaluate(study, study.equations.starts, leaves_at(study, 0.0, x, nothing))])
+
+    def rates(time: float, y: Any) -> Any:
+        leaves = leaves_at(study, time, x, y.reshape(start.shape))
+        return np.concatenate([np.broadcast_to(v, MEMBERS) for v in evaluate(study, study.equations.rates, leaves)])
+
+    times = study.times.solved
+    found = solve_ivp(rates, (study.time.start, study.time.stop), start.ravel(), t_eval=times, rtol=1e-6, atol=1e-6, max_step=times[1] * 50)
+    assert found.success
+    courses = found.y.reshape(*start.shape, len(times))
+
+    def along(nodes: tuple[Node, ...]) -> Any:
+        rows = [
+            [np.broadcast_to(v, MEMBERS) for v in evaluate(study, nodes, leaves_at(study, t, x, courses[:, :, i]))]
+            for i, t in enumerate(times)
+        ]
+        return np.array(rows).transpose(1, 0, 2)
+
+    return x, along(study.equations.observed), along(study.equations.conditions), found.nfev
+
+
+def ever_by(name: str, limit: int) -> list[float]:
+    """The share of members that have passed a limit by each of its times."""
+    study = demo(name)
+    condition = solved(name)[2][limit]
+    return [float(condition[study.times.solved <= by].any(axis=0).mean()) for by in study.limits_asked[limit].by]
+
+
+@pytest.mark.parametrize("name", NAMES)
+def test_everything_that_a_reviewer_asks_for_is_filled_in(name: str) -> None:
+    study = demo(name)
+    assert study.warnings == ()
+    assert study.title
+    assert study.about
+    assert "invented" in study.caution
+    assert all(state.label for state in study.states)
+    for item in study.inputs.items:
+        assert item.label != item.name, item.name
+        assert item.kind, item.name
+        assert item.evidence is not None, item.name
+    assert all(quantity.label != quantity.name for quantity in (*study.watched, *study.outcome_quantities))
+    assert study.limits
+    assert study.outcomes
+    assert any(item.source for item in study.inputs.items)
+
+
+@pytest.mark.parametrize("name", NAMES)
+def test_the_explicit_solver_copes_and_values_stay_valid(name: str) -> None:
+    study = demo(name)
+    _, observed, _, calls = solved(name)
+    assert np.isfinite(observed).all()
+    assert calls < 6 * 5000, "the slowest member asks for a few thousand steps at most"
+    assert (observed[: len(study.watched)].std(axis=2)[:, -1] > 0).all()
+
+
+def test_hold_tank_against_the_same_by_hand() -> None:
+    study = demo("hold-tank")
+    leaves = {"q": 190.0, "k0": 7e12, "activation": 98.0, "UA_off": 4.0, "T_start": 303.0, "T": 330.0, "x": 0.25, "ambient": 295.0}
+    rate_T, rate_x = evaluate(study, study.equations.rates, leaves)
+    k = 7e12 * np.exp(-98.0 / (8.314462618e-3 * 330.0))
+    assert rate_x == pytest.approx(k * 0.75, rel=1e-13)
+    assert rate_T == pytest.approx((4000 * 190 * k * 0.75 - 4 * (330 - 295)) / (4000 * 2.1), rel=1e-13)
+    # at most the heat of all that can decompose: the temperature is bounded
+    assert solved("hold-tank")[1][0].max() < 310 + 220 / 2.1
+
+
+def test_hold_tank_answers_are_open() -> None:
+    passed = ever_by("hold-tank", 0)
+    assert 0.01 < passed[-1] < 0.3
+    assert passed[0] <= passed[1] <= passed[2]
+
+
+def test_orchard_mites_against_the_same_by_hand() -> None:
+    study = demo("orchard-mites")
+    leaves = {
+        "speed": 0.015,
+        "capacity": 30.0,
+        "appetite": 2.5,
+        "half": 3.0,
+        "decline": 0.06,
+        "warmth": 1.0,
+        "pest": 5.0,
+        "hunter": 0.4,
+        "usual": 18.0,
+    }
+    leaves["yield"] = 0.12
+    pest, hunter = evaluate(study, study.equations.rates, leaves)
+    growth, eaten = 0.015 * (18 + 1 - 10), 2.5 * 0.4 * 5 / 8
+    assert pest == pytest.approx(growth * 5 * (1 - 5 / 30) - eaten, rel=1e-13)
+    assert hunter == pytest.approx(0.12 * eaten - 0.06 * 0.4, rel=1e-13)
+
+
+def test_orchard_mites_answers_are_open() -> None:
+    passed = ever_by("orchard-mites", 0)
+    assert 0.02 < passed[0] < 0.3 < passed[2] < 0.7
+    assert 0 < ever_by("orchard-mites", 1)[0] < passed[2]
+
+
+def test_crane_sway_against_the_same_by_hand() -> None:
+    study = demo("crane-sway")
+    leaves = {"hoist": 12.0, "travel": 3.0, "stopping": 2.0, "load": 2000.0, "area": 6.0, "air": 1.2, "angle": 0.3, "turn": 0.1}
+    for time, braking, trolley in ((0.5, 1.5, 2.25), (3.0, 0.0, 0.0)):
+        turn, twist = evaluate(study, study.equations.rates, {**leaves, "time": time})
+        speed = 12 * 0.1 + trolley * np.cos(0.3)
+        drag = 1.2 * 6 / 2 / 2000 * speed * abs(speed) / 12
+        assert turn == 0.1
+        assert twist == pytest.approx((braking * np.cos(0.3) - 9.80665 * np.sin(0.3)) / 12 - drag, rel=1e-13)
+
+
+def test_crane_sway_answers_are_open_and_angles_are_large() -> None:
+    assert 0.02 < ever_by("crane-sway", 0)[-1] < 0.3
+    widest = np.abs(solved("crane-sway")[1][0]).max(axis=0)
+    assert np.quantile(widest, 0.9) > 0.25
+
+
+@pytest.mark.parametrize(("name", "least"), [("hold-tank", 0.1), ("orchard-mites", 0.15), ("crane-sway", 0.2)])
+def test_several_inputs_matter(name: str, least: float) -> None:
+    """Squared rank correlation with the highest value of the first quantity of a limit: two inputs at least above a tenth of the whole."""
+    x, observed, _, _ = solved(name)
+    peak = observed[1 if name == "crane-sway" else 0].max(axis=0)
+    ranks = [np.argsort(np.argsort(column)) for column in (*x.T, peak)]
+    squares = np.corrcoef(ranks)[-1, :-1] ** 2
+    assert np.sort(squares)[-2] > least / 2, dict(zip(demo(name).inputs.names, squares.round(2), strict=True))

@@ -1,0 +1,56 @@
+"""What is no mistake but should be looked at: the warnings of a study."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable, Iterator
+
+from uq.inputs.inputs import Input, Inputs
+from uq.study.locate import Path
+from uq.study.names import differing_in_case
+from uq.study.work import Work
+from uq.units import parse_unit
+
+# A quantity counts as positive where most draws are: with a quarter or more below zero, values of both signs are meant. Below
+# one in a million nothing is said: no ordinary run meets such a draw.
+_FEWEST_BELOW = 1e-6
+_MOST_BELOW = 0.25
+
+
+def warnings(work: Work, inputs: Inputs, watch: Iterable[str]) -> tuple[str, ...]:
+    """All warnings, in words."""
+    found = ["no unit is stated anywhere: the study is taken as dimensionless"] if work.sheets.unitless else []
+    found += [f"nothing uses {place} `{name}`" for place, name in _unused(work, watch)]
+    found += differing_in_case([*work.low.declared, *work.sheets.outcomes, *work.sheets.limits])
+    found += [text for item in inputs.items for text in _below_zero(item)]
+    return tuple(found)
+
+
+def _unused(work: Work, watch: Iterable[str]) -> Iterator[tuple[str, str]]:
+    """Parameters, terms and forcings that no rate, start, limit, outcome or watched quantity depends on."""
+    sheets, low = work.sheets, work.low
+    roots: list[Path] = [("states", name, key) for name in sheets.states for key in ("rate", "start")]
+    roots += [("limits", name, "when") for name in sheets.limits]
+    roots += [("outcomes", name, "take") for name in sheets.outcomes]
+    waiting = [*watch, *(name for root in roots for name in low.used(root))]
+    seen: set[str] = set()
+    while waiting:
+        name = waiting.pop()
+        if name not in seen:
+            seen.add(name)
+            if name in sheets.terms:
+                waiting += low.used(sheets.text_path("terms", name, work.document))
+    for what, names in (("the parameter", sheets.parameters), ("the term", sheets.terms), ("the forcing", sheets.forcings)):
+        yield from ((what, name) for name in names if name not in seen)
+
+
+def _below_zero(item: Input) -> Iterator[str]:
+    """The share of draws below zero of a quantity whose other values are positive."""
+    if parse_unit(item.unit).temperature == "scale":
+        return
+    share = item.distribution.share_below(0.0)
+    if _FEWEST_BELOW <= share < _MOST_BELOW:
+        yield f"`{item.name}` is positive but for {_percent(share)} of its draws, which are below zero"
+
+
+def _percent(share: float) -> str:
+    return f"{100 * share:.2g} %"

@@ -1,0 +1,178 @@
+"""A whole document read table by table: every declaration as far as it could be read, every mistake noted."""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Iterator, Mapping
+from dataclasses import dataclass
+from typing import Any, TypeVar
+
+from uq.errors import ValueMistake
+from uq.study import values as read
+from uq.study.columns import Files
+from uq.study.declarations import ForcingCourse, Limit, Outcome, Parameter, State, Term
+from uq.study.fields import Sheet, entry, keys_of, read_table, unknown
+from uq.study.locate import Path
+from uq.study.names import tables
+from uq.study.notes import KeyMistake, Notes
+from uq.study.plan import Plan, Time
+from uq.study.values import Frame
+from uq.units import NONE
+
+TABLES = ("time", "states", "parameters", "terms", "forcings", "outcomes", "limits", "plan")
+TABLES_LATER = (
+    "switches",
+    "events",
+    "dependence",
+    "index",
+    "tables",
+    "scenarios",
+    "measured",
+    "units",
+    "model",
+    "assumptions",
+    "not_included",
+    "review",
+)
+T = TypeVar("T")
+
+# Keys whose texts say something about units; labels and sources are prose.
+_PROSE = ("title", "about", "caution", "label", "source", "kind", "group", "interpolation", "keep", "name")
+
+
+def schema(value: object, frame: Frame) -> int:
+    """The version of the format: 1."""
+    if isinstance(value, bool) or value != 1:
+        raise ValueMistake(read.show(value), "1, the version of the format that this version reads")
+    return 1
+
+
+@dataclass(frozen=True, kw_only=True)
+class Head:
+    """The keys at the top of a study."""
+
+    schema: int = entry("version of the format, 1", schema)
+    title: str = entry("what the study is called", read.text, "", "the name of the file")
+    about: str = entry("the question, in a sentence or two", read.text, "")
+    caution: str = entry("what must be said before anything else where work can hurt someone", read.text, "")
+
+
+@dataclass(frozen=True)
+class Sheets:
+    """All tables of a document."""
+
+    unitless: bool
+    head: Sheet[Head]
+    time: Sheet[Time]
+    plan: Sheet[Plan]
+    states: Mapping[str, Sheet[State]]
+    parameters: Mapping[str, Sheet[Parameter]]
+    terms: Mapping[str, Sheet[Term]]
+    forcings: Mapping[str, Sheet[ForcingCourse]]
+    outcomes: Mapping[str, Sheet[Outcome]]
+    limits: Mapping[str, Sheet[Limit]]
+
+    def text_path(self, key: str, name: str, document: Mapping[str, Any]) -> Path:
+        """Where the expression of a term stands: in its short form the term itself is the text."""
+        return (key, name, "value") if isinstance(document[key][name], Mapping) else (key, name)
+
+
+def read_sheets(document: Mapping[str, Any], files: Files, notes: Notes) -> Sheets:
+    """Read every table; mistakes go to `notes`."""
+    unitless = not _states_units(document)
+    frame = Frame(NONE, NONE, unitless, files)
+    head = _head(document, frame, notes)
+    if "time" in document:
+        time = _noted(read_table(Time, document["time"], frame), ("time",), notes)
+    else:
+        notes.at_key(("time",), "no [time]", "a table [time]")
+        time = Sheet({}, (), None)
+    if document.get("states", {}) == {}:
+        notes.at_key(("states",), "no state", "one table [states.NAME] or more")
+    frame = Frame(NONE, time.unit, unitless, files)
+
+    def all_of(key: str, one: Callable[[str, Any, Frame], Sheet[Any]]) -> dict[str, Sheet[Any]]:
+        if key in document and not isinstance(document[key], Mapping):
+            notes.at_value((key,), read.show(document[key]), f"tables [{key}.NAME]")
+        return {name: _noted(one(name, value, frame), (key, name), notes) for name, value in tables(document, key).items()}
+
+    return Sheets(
+        unitless,
+        head,
+        time,
+        _noted(read_table(Plan, document.get("plan", {}), frame), ("plan",), notes),
+        all_of("states", lambda name, value, frame: read_table(State, value, frame, name)),
+        all_of("parameters", parameter),
+        all_of("terms", term),
+        all_of("forcings", lambda name, value, frame: read_table(ForcingCourse, value, frame, name)),
+        all_of("outcomes", lambda name, value, frame: read_table(Outcome, value, frame, name)),
+        all_of("limits", lambda name, value, frame: read_table(Limit, value, frame, name)),
+    )
+
+
+def _head(document: Mapping[str, Any], frame: Frame, notes: Notes) -> Sheet[Head]:
+    """The keys at the top; tables that nobody knows are noted here too."""
+    own = keys_of(Head)
+    for key in document:
+        if key not in own and key not in TABLES:
+            notes.refused((key,), unknown(key, (*own, *TABLES), TABLES_LATER))
+    return _noted(read_table(Head, {key: document[key] for key in document if key in own}, frame), (), notes)
+
+
+def _noted(sheet: Sheet[T], path: Path, notes: Notes) -> Sheet[T]:
+    for below, mistake in sheet.mistakes:
+        notes.refused((*path, *below), mistake)
+    return sheet
+
+
+def parameter(name: str, value: object, frame: Frame) -> Sheet[Parameter]:
+    """A parameter: a table, or in short a quantity, or a plain number where the study has no units."""
+    if isinstance(value, Mapping):
+        return read_table(Parameter, value, frame, name)
+    try:
+        quantity = read.split_quantity(value) if isinstance(value, str) else None
+        if quantity is not None:
+            number, unit = quantity[0], quantity[1].text
+        elif isinstance(value, str):
+            remedy = read.number_remedy(value) or "an expression belongs into [terms]"
+            raise ValueMistake(read.show(value), 'a quantity such as "4000 kg", a number, or a table', remedy)
+        else:
+            number, unit = read.number(value), "1"
+    except ValueMistake as mistake:
+        return Sheet({"name": name}, (((), mistake),), None)
+    if quantity is None and not frame.unitless:
+        said = KeyMistake("a number without a unit", "a quantity", f'{name} = {{ value = {value!r}, unit = "1" }} where it has none')
+        return Sheet({"name": name, "value": number}, (((), said),), None)
+    whole = Parameter(name=name, value=number, unit=unit)
+    return Sheet({"name": name, "value": number, "unit": unit}, (), whole)
+
+
+def term(name: str, value: object, frame: Frame) -> Sheet[Term]:
+    """A term: a table, or in short the text of its expression."""
+    if isinstance(value, Mapping):
+        return read_table(Term, value, frame, name)
+    sheet = read_table(Term, {"value": value}, frame, name)
+    return Sheet(sheet.values, tuple(((), mistake) for _, mistake in sheet.mistakes), sheet.whole)
+
+
+def _states_units(document: Mapping[str, Any]) -> bool:
+    """Whether any unit is stated anywhere: a key `unit`, a quantity, or a quantity inside an expression."""
+    return any(key == "unit" or _has_unit(text) for key, text in _texts(document))
+
+
+def _texts(value: object, key: str = "") -> Iterator[tuple[str, str]]:
+    if isinstance(value, Mapping):
+        for name, inner in value.items():
+            if name not in _PROSE:
+                yield from _texts(inner, name)
+    elif isinstance(value, list):
+        for inner in value:
+            yield from _texts(inner, key)
+    elif isinstance(value, str):
+        yield key, value
+
+
+def _has_unit(text: str) -> bool:
+    try:
+        return "'" in text or read.split_quantity(text) is not None
+    except ValueMistake:
+        return True

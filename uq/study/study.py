@@ -1,0 +1,66 @@
+"""The `Study`: what a study file says, and what follows from it."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass, field
+from typing import Any
+
+import numpy as np
+from numpy.typing import NDArray
+
+from uq.analysis.ask import LimitAsked, Quantity
+from uq.inputs.inputs import Inputs
+from uq.model.code import Equations
+from uq.study.declarations import ForcingCourse, Limit, Outcome, Parameter, State, Term
+from uq.study.plan import Plan, Time
+from uq.study.times import Times
+
+
+@dataclass(frozen=True, eq=False, kw_only=True)
+class Study:
+    """A study that has been checked in full; made by `read_study` and `parse_study`.
+
+    Declared: `title`, `about`, `caution`, `time`, `states`, `parameters`, `terms`, `forcings`, `outcomes`, `limits`, `plan` (with `ask` and
+    `watch` filled in). Worked out: `inputs` (uncertain parameters in file order, then uncertain starts in state order), `equations`,
+    `watched` and `outcome_quantities` with their units, `limits_asked`, `times`, `lowest` and `highest` [state] (valid values, -inf and inf
+    where none). `text` is the file as read, `files` the bytes of the data files it names, `changes` what was changed by dotted key.
+    `warnings` are repeated in the report; `remarks` say how files were read.
+    """
+
+    name: str
+    text: str
+    files: Mapping[str, bytes]
+    changes: Mapping[str, object]
+    fingerprint: str
+    unitless: bool
+    title: str
+    about: str
+    caution: str
+    time: Time
+    states: tuple[State, ...]
+    parameters: tuple[Parameter, ...]
+    terms: tuple[Term, ...]
+    forcings: tuple[ForcingCourse, ...]
+    outcomes: tuple[Outcome, ...]
+    limits: tuple[Limit, ...]
+    plan: Plan
+    warnings: tuple[str, ...]
+    remarks: tuple[str, ...]
+    inputs: Inputs
+    equations: Equations
+    watched: tuple[Quantity, ...]
+    outcome_quantities: tuple[Quantity, ...]
+    limits_asked: tuple[LimitAsked, ...]
+    times: Times
+    lowest: NDArray[np.float64]
+    highest: NDArray[np.float64]
+    again: Any = field(repr=False)
+
+    def with_changes(self, changes: Mapping[str, object]) -> Study:
+        """The same study with some values changed, by dotted key: {"plan.members": 65536, "parameters.UA_off.triangular.mode": 3}.
+
+        A plain number for a parameter fixes it and keeps its unit. Checked as a file is: raises StudyError.
+        """
+        made: Study = self.again({**self.changes, **changes})
+        return made
