@@ -1,0 +1,55 @@
+"""What is kept of a run besides its findings: counts, times, versions, settings of the solver."""
+
+from __future__ import annotations
+
+import platform
+from collections.abc import Mapping
+from dataclasses import dataclass, field
+from datetime import datetime
+from importlib.metadata import PackageNotFoundError, version
+
+# Everything that touches a number, by distribution name; uq and python come on top.
+NUMERIC = ("numpy", "scipy", "numba", "llvmlite")
+
+
+@dataclass(frozen=True)
+class RunFacts:
+    """The facts of one run.
+
+    seed: of the design, as used. members_asked, members, members_failed: base rows (A and B, all replicates) wanted, solved in whole
+    rounds (failed ones counted), failed. solves, solves_failed: the same with the mixed rows of the ranking. wall_time in seconds,
+    finished with its time zone. scales: absolute tolerance of a state = accuracy x scale, by state; fell_back: the states whose scale
+    was 0.
+    seconds_per_solve: of one core, as measured. versions: see `versions`. processor: its features, as text. command: what was called,
+    for the history.
+    """
+
+    seed: int
+    members_asked: int
+    members: int
+    members_failed: int
+    solves: int
+    solves_failed: int
+    replicates: int
+    wall_time: float
+    finished: datetime
+    method: str
+    accuracy: float
+    threads: int = 1
+    seconds_per_solve: float = 0.0
+    scales: Mapping[str, float] = field(default_factory=dict)
+    fell_back: tuple[str, ...] = ()
+    versions: Mapping[str, str] = field(default_factory=dict)
+    processor: str = ""
+    command: str = ""
+
+
+def versions(uq_version: str) -> dict[str, str]:
+    """Versions of everything that touches numbers, by name; asks the installed packages, imports none of them."""
+    found = {"uq": uq_version, "python": platform.python_version()}
+    for name in NUMERIC:
+        try:
+            found[name] = version(name)
+        except PackageNotFoundError:
+            found[name] = "not installed"
+    return found
