@@ -7,62 +7,60 @@ from dataclasses import replace
 import numpy as np
 from numpy.typing import NDArray
 
-from uq.model.layout import LANES, Head
 from uq.solve.batch import Settings, Status
 from uq.solve.compile import Compiled
-from uq.solve.memory import Floats, aligned, call_group, settings_block
+from uq.solve.memory import Floats
 from uq.solve.solve import evaluate_starts, solve
 
 FALL_BACK = 1.0
+# The pilot looks ahead a little, then further: a state that starts at nothing has a size before its error could grow unseen.
+HORIZONS = (1e-6, 1e-4, 1e-2, 1e-1)
+# A scale found to be this much smaller than the one it was solved with may be made of uncontrolled error: it is found again.
+FALLS = 0.5
+MOST_PASSES = 40
 
 
 def pilot_scales(
     compiled: Compiled, x: Floats, times: Floats, start: float, settings: Settings, stop: NDArray[np.uint8] | None = None
 ) -> tuple[Floats, tuple[str, ...]]:
-    """The scale of every state: the median over the pilot of its largest size.
+    """The scale of every state: the median over the pilot of its largest size, among the members in which it is not 0.
 
     x [pilot, input]; returns scales [state] in state units and the names of the states whose scale was 0, which get 1. `settings.scales` is
-    not looked at. The pilot is solved twice: with provisional scales from starts and first rates, then with those of the first time.
-    Members that fail do not count, unless all do: then their starts count. Raises Interrupted soon after stop[0] is set.
+    not looked at. The pilot is solved over a millionth, a ten-thousandth, ... of the time, then over all of it, each time with the scales
+    found before, at least twice and until no scale falls any more: error that was not controlled never becomes a scale.
+    Members that fail do not count; where all do, the scales found before they did stand. Raises Interrupted soon after stop[0] is set.
     """
-    starts = evaluate_starts(compiled, x)
-    scales = _provisional(starts, first_rates(compiled, x, start, settings), float(times[-1]) - start)
-    for _ in range(2):
-        batch = solve(compiled, x, times, start, replace(settings, scales=scales), stop)
-        good = batch.status == Status.ok
-        largest = batch.largest[good] if good.any() else np.abs(starts)
-        scales = _median(largest)
-        unknown = scales == 0.0
-        scales[unknown] = FALL_BACK
-    return scales, tuple(name for name, fell in zip(compiled.code.states, unknown, strict=True) if fell)
+    end = float(times[-1])
+    sizes = _median(np.abs(evaluate_starts(compiled, x)))
+    for part in HORIZONS:
+        ahead = np.array([start + part * (end - start)])
+        if ahead[0] > start:
+            sizes = _found(compiled, x, ahead, start, replace(settings, scales=_given(sizes)), sizes, stop)
+    for passes in range(MOST_PASSES):
+        used = _given(sizes)
+        sizes = _found(compiled, x, times, start, replace(settings, scales=used), sizes, stop)
+        if passes and not np.any(sizes < FALLS * used):
+            break
+    unknown = sizes == 0.0
+    sizes[unknown] = FALL_BACK
+    return sizes, tuple(name for name, fell in zip(compiled.code.states, unknown, strict=True) if fell)
 
 
-def first_rates(compiled: Compiled, x: Floats, start: float, settings: Settings) -> Floats:
-    """Rates [member, state] at the start, forcings at 0 (they are only a first guess of sizes)."""
-    layout = compiled.layout
-    group = aligned(layout.slots)
-    given = settings_block(layout, replace(settings, scales=np.ones(layout.states)), 1.0, 0)
-    rates = np.empty((len(x), layout.states))
-    for first in range(0, len(x), LANES):
-        rows = x[first : first + LANES]
-        group[Head.time], group[Head.until] = start, start + 1.0
-        group[layout.first_input : layout.first_input + layout.inputs, : len(rows)] = rows.T
-        call_group(compiled.addresses["uq_start"], group, given)
-        rates[first : first + LANES] = group[layout.first_rate : layout.first_rate + layout.states, : len(rows)].T
-    return rates
+def _found(
+    compiled: Compiled, x: Floats, times: Floats, start: float, settings: Settings, before: Floats, stop: NDArray[np.uint8] | None
+) -> Floats:
+    """Sizes after one pass; `before` where no member got through."""
+    batch = solve(compiled, x, times, start, settings, stop)
+    good = batch.status == Status.ok
+    return _median(batch.largest[good]) if good.any() else before
 
 
-def _provisional(starts: Floats, rates: Floats, length: float) -> Floats:
-    """Start sizes; where they are 0, how far the first rate would lead; where that is 0 too, infinite: such a state follows the others,
-    whose steps are controlled, until its size is known. If no state has a size, all get 1."""
-    scales = _median(np.abs(starts))
-    led = _median(np.abs(rates)) * length
-    scales = np.where(scales > 0, scales, led)
-    scales[~(scales > 0)] = np.inf
-    return np.full_like(scales, FALL_BACK) if np.all(np.isinf(scales)) else scales
+def _given(sizes: Floats) -> Floats:
+    """Scales to solve with: a state without a size follows the others, whose steps are controlled; if none has one, all get 1."""
+    return np.where(sizes > 0, sizes, np.inf if np.any(sizes > 0) else FALL_BACK)
 
 
 def _median(sizes: Floats) -> Floats:
-    """Median over the rows of what is finite; 0 where nothing is."""
-    kept = [column[np.isfinite(column)] for column in sizes.T]
+    """Median over the rows of what is finite and not 0; 0 where nothing is."""
+    kept = [column[np.isfinite(column) & (column > 0)] for column in sizes.T]
     return np.array([np.median(column) if len(column) else 0.0 for column in kept])
