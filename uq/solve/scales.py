@@ -10,7 +10,7 @@ from numpy.typing import NDArray
 from uq.solve.batch import Settings, Status
 from uq.solve.compile import Compiled
 from uq.solve.memory import Floats
-from uq.solve.solve import evaluate_starts, solve
+from uq.solve.solve import advance, evaluate_starts
 
 FALL_BACK = 1.0
 # The pilot looks ahead a little, then further: a state that starts at nothing has a size before its error could grow unseen.
@@ -50,7 +50,7 @@ def _found(
     compiled: Compiled, x: Floats, times: Floats, start: float, settings: Settings, before: Floats, stop: NDArray[np.uint8] | None
 ) -> Floats:
     """Sizes after one pass; `before` where no member got through."""
-    batch = solve(compiled, x, times, start, settings, stop)
+    batch = advance(compiled, x, times, start, settings, stop)
     good = batch.status == Status.ok
     return _median(batch.largest[good]) if good.any() else before
 

@@ -22,6 +22,13 @@ def solve(compiled: Compiled, x: Floats, times: Floats, start: float, settings: 
     Raises Interrupted soon after another thread sets stop[0]; ValueMistake if a forcing does not cover the time.
     Numerical failures are statuses in the Batch. Method: explicit pair 5(4) of Dormand and Prince with its continuous extension.
     """
+    batch = advance(compiled, x, times, start, settings, stop)
+    _fill_outcomes(compiled, np.atleast_2d(np.asarray(x, dtype=np.float64)), np.asarray(times, dtype=np.float64), batch)
+    return batch
+
+
+def advance(compiled: Compiled, x: Floats, times: Floats, start: float, settings: Settings, stop: NDArray[np.uint8] | None = None) -> Batch:
+    """As `solve`, but without outcomes (they stay unset), so that `times` need not hold the times which courses name."""
     x, times = np.array(x, dtype=np.float64, order="C", ndmin=2), np.append(np.asarray(times, dtype=np.float64), np.inf)
     _check(compiled, x, times[:-1], start, settings)
     flag = np.zeros(1, dtype=np.uint8) if stop is None else stop
@@ -32,7 +39,6 @@ def solve(compiled: Compiled, x: Floats, times: Floats, start: float, settings: 
         pieces = segments(compiled.code.forcings, float(start), end)
         if _run(compiled, x, times, given, pieces, flag, batch):
             raise Interrupted("solving was stopped")
-        _fill_outcomes(compiled, x, times[:-1], batch)
     return batch
 
 
@@ -103,7 +109,7 @@ def _run(compiled: Compiled, x: Floats, times: Floats, given: Floats, pieces: Se
 
 def _fill_outcomes(compiled: Compiled, x: Floats, times: Floats, batch: Batch) -> None:
     code = compiled.code
-    if not code.outcomes:
+    if not code.outcomes or not len(batch.status):
         return
     courses = [take(course, batch.values, times) for course in code.courses]
     columns = np.column_stack([x, *courses])

@@ -1,0 +1,71 @@
+"""Words and exit codes: what a mistake, an interruption or a defect of ours looks like to the user."""
+
+from __future__ import annotations
+
+import os
+import sys
+import time
+import traceback
+from collections.abc import Iterator
+from contextlib import contextmanager
+from pathlib import Path
+
+import typer
+
+from uq.cli.settings import state_folder
+from uq.errors import EXIT_DEFECT, EXIT_INTERRUPTED, UqError
+
+
+def out(text: str) -> None:
+    """A result, to standard output."""
+    sys.stdout.write(text if text.endswith("\n") else text + "\n")
+    sys.stdout.flush()
+
+
+def err(text: str) -> None:
+    """A message, to standard error."""
+    sys.stderr.write(text if text.endswith("\n") else text + "\n")
+    sys.stderr.flush()
+
+
+@contextmanager
+def telling() -> Iterator[None]:
+    """Turns whatever goes wrong inside into words on standard error and the exit code of results-format.md."""
+    try:
+        yield
+    except UqError as mistake:
+        err(f"uq: {mistake}")
+        raise typer.Exit(mistake.exit_code) from None
+    except KeyboardInterrupt:
+        # Where Ctrl-C came while a library was making a class from text, Python has noted to end by the signal, whatever code we end with;
+        # it forgets that when it runs a text again.
+        exec("")
+        err("uq: interrupted; no result was written")
+        raise typer.Exit(EXIT_INTERRUPTED) from None
+    except BrokenPipeError:
+        # Who reads has closed the pipe (`uq show ... | head`); what is still buffered must not fail again when Python ends.
+        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
+        raise typer.Exit(0) from None
+    except typer.Exit:
+        raise
+    except Exception as defect:  # noqa: BLE001 - this is the one place where a defect of ours is told
+        err(_defect(defect))
+        raise typer.Exit(EXIT_DEFECT) from None
+
+
+def _defect(defect: Exception) -> str:
+    """The sentence about a defect of ours; the traceback goes to a log file, or into the sentence where that cannot be written."""
+    story = "".join(traceback.format_exception(defect))
+    head = f"uq: a defect of ours, please report: {type(defect).__name__}: {defect}"
+    try:
+        return f"{head}\n    the traceback is in {_log(story)}"
+    except OSError:
+        return f"{head}\n{story}"
+
+
+def _log(story: str) -> Path:
+    folder = state_folder(os.environ)
+    folder.mkdir(parents=True, exist_ok=True)
+    path = folder / f"defect-{time.strftime('%Y%m%d-%H%M%S', time.gmtime())}-{os.getpid()}.log"
+    path.write_text(f"{' '.join(sys.argv)}\n\n{story}", encoding="utf-8")
+    return path

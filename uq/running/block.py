@@ -1,0 +1,66 @@
+"""One block: points, inputs, solutions, tallies. Everything that a thread does without asking anybody."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from uq.analysis.ask import Ask, Floats
+from uq.analysis.sample import Sample, failed
+from uq.analysis.tallies import Tallies
+from uq.design.blocks import Block
+from uq.design.design import Design
+from uq.inputs.inputs import Inputs
+from uq.running.meter import Count, Meter
+from uq.running.observer import Observer
+from uq.running.pace import Shape
+from uq.solve.batch import Batch, Settings
+from uq.solve.compile import Compiled
+from uq.solve.solve import solve
+
+
+@dataclass(frozen=True)
+class Forecast:
+    """What is solved, how, at which points, and what is asked of it; `start` is the time of the starts."""
+
+    compiled: Compiled
+    inputs: Inputs
+    design: Design
+    settings: Settings
+    start: float
+    ask: Ask
+
+    @property
+    def shape(self) -> Shape:
+        """What a row of the design stands for."""
+        layout = self.compiled.layout
+        return Shape(self.design.parts, (layout.observed + layout.conditions) * len(self.ask.solved_times))
+
+    def solved(self, x: Floats, observer: Observer) -> Batch:
+        """Members with the inputs x [member, input], solved. Raises Interrupted where the stop flag is set."""
+        return solve(self.compiled, x, self.ask.solved_times, self.start, self.settings, observer.stop)
+
+
+def tallies_of(forecast: Forecast, block: Block, meter: Meter, observer: Observer) -> Tallies:
+    """The tallies of one block; tells the meter. Raises Interrupted where the stop flag is set."""
+    begin = meter.now()
+    design = forecast.design
+    x = design.spread(block, forecast.inputs.values(design.base(block)))
+    batch = forecast.solved(x, observer)
+    tallies = Tallies.of(forecast.ask, Sample.of(design, block, x, batch, forecast.ask))
+    meter.add(counted(batch, 2 * block.count, meter.now() - begin))
+    return tallies
+
+
+def counted(batch: Batch, members: int, seconds: float) -> Count:
+    """What a batch adds to the meter; its first `members` solves are A and B rows."""
+    lost = failed(batch.status)
+    return Count(
+        solves=len(lost),
+        failed=int(np.count_nonzero(lost)),
+        failed_members=int(np.count_nonzero(lost[:members])),
+        steps=int(batch.steps.sum(dtype=np.int64)),
+        rejections=int(batch.rejections.sum(dtype=np.int64)),
+        seconds=seconds,
+    )
