@@ -10,7 +10,7 @@ from hypothesis import assume, given, settings
 from hypothesis import strategies as st
 from mpmath import mp, mpf
 
-from tests.oracle import evaluate
+from tests.oracle import LinearTable, evaluate
 from uq.lang.derivative import Derivatives, derivative
 from uq.lang.graph import Graph, Node
 from uq.lang.lower import Scope, lower
@@ -149,3 +149,17 @@ def test_sixteen_nested_terms_cost_nothing() -> None:
 def test_a_long_flat_sum_is_differentiated() -> None:
     graph, node = made(" + ".join(f"{i} * x" for i in range(1, 1001)))
     assert derivative(graph, node, "x") is graph.number(500_500.0)
+
+
+def test_the_derivative_of_a_table_is_its_slope_times_that_of_its_argument() -> None:
+    graph, inner = made("x * y + 1")
+    node = graph.apply("*", graph.table("head", inner), graph.name("x"))
+    slope = derivative(graph, node, "x")
+    assert {part.op for part in graph.order((slope,))} >= {"table", "table_slope"}
+    tables = {"head": LinearTable((0.0, 1.5, 4.0), (78.0, 74.0, 62.0))}
+    with mp.workdps(60):
+        up, down = (evaluate(graph, node, VALUES | {"x": VALUES["x"] + shift}, 60, tables) for shift in (STEP, -STEP))
+        assert close(evaluate(graph, slope, VALUES, 60, tables), (up - down) / (2 * STEP))
+    assert derivative(graph, graph.table("head", graph.name("y")), "x") is graph.number(0.0)
+    with pytest.raises(ValueError, match="the slope of the table head has no derivative"):
+        derivative(graph, slope, "x")

@@ -152,3 +152,16 @@ def test_misuse_is_our_defect() -> None:
 
 def test_the_tables_of_words_agree() -> None:
     assert set(FUNCTION_NAMES) | {"+", "-", "*", "/", "**", "neg"} | TRUTHS == set(ARITY)
+
+
+def test_a_table_is_known_by_its_name_and_argument() -> None:
+    graph = Graph()
+    x, y = graph.name("x"), graph.name("y")
+    node = graph.table("head", x)
+    assert graph.table("head", x) is node
+    assert (node.op, node.value, node.args) == ("table", "head", (x,))
+    assert len({node, graph.table("head", y), graph.table("other", x), graph.table_slope("head", x)}) == 4
+    assert graph.leaves(graph.apply("+", node, y)) == {"x", "y"}
+    assert repr(node) == "#2=table('head', #0)"
+    with pytest.raises(ValueError, match="another graph"):
+        graph.table("head", Graph().name("z"))

@@ -8,7 +8,7 @@ import random
 import pytest
 from mpmath import mp
 
-from tests.oracle import evaluate
+from tests.oracle import LinearTable, evaluate
 from uq.lang.graph import ARITY, Graph
 from uq.lang.words import FUNCTION_NAMES
 
@@ -94,3 +94,13 @@ def test_undefined_is_nan(op: str, args: tuple[float, ...]) -> None:
     graph = Graph()
     names = [graph.name(name) for name in "xy"[: len(args)]]
     assert mp.isnan(evaluate(graph, graph.apply(op, *names), dict(zip("xy", args, strict=False))))
+
+
+@pytest.mark.parametrize(
+    ("x", "value", "slope"), [(0, 1, 2), (0.5, 2, 2), (1, 3, -1), (3, 1, -1), (2.5, 1.5, -1), (-1, None, None), (4, None, None)]
+)
+def test_a_table_of_straight_lines(x: float, value: float | None, slope: float | None) -> None:
+    graph, tables = Graph(), {"t": LinearTable((0.0, 1.0, 3.0), (1.0, 3.0, 1.0))}
+    for node, expected in ((graph.table("t", graph.name("x")), value), (graph.table_slope("t", graph.name("x")), slope)):
+        found = evaluate(graph, node, {"x": x}, tables=tables)
+        assert mp.isnan(found) if expected is None else found == expected

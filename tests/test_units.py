@@ -15,7 +15,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from uq.errors import ValueMistake
-from uq.units import NONE, Unit, parse_quantity, parse_unit
+from uq.units import NONE, Unit, Units, parse_quantity, parse_unit
 from uq.units.rare import rare
 from uq.units.table import HINTS, KNOWN, PREFIXES, SCALES, Known
 
@@ -257,8 +257,71 @@ def test_conversion_needs_the_dimension() -> None:
     with pytest.raises(ValueMistake, match="one in kg"):
         parse_unit("K").convert(1.0, parse_unit("kg"))
     with pytest.raises(ValueMistake, match="one in kg"):
-        parse_unit("K").factor_to(parse_unit("kg"))
-    assert parse_unit("kJ").factor_to(parse_unit("J")) == 1000.0
+        parse_unit("K").conversion(parse_unit("kg"))
+
+
+@pytest.mark.parametrize(
+    ("unit", "into", "factor", "shift"),
+    [
+        ("kJ", "J", 1000.0, 0.0),
+        ("min", "h", 1 / 60, 0.0),
+        ("deg", "rad", math.pi / 180, 0.0),
+        ("L/h", "m3/min", 1 / 60_000, 0.0),
+        ("degC", "K", 1.0, 273.15),
+        ("K", "degC", 1.0, -273.15),
+        ("degF", "K", 5 / 9, float(Fraction("459.67") * 5 / 9)),
+        ("K", "degF", 1.8, -459.67),
+        ("degF", "degC", 5 / 9, float(Fraction(-160, 9))),
+        ("delta_degF", "K", 5 / 9, 0.0),
+    ],
+)
+def test_factor_and_shift_are_the_doubles_nearest_to_the_exact_ones(unit: str, into: str, factor: float, shift: float) -> None:
+    assert parse_unit(unit).conversion(parse_unit(into)) == (factor, shift)
+
+
+OWN = Units(("person", "mite", "leaf", "virus"))
+
+
+@pytest.mark.parametrize(
+    ("text", "dimension", "udunits"),
+    [
+        ("person", {"person": 1}, "1"),
+        ("persons/km2", {"person": 1, "m": -2}, "km-2"),
+        ("mites/leaf", {"mite": 1, "leaf": -1}, "1"),
+        ("1/(person d)", {"person": -1, "s": -1}, "d-1"),
+        ("viruses/furlong", {"virus": 1, "m": -1}, "0.004970959595959596 m-1"),
+    ],
+)
+def test_counting_units_of_ones_own(text: str, dimension: dict[str, int], udunits: str) -> None:
+    unit = parse_unit(text, OWN)
+    assert dict(unit.dimension) == dimension
+    assert unit.udunits == udunits
+    assert (unit / unit).is_none
+    with pytest.raises(ValueMistake, match="a count has the unit 1, or one of its own"):
+        parse_unit(text)
+
+
+def test_quantities_in_units_of_ones_own() -> None:
+    assert parse_quantity("12 persons", OWN) == (12.0, parse_unit("persons", OWN))
+    assert parse_unit("persons", OWN).same(parse_unit("person", OWN))
+    assert not parse_unit("mite", OWN).same_dimension(parse_unit("person", OWN))
+    with pytest.raises(ValueMistake, match="did you mean `person`"):
+        parse_unit("persn", OWN)
+
+
+@pytest.mark.parametrize("name", ["m", "kg", "day", "kPa", "C", "degC", "my unit", "m2", "person/m", "", "ton", "1"])
+def test_a_name_that_has_a_meaning_is_no_unit_of_ones_own(name: str) -> None:
+    with pytest.raises(ValueMistake) as caught:
+        Units(("person", name))
+    assert caught.value.key == name
+
+
+def test_temperatures_points_and_differences() -> None:
+    assert [parse_unit(text).temperature for text in ("K", "degC", "delta_degC", "delta_degF", "degC/min", "mK")] == [
+        *("none", "scale", "difference", "difference", "none", "none"),
+    ]
+    assert parse_unit("degC").difference().temperature == "difference"
+    assert parse_unit("K").same(parse_unit("delta_degC"))
 
 
 @pytest.mark.parametrize(
@@ -333,7 +396,7 @@ def test_no_power_breaks_the_arithmetic(text: str, power: Fraction) -> None:
     with contextlib.suppress(ValueMistake):
         for _ in range(4):
             unit = unit**power
-    assert math.isfinite(unit.factor_to(unit))
+    assert unit.conversion(unit) == (1.0, 0.0)
     assert 0.0 < float(unit.factor) < math.inf
     assert unit.udunits
 

@@ -42,6 +42,10 @@ class Derivatives:
             return None
         if node.op == "where":
             return self._branch(node.args[0], inner[1], inner[2])
+        if node.op == "table":
+            return _Step(self._graph, node).times(self._graph.table_slope(str(node.value), node.args[0]), inner[0])
+        if node.op == "table_slope":
+            raise ValueError(f"the slope of the table {node.value} has no derivative")
         return _RULES[node.op](_Step(self._graph, node), inner)
 
     def _branch(self, condition: Node, left: Node | None, right: Node | None) -> Node | None:

@@ -48,6 +48,8 @@ ARITY: dict[str, int] = {
     "mod": 2,
 }
 COMPARISONS = ("<", "<=", ">", ">=")
+#: a function given by points, and its slope, each of one argument
+TABLES = ("table", "table_slope")
 #: operators whose value is true or false
 TRUTHS = frozenset((*COMPARISONS, "and", "or", "not"))
 
@@ -55,7 +57,8 @@ TRUTHS = frozenset((*COMPARISONS, "and", "or", "not"))
 class Node:
     """One distinct subexpression; made by a `Graph` only, equal to itself only.
 
-    `op` is "number" (`value` a finite float), "name" (`value` the name) or a key of `ARITY`. Arguments have smaller ids.
+    `op` is "number" (`value` a finite float), "name" (`value` the name), one of `TABLES` (`value` the name of the table) or a key of
+    `ARITY`. Arguments have smaller ids.
     """
 
     __slots__ = ("args", "id", "op", "value")
@@ -69,7 +72,7 @@ class Node:
         return self.op in TRUTHS
 
     def __repr__(self) -> str:
-        inside = repr(self.value) if not self.args else ", ".join(f"#{a.id}" for a in self.args)
+        inside = ", ".join(([] if self.value is None else [repr(self.value)]) + [f"#{a.id}" for a in self.args])
         return f"#{self.id}={self.op}({inside})"
 
 
@@ -98,6 +101,16 @@ class Graph:
         """The leaf that stands for a named value."""
         return self._node(("name", name), "name", (), name)
 
+    def table(self, name: str, argument: Node) -> Node:
+        """The value of the table `name` at its argument."""
+        self._own((argument,))
+        return self._node(("table", name, argument.id), "table", (argument,), name)
+
+    def table_slope(self, name: str, argument: Node) -> Node:
+        """The slope of the table `name` at its argument, in the numbers of its points; at a corner that of either side."""
+        self._own((argument,))
+        return self._node(("table_slope", name, argument.id), "table_slope", (argument,), name)
+
     def apply(self, op: str, *args: Node) -> Node:
         """The node of an operator or function of `args`; `min` and `max` of more than two are folded from the left.
 
@@ -107,9 +120,7 @@ class Graph:
             return functools.reduce(lambda left, right: self.apply(op, left, right), args)
         if ARITY[op] != len(args):
             raise ValueError(f"{op} takes {ARITY[op]} arguments, not {len(args)}")
-        for arg in args:
-            if arg.id >= len(self._nodes) or self._nodes[arg.id] is not arg:
-                raise ValueError(f"{arg!r} belongs to another graph")
+        self._own(args)
         simpler = self._simpler(op, args)
         if simpler is not None:
             return simpler
@@ -130,6 +141,11 @@ class Graph:
                 seen[node.id] = node
                 waiting.extend(node.args)
         return tuple(seen[id] for id in sorted(seen))
+
+    def _own(self, args: tuple[Node, ...]) -> None:
+        for arg in args:
+            if arg.id >= len(self._nodes) or self._nodes[arg.id] is not arg:
+                raise ValueError(f"{arg!r} belongs to another graph")
 
     def _node(self, key: tuple[object, ...], op: str, args: tuple[Node, ...], value: float | str | None) -> Node:
         node = self._known.get(key)

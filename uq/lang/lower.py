@@ -7,13 +7,14 @@ from __future__ import annotations
 
 from uq.lang.graph import Graph
 from uq.lang.measure import require
-from uq.lang.part import lower_part, require_number, require_truth
-from uq.lang.scope import Scope, Typed
+from uq.lang.part import brought, lower_part, require_number, require_truth
+from uq.lang.scope import Scope, TableUnits, Typed
 from uq.lang.take import CourseAsked, TakeResult, lower_take
+from uq.lang.temperatures import is_temperature
 from uq.lang.tree import Tree, fold
 from uq.units import Unit
 
-__all__ = ["CourseAsked", "Scope", "TakeResult", "Typed", "lower", "lower_take", "require_truth", "require_unit"]
+__all__ = ["CourseAsked", "Scope", "TableUnits", "TakeResult", "Typed", "in_unit", "lower", "lower_take", "require_truth"]
 
 
 def lower(tree: Tree, scope: Scope, graph: Graph) -> Typed:
@@ -21,7 +22,14 @@ def lower(tree: Tree, scope: Scope, graph: Graph) -> Typed:
     return fold(tree, lambda part, args: lower_part(part, args, scope, graph))
 
 
-def require_unit(tree: Tree, typed: Typed, unit: Unit, what: str = "") -> None:
-    """Refuses an expression that is not a number in the unit needed; `what` says for what, as in 'for the rate of `T`'."""
+def in_unit(tree: Tree, typed: Typed, unit: Unit, graph: Graph, what: str = "") -> Typed:
+    """A whole expression as a number in the unit needed, converted where it is in another of the same dimension.
+
+    `what` says for what the unit is needed, as in 'for the rate of `T`'. A difference in K stays known as one. Raises ExpressionError.
+    """
     require_number(tree, typed)
     require(tree, typed, unit, what and f" {what}")
+    kind = typed.unit.temperature
+    if is_temperature(unit) and unit.temperature == "none" and kind in ("difference", "unclear"):
+        unit = unit.of_kind(kind)
+    return Typed(brought(tree, typed, unit, graph), unit, typed.zero)

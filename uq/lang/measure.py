@@ -1,23 +1,34 @@
 """The units of operators and functions: what they need and what they give.
 
-In: the parts of an expression with their units. Out: the unit of the whole, or an ExpressionError. Must not know: graphs, names.
+In: the parts of an expression with their units. Out: the unit of the whole and the unit that each argument is brought to, or an
+ExpressionError. Must not know: graphs, names.
 
-Nothing is converted: a sum of kJ and J is refused, and so is the factor 1000 that is left of kJ/J where no unit may be.
+What has the right dimension is converted, wherever it stands; a wrong dimension is refused. A sum, `min`, `max`, `where` and `mod` have
+the unit of their first term that is not a plain 0; a temperature in degC or degF that is shifted stays on its scale.
 """
 
 from __future__ import annotations
 
 from collections.abc import Callable
 from fractions import Fraction
+from typing import NamedTuple
 
 from uq.errors import ExpressionError, ValueMistake
+from uq.lang import temperatures
 from uq.lang.scope import Typed
+from uq.lang.slips import slip
 from uq.lang.tree import Tree
-from uq.units import NONE, Unit, parse_unit
+from uq.units import NONE, Unit
 
 _MOST_POWER = 100
-_KELVIN = parse_unit("K")
 Terms = tuple[tuple[Tree, Typed], ...]
+
+
+class Ruling(NamedTuple):
+    """The unit of a whole, and for every argument the unit that it is brought to (None: it stands as it is)."""
+
+    unit: Unit
+    needs: tuple[Unit | None, ...]
 
 
 def mistake(part: Tree, found: str, expected: str, remedy: str = "") -> ExpressionError:
@@ -26,9 +37,16 @@ def mistake(part: Tree, found: str, expected: str, remedy: str = "") -> Expressi
 
 
 def require(part: Tree, typed: Typed, unit: Unit, why: str = "") -> None:
-    """Refuses a part that is not in the unit needed; `why` goes on after the unit, as in 'kJ, as `heat` has'."""
-    if not typed.fits(unit):
-        raise mistake(part, f"`{part.text}` {found(typed.unit)}", f"{told(unit)}{why}", _remedy(part, typed.unit, unit))
+    """Refuses a part that cannot be brought to the unit needed; `why` goes on after the unit, as in 'kJ, as `heat` has'."""
+    if typed.zero:
+        return
+    own = typed.unit
+    if not own.same_dimension(unit):
+        raise mistake(part, f"`{part.text}` {found(own)}", f"{told(unit)}{why}", _remedy(part, own, unit))
+    if temperatures.clash(own, unit):
+        words = temperatures.WORDS
+        said = f"{words[unit.temperature]} in {unit.text}{why}"
+        raise mistake(part, f"`{part.text}` {found(own)}, {words[own.temperature]}", said, temperatures.CLEAR)
 
 
 def told(unit: Unit) -> str:
@@ -46,27 +64,14 @@ def found(unit: Unit) -> str:
 
 
 def _remedy(part: Tree, unit: Unit, needed: Unit) -> str:
-    if "scale" in (unit.temperature, needed.temperature) and unit.same_dimension(needed):
-        return "use K for both"
-    if needed.is_none and not unit.is_none and unit.dimension:
-        return f"divide it by a value in {unit.text}, as in / '1 {unit.text}'"
-    if part.op == "number" and not needed.is_none:
+    """What may mend a wrong dimension."""
+    if part.op == "number":
         return f"write '{part.text.strip('()')} {needed.text}' in quotes"
-    if unit.same_dimension(needed):
-        return _factor(unit, needed)
-    return ""
-
-
-def _factor(unit: Unit, needed: Unit) -> str:
-    """How a value in one unit gets into another, with the rounder of the two numbers."""
-    times, per = f"{unit.factor_to(needed):.15g}", f"{needed.factor_to(unit):.15g}"
-    if len(times) <= len(per):
-        return f"multiply it by '{times} {_bracketed(needed)}/{_bracketed(unit)}'"
-    return f"divide it by '{per} {_bracketed(unit)}/{_bracketed(needed)}'"
-
-
-def _bracketed(unit: Unit) -> str:
-    return unit.text if len(unit.parts) <= 1 and not set(unit.text) & set("/* ") else f"({unit.text})"
+    likely = slip(unit, needed)
+    if not needed.dimension:
+        plain = f"divide it by a value in {unit.text}, as in / '1 {unit.text}'"
+        return f"{likely} or {plain}" if likely and len(unit.dimension) > 1 else plain
+    return likely
 
 
 def _no_scale(part: Tree, typed: Typed) -> None:
@@ -77,33 +82,39 @@ def _no_scale(part: Tree, typed: Typed) -> None:
 
 def _first(part: Tree, unit: Unit) -> Tree:
     """The first term of a sum, which says what the others must be in; of temperatures the whole, as its terms may be differences."""
-    while part.op in ("+", "-") and not unit.same_dimension(_KELVIN):
+    while part.op in ("+", "-") and not temperatures.is_temperature(unit):
         part = part.args[0]
     return part
 
 
-def same(part: Tree, terms: Terms) -> Unit:
-    """All in the unit of the first that is not a plain 0; gives that unit."""
-    leader = next((term for term in terms if not term[1].zero), terms[0])
+def _brought(terms: Terms, leaders: Terms) -> Ruling:
+    """All in the unit of the first leader that is not a plain 0; gives that unit."""
+    leader = next((term for term in leaders if not term[1].zero), terms[0])
+    unit = leader[1].unit
     for tree, typed in terms:
-        if not typed.fits(leader[1].unit):
-            require(tree, typed, leader[1].unit, f", as `{_first(leader[0], leader[1].unit).text}` has")
-    return leader[1].unit
+        require(tree, typed, unit, f", as `{_first(leader[0], unit).text}` has")
+    return Ruling(unit, (unit,) * len(terms))
 
 
-def compared(part: Tree, terms: Terms) -> Unit:
-    """The same unit on both sides; gives none."""
-    same(part, terms)
-    return NONE
+def same(part: Tree, terms: Terms) -> Ruling:
+    """All in the unit of the first that is not a plain 0; gives that unit."""
+    unit, needs = _brought(terms, terms)
+    return Ruling(temperatures.of_choice(unit, {typed.unit.temperature for _, typed in terms if not typed.zero} or {"none"}), needs)
 
 
-def ratio(part: Tree, terms: Terms) -> Unit:
+def compared(part: Tree, terms: Terms) -> Ruling:
+    """One unit on both sides; gives none. A number is brought to the unit of what varies, so that it costs nothing."""
+    leaders = tuple(sorted(terms, key=lambda term: isinstance(term[1].node.value, float)))
+    return Ruling(NONE, _brought(terms, leaders).needs)
+
+
+def ratio(part: Tree, terms: Terms) -> Ruling:
     """Arguments in one unit, whatever it is; gives none."""
     _each(terms)
     return compared(part, terms)
 
 
-def kept(part: Tree, terms: Terms) -> Unit:
+def kept(part: Tree, terms: Terms) -> Ruling:
     """Any one unit, but no point on a temperature scale; gives it back."""
     _each(terms)
     return same(part, terms)
@@ -114,68 +125,89 @@ def _each(terms: Terms) -> None:
         _no_scale(tree, typed)
 
 
-def bare(part: Tree, terms: Terms) -> Unit:
-    """Arguments without unit; gives none."""
+def bare(part: Tree, terms: Terms) -> Ruling:
+    """Arguments without unit: an angle in rad, a share as a number of 1; gives none."""
     for tree, typed in terms:
         _no_scale(tree, typed)
-        if not typed.fits(NONE):
-            unit = typed.unit
-            remedy = _remedy(tree, unit, NONE)
-            if unit.text == "deg":
-                remedy = f"angles are in rad: write {tree.text if not tree.args else f'({tree.text})'} * '{float(unit.factor)!r} rad/deg'"
-            raise mistake(tree, f"`{tree.text}` {found(unit)}", f"no unit in {part.name}( )" if part.name else "no unit", remedy)
-    return NONE
+        require(tree, typed, NONE, f" in {part.name}( )")
+    return Ruling(NONE, (NONE,) * len(terms))
 
 
-def added(part: Tree, terms: Terms) -> Unit:
-    """A sum or difference: one unit, or a point on a temperature scale and a difference."""
-    (left_tree, left), (right_tree, right) = terms
+def added(part: Tree, terms: Terms) -> Ruling:
+    """A sum or difference: the unit of the first term, or a point on a temperature scale and a difference."""
+    (_, left), (_, right) = terms
     scaled = [typed.unit.temperature == "scale" for _, typed in terms]
-    if not any(scaled):
-        return same(part, terms)
-    if all(scaled):
-        if part.op == "+":
-            raise mistake(part, f"a sum of two temperatures, `{part.text}`", "a temperature and a difference", "use K, or subtract")
-        require(right_tree, right, left.unit, f", as `{left_tree.text}` has")
-        return left.unit.difference()
-    if scaled[1] and part.op == "-":
-        raise mistake(part, f"`{part.text}`, a difference minus a temperature in {right.unit.text}", "a temperature first", "use K")
-    scale, (tree, shift) = (left.unit, (right_tree, right)) if scaled[0] else (right.unit, (left_tree, left))
-    require(tree, shift, scale.difference(), f", the difference by which a temperature in {scale.text} is shifted")
-    return scale
+    if all(scaled) and part.op == "+":
+        raise mistake(part, f"a sum of two temperatures, `{part.text}`", "a temperature and a difference", "use K, or subtract")
+    if any(scaled) and not all(scaled):
+        if part.op == "+" or scaled[0]:
+            return _shifted(part, terms)
+        if left.zero or left.unit.temperature != "none":
+            found = f"`{part.text}`, a difference minus a temperature in {right.unit.text}"
+            raise mistake(part, found, "a temperature first", temperatures.CLEAR)
+    unit, needs = _brought(terms, terms)
+    if any(scaled):
+        return Ruling(unit.difference().of_kind("difference"), needs)
+    if left.zero or right.zero:
+        return Ruling(unit, needs)
+    return Ruling(temperatures.of_sum(unit, part.op, left.unit.temperature, right.unit.temperature), needs)
 
 
-def multiplied(part: Tree, terms: Terms) -> Unit:
-    """A product or quotient: units multiply, or divide."""
+def _shifted(part: Tree, terms: Terms) -> Ruling:
+    """A point on a temperature scale and a difference by which it is shifted; gives the scale.
+
+    Less a K it is in K: that number is right whether the K is a shift or another temperature.
+    """
+    point = 0 if terms[0][1].unit.temperature == "scale" else 1
+    scale, (tree, shift) = terms[point][1].unit, terms[1 - point]
+    step = scale.difference()
+    require(tree, shift, step, f", the difference by which a temperature in {scale.text} is shifted")
+    if part.op == "-" and not shift.zero and shift.unit.temperature != "difference":
+        return Ruling(shift.unit.of_kind("unclear"), (shift.unit, shift.unit))
+    return Ruling(scale, (scale, step) if point == 0 else (step, scale))
+
+
+def multiplied(part: Tree, terms: Terms) -> Ruling:
+    """A product or quotient: units multiply, or divide; nothing is converted."""
     _each(terms)
     (_, left), (_, right) = terms
-    return _sized(part, lambda: left.unit * right.unit if part.op == "*" else left.unit / right.unit)
+    unit = _sized(part, lambda: left.unit * right.unit if part.op == "*" else left.unit / right.unit)
+    factors = (left.unit, right.unit) if part.op == "*" else (left.unit,)
+    return Ruling(temperatures.of_product(unit, factors), (None, None))
 
 
-def rooted(part: Tree, terms: Terms) -> Unit:
+def rooted(part: Tree, terms: Terms) -> Ruling:
     """A square root: half the power."""
     _each(terms)
-    return _sized(part, lambda: terms[0][1].unit ** Fraction(1, 2))
+    return Ruling(_sized(part, lambda: terms[0][1].unit ** Fraction(1, 2)), (None,))
 
 
-def raised(part: Tree, terms: Terms) -> Unit:
-    """A power: exponent without unit, and a plain number where the base has one."""
+def raised(part: Tree, terms: Terms) -> Ruling:
+    """A power: exponent without unit, and a plain number where the base has a dimension."""
     _each(terms)
     (base_tree, base), (tree, exponent) = terms
-    if not exponent.fits(NONE):
+    if exponent.unit.dimension:
         remedy = _remedy(tree, exponent.unit, NONE)
         raise mistake(tree, f"the exponent `{tree.text}` {found(exponent.unit)}", "an exponent without unit", remedy)
-    if base.unit.is_none:
-        return NONE
     value = exponent.node.value
+    if base.unit.is_none or (not isinstance(value, float) and not base.unit.dimension):
+        return Ruling(NONE, (NONE, NONE))
     if not isinstance(value, float):
         wanted = f"a base without unit, or a number as exponent, since `{tree.text}` varies"
         raise mistake(base_tree, f"`{base_tree.text}` {found(base.unit)}", wanted, _remedy(base_tree, base.unit, NONE))
+    value = exponent.unit.convert(value, NONE)
     power = Fraction(value).limit_denominator(10_000)
     if abs(value) > _MOST_POWER or abs(float(power) - value) > 1e-12 * abs(value):
         wanted = f"a simple fraction of at most {_MOST_POWER} in size, since the base has a unit"
         raise mistake(tree, f"the exponent `{tree.text}`", wanted, f"divide the base by '1 {base.unit.text}'")
-    return _sized(part, lambda: base.unit**power)
+    return Ruling(_sized(part, lambda: base.unit**power), (None, NONE))
+
+
+def tabled(part: Tree, terms: Terms, argument: Unit, value: Unit) -> Ruling:
+    """A table used as a function: its argument in the unit of its points; gives the unit of its values."""
+    ((tree, typed),) = terms
+    require(tree, typed, argument, f", in which the table `{part.name}` is given")
+    return Ruling(value, (argument,))
 
 
 def _sized(part: Tree, made: Callable[[], Unit]) -> Unit:

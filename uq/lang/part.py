@@ -12,8 +12,9 @@ from typing import NamedTuple
 
 from uq.errors import ExpressionError, ValueMistake, suggest
 from uq.lang import measure
-from uq.lang.graph import COMPARISONS, Graph
-from uq.lang.measure import Terms, mistake
+from uq.lang.convert import converted
+from uq.lang.graph import COMPARISONS, Graph, Node
+from uq.lang.measure import Ruling, Terms, mistake
 from uq.lang.scope import Scope, Typed
 from uq.lang.tree import Tree
 from uq.lang.words import COURSES, COURSES_LATER, FUNCTION_NAMES
@@ -26,7 +27,7 @@ class Function(NamedTuple):
     name: str
     least: int
     most: int
-    unit: Callable[[Tree, Terms], Unit]
+    unit: Callable[[Tree, Terms], Ruling]
 
 
 FUNCTIONS: tuple[Function, ...] = (
@@ -43,7 +44,7 @@ FUNCTIONS: tuple[Function, ...] = (
 )
 _FUNCTIONS = {function.name: function for function in FUNCTIONS}
 
-_OPERATORS: dict[str, Callable[[Tree, Terms], Unit]] = {
+_OPERATORS: dict[str, Callable[[Tree, Terms], Ruling]] = {
     "+": measure.added,
     "-": measure.added,
     "*": measure.multiplied,
@@ -66,6 +67,8 @@ def lower_part(part: Tree, args: tuple[Typed, ...], scope: Scope, graph: Graph) 
         return _name(part, scope, graph)
     terms = tuple(zip(part.args, args, strict=True))
     op = part.op
+    if op == "call" and part.name in scope.tables:
+        return _table(part, terms, scope, graph)
     if op == "call":
         op = part.name
         rule = _function(part, scope).unit
@@ -83,8 +86,19 @@ def lower_part(part: Tree, args: tuple[Typed, ...], scope: Scope, graph: Graph) 
             require_number(tree, typed, "write a < b and b < c")
         else:
             require_number(tree, typed)
-    unit = rule(part, terms)
-    return Typed(graph.apply(op, *(arg.node for arg in args)), unit, zero=op in _ZERO_STAYS and all(typed.zero for _, typed in terms))
+    unit, needs = rule(part, terms)
+    nodes = [brought(tree, typed, need, graph) for (tree, typed), need in zip(terms, needs, strict=True)]
+    if op == "where":
+        nodes.insert(0, args[0].node)
+    return Typed(graph.apply(op, *nodes), unit, zero=op in _ZERO_STAYS and all(typed.zero for _, typed in terms))
+
+
+def brought(part: Tree, typed: Typed, unit: Unit | None, graph: Graph) -> Node:
+    """The node of a part in another unit of its dimension; None leaves it as it is."""
+    try:
+        return typed.node if unit is None else converted(graph, typed, unit)
+    except ValueMistake as error:
+        raise mistake(part, error.found, error.expected, error.remedy) from None
 
 
 def require_truth(part: Tree, typed: Typed, where: str = "here") -> None:
@@ -103,7 +117,7 @@ def _quantity(part: Tree, scope: Scope, graph: Graph) -> Typed:
     if scope.unitless:
         raise mistake(part, f"the quantity {part.text}", "a plain number", "this study states no unit anywhere; give all of them, or none")
     try:
-        unit = parse_unit(part.name)
+        unit = parse_unit(part.name, scope.own)
     except ValueMistake as error:
         raise mistake(part, error.found, error.expected, error.remedy) from None
     return Typed(graph.number(part.value), unit)
@@ -117,12 +131,23 @@ def _name(part: Tree, scope: Scope, graph: Graph) -> Typed:
         return Typed(node, unit)
     if part.name in scope.barred:
         raise mistake(part, f"`{part.name}`", "a name that may stand here", scope.barred[part.name])
+    if part.name in scope.tables:
+        raise mistake(part, f"the table `{part.name}` without brackets", "a value", f"write {part.name}(x)")
     if part.name in (*FUNCTION_NAMES, *COURSES, *COURSES_LATER):
         raise mistake(part, f"the function `{part.name}` without brackets", "a value", f"write {part.name}(x)")
     remedy = suggest(part.name, scope.names) or suggest(part.name, scope.barred)
     if part.name.lower() in ("true", "false", "inf", "nan", "e", "infinity"):
         remedy = remedy or {"true": "write 1 > 0", "false": "write 0 > 1", "e": "write exp(1)"}.get(part.name.lower(), "numbers are finite")
     raise mistake(part, f"the unknown name `{part.name}`", "a name of this study", remedy)
+
+
+def _table(part: Tree, terms: Terms, scope: Scope, graph: Graph) -> Typed:
+    check_count(part, 1, 1)
+    ((tree, typed),) = terms
+    require_number(tree, typed)
+    given = scope.tables[part.name]
+    unit, needs = measure.tabled(part, terms, given.argument, given.value)
+    return Typed(graph.table(part.name, brought(tree, typed, needs[0], graph)), unit)
 
 
 def _function(part: Tree, scope: Scope) -> Function:
@@ -135,7 +160,7 @@ def _function(part: Tree, scope: Scope) -> Function:
     if function is None:
         if part.name in scope.names or part.name in scope.barred:
             raise _head(part, f"`{part.name}` before a bracket", "a function", f"write {part.name} * ( ) for a product")
-        remedy = suggest(part.name, FUNCTION_NAMES) or "there are " + ", ".join(FUNCTION_NAMES)
+        remedy = suggest(part.name, (*FUNCTION_NAMES, *scope.tables)) or "there are " + ", ".join(FUNCTION_NAMES)
         raise _head(part, f"the unknown function `{part.name}`", "a function", remedy)
     check_count(part, function.least, function.most)
     return function

@@ -9,7 +9,15 @@ from collections.abc import Mapping
 from dataclasses import dataclass, field
 
 from uq.lang.graph import Node
-from uq.units import NONE, Unit
+from uq.units import NONE, Unit, Units
+
+
+@dataclass(frozen=True, slots=True)
+class TableUnits:
+    """A table of a study, used as a function: the units of its argument and of its value."""
+
+    argument: Unit
+    value: Unit
 
 
 @dataclass(frozen=True)
@@ -21,6 +29,7 @@ class Scope:
     `barred`: names that exist but may not stand here, each with the remedy to tell.
     `time_unit`: of courses and their windows.
     `fixed`: leaves that do not change over time: only these may a `take` use outside of its courses.
+    `own`: the study's counting units; `tables`: its tables, each a function of one argument.
     """
 
     names: Mapping[str, tuple[Node, Unit]]
@@ -28,6 +37,8 @@ class Scope:
     barred: Mapping[str, str] = field(default_factory=dict)
     time_unit: Unit = NONE
     fixed: frozenset[str] = frozenset()
+    own: Units = field(default_factory=Units)
+    tables: Mapping[str, TableUnits] = field(default_factory=dict)
 
 
 @dataclass(frozen=True, slots=True)
@@ -42,7 +53,3 @@ class Typed:
     def truth(self) -> bool:
         """Whether it is true or false rather than a number."""
         return self.node.truth
-
-    def fits(self, unit: Unit) -> bool:
-        """Whether it may stand where a value in `unit` is needed."""
-        return self.zero or self.unit.same(unit)

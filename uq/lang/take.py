@@ -12,8 +12,8 @@ from dataclasses import dataclass
 
 from uq.errors import ExpressionError
 from uq.lang.graph import Graph, Node
-from uq.lang.measure import mistake, multiplied, require, told
-from uq.lang.part import check_count, lower_part, require_number
+from uq.lang.measure import mistake, multiplied, require
+from uq.lang.part import brought, check_count, lower_part, require_number
 from uq.lang.scope import Scope, Typed
 from uq.lang.tree import Tree, fold
 from uq.lang.words import COURSES, COURSES_LATER
@@ -92,7 +92,7 @@ class _Taking:
         unit = observed.unit
         if part.name == "integral":
             time = Typed(self.graph.number(1.0), self.scope.time_unit)
-            unit = multiplied(Tree("*", part.source, part.start, part.stop), ((part.args[0], observed), (part, time)))
+            unit = multiplied(Tree("*", part.source, part.start, part.stop), ((part.args[0], observed), (part, time))).unit
         asked = CourseAsked(part.name, observed.node, start, stop, part)
         for place, known in enumerate(self.courses):
             if (known.kind, known.argument, known.start, known.stop) == (asked.kind, asked.argument, start, stop):
@@ -121,15 +121,12 @@ class _Taking:
         return start, stop
 
     def time(self, part: Tree, typed: Typed) -> float:
-        """A time in the study's unit: a plain number is in it already, a quantity is converted."""
+        """A time in the study's unit: a plain number is in it already, what has a unit is converted."""
         require_number(part, typed)
-        value, unit = typed.node.value, self.scope.time_unit
-        if not isinstance(value, float):
+        node = typed.node
+        if isinstance(node.value, float) and not typed.unit.is_none:
+            require(part, typed, self.scope.time_unit, " for a time")
+            node = brought(part, typed, self.scope.time_unit, self.graph)
+        if not isinstance(node.value, float):
             raise mistake(part, f"`{part.text}`, which depends on names", "a time that is a number or a quantity")
-        if part.op == "quantity":
-            if not typed.unit.same_dimension(unit):
-                raise mistake(part, f"{part.text} in {told(typed.unit)}", f"a time, in {told(unit)} or what converts to it")
-            return typed.unit.convert(value, unit)
-        if not typed.unit.is_none:
-            require(part, typed, unit)
-        return value
+        return node.value

@@ -5,7 +5,7 @@ Out: a `Unit` that can be multiplied, compared, converted and written for a NetC
 Must not know: expressions, studies.
 """
 
-from uq.units.notation import parse_quantity, parse_unit
+from uq.units.notation import Units, parse_quantity, parse_unit
 from uq.units.unit import NONE, Unit
 
-__all__ = ["NONE", "Unit", "parse_quantity", "parse_unit"]
+__all__ = ["NONE", "Unit", "Units", "parse_quantity", "parse_unit"]

@@ -59,7 +59,7 @@ def rare(name: str) -> tuple[Fraction, tuple[tuple[str, int], ...]] | None:
         plain = (not prefix or (len(prefix) > 2 and name.startswith(prefix))) and (not suffix or len(name) > 4)
         if plain and unit not in _REFUSED:
             factor, base = _registry().get_base_units(prefix + unit)
-            powers = {_BASES.get(key, key.strip("[]")): Fraction(power) for key, power in base.dimensionality.items()}
+            powers = {_BASES.get(key, key): Fraction(power) for key, power in base.dimensionality.items()}
             if all(power.denominator == 1 for power in powers.values()):
                 return Fraction(factor), tuple(sorted((key, int(power)) for key, power in powers.items()))
     return None

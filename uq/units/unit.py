@@ -1,4 +1,4 @@
-"""A unit: exact dimension, exact scale, and whether it marks points on a temperature scale.
+"""A unit: exact dimension, exact scale, and what a temperature in it is.
 
 In: units. Out: their products, powers, comparisons, conversions and texts. Must not know: how a text is read.
 """
@@ -6,19 +6,21 @@ In: units. Out: their products, powers, comparisons, conversions and texts. Must
 from __future__ import annotations
 
 from collections.abc import Iterable
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from fractions import Fraction
 from typing import Literal
 
 from uq.errors import ValueMistake
 
 Powers = tuple[tuple[str, Fraction], ...]
+Temperature = Literal["none", "scale", "difference", "unclear"]
 
 _SAME = Fraction(1, 10**12)
 _MOST_POWER = 1000
 #: a factor stays between 1e-140 and 1e140, so that a ratio of two is a double; an exact fraction may need many digits in spite of that
 _MOST_SIZE = 140
 _MOST_DIGITS = 3000
+_SI = ("kg", "m", "s", "A", "K", "mol", "cd")
 
 
 @dataclass(frozen=True, slots=True)
@@ -26,7 +28,9 @@ class Unit:
     """A unit as the user wrote it, or put together from such.
 
     `parts`: the symbols that it is written with, and their powers; `dimension`: powers of SI base units; `factor`: its size in them.
-    `temperature`: "scale" for degC and degF, whose values are points, with the `offset` of their zero in kelvin; "none" for all others
+    `temperature`: "scale" for degC and degF, whose values are points, with the `offset` of their zero in kelvin; "difference" for
+    delta_degC, delta_degF and what lies between two points; "unclear" for a K of which nobody can say (K - K is a temperature less a
+    shift, or a difference of two); "none" for all others, also for K, which is then taken as a point where it meets a scale.
     `spellings`: how UDUNITS writes the symbols that it is sure to know.
     """
 
@@ -34,7 +38,7 @@ class Unit:
     parts: Powers
     dimension: Powers
     factor: Fraction
-    temperature: Literal["none", "scale"] = "none"
+    temperature: Temperature = "none"
     offset: Fraction = Fraction(0)
     spellings: tuple[tuple[str, str], ...] = ()
 
@@ -70,22 +74,30 @@ class Unit:
         return self is other or (
             self.dimension == other.dimension
             and abs(self.factor - other.factor) <= _SAME * other.factor
-            and (self.temperature, self.offset) == (other.temperature, other.offset)
+            and self.offset == other.offset
+            and (self.temperature == "scale") == (other.temperature == "scale")
         )
 
     def difference(self) -> Unit:
         """The unit of a difference of two values: K for degC, delta_degF for degF, otherwise the unit itself."""
-        if self.temperature == "none":
+        if self.temperature != "scale":
             return self
         name = "K" if self.factor == 1 else f"delta_{self.text}"
         one = Fraction(1)
-        return Unit(name, ((name, one),), self.dimension, self.factor, spellings=(("K", "K"),))
+        return Unit(name, ((name, one),), self.dimension, self.factor, "difference", spellings=(("K", "K"),))
 
-    def factor_to(self, other: Unit) -> float:
-        """What a difference in this unit is multiplied with to be in the other; raises ValueMistake where dimensions differ."""
-        if not self.same_dimension(other):
-            raise ValueMistake(f"a value in {self.text}", f"one in {other.text}")
-        return float(self.factor / other.factor)
+    def of_kind(self, temperature: Temperature) -> Unit:
+        """The same unit (no scale) for values of which more, or less, is known."""
+        return replace(self, temperature=temperature)
+
+    def conversion(self, to: Unit) -> tuple[float, float]:
+        """Factor and shift, x * factor + shift, that bring a value into the other unit: each the double nearest to the exact fraction.
+
+        The shift is 0 except between temperature scales, or one and K. Raises ValueMistake where dimensions differ.
+        """
+        if not self.same_dimension(to):
+            raise ValueMistake(f"a value in {self.text}", f"one in {to.text}")
+        return float(self.factor / to.factor), float((self.offset - to.offset) / to.factor)
 
     def convert(self, value: float, to: Unit) -> float:
         """The value, taken as the decimal number that it is written as, in another unit of the same dimension, rounded once.
@@ -105,19 +117,17 @@ class Unit:
         """The unit for the attribute `units` of a NetCDF variable, as UDUNITS-2 reads it.
 
         Where a spelling is not sure to be known there, the base units with a factor are written; powers that are not whole have no UDUNITS
-        text, the plain text is given.
+        text, the plain text is given. Counting units of a study are left out: UDUNITS counts without unit.
         """
-        if not self.parts:
-            return "1"
         if self.temperature == "scale":
             return self.text
         known = dict(self.spellings)
         if all(name in known and power.denominator == 1 for name, power in self.parts):
-            return " ".join(_power(known[name], power, "") for name, power in self.parts)
+            return " ".join(_power(known[name], power, "") for name, power in self.parts if known[name]) or "1"
         if any(power.denominator != 1 for _, power in self.dimension):
             return self.text
-        size = [] if self.factor == 1 and self.dimension else [repr(float(self.factor)).removesuffix(".0")]
-        return " ".join([*size, *(_power(name, power, "") for name, power in self.dimension)])
+        size = [] if self.factor == 1 else [repr(float(self.factor)).removesuffix(".0")]
+        return " ".join([*size, *(_power(name, power, "") for name, power in self.dimension if name in _SI)]) or "1"
 
     def _with(self, other: Unit, sign: int) -> Unit:
         self._must_multiply()
