@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Any, NamedTuple
 
@@ -23,23 +24,25 @@ class Block:
 
 
 class Parts(NamedTuple):
-    """What belongs to the A rows and to the B rows [row, ...], and to A with the column of one input from B [input, row, ...]."""
+    """What belongs to the A rows and to the B rows [row, ...], and to A with the columns of a set from B [set, row, ...]."""
 
     a: NDArray[Any]
     b: NDArray[Any]
     mixed: NDArray[Any]
 
 
-def spread(base: NDArray[np.float64], count: int) -> NDArray[np.float64]:
-    """A and B rows [2 count, k] continued by the mixed rows of every input: [(2 + k) count, k]."""
-    k = base.shape[1]
-    rows = np.empty(((2 + k) * count, k))
-    rows[: 2 * count] = base
-    mixed = rows[2 * count :].reshape(k, count, k)
+def spread(base: NDArray[np.float64], count: int, sets: Sequence[tuple[int, ...]]) -> NDArray[np.float64]:
+    """A and B rows [2 count, k] continued by the mixed rows of every set, A with its columns from B: [(2 + sets) count, k]."""
+    mixed = np.empty((len(sets), count, base.shape[1]))
     mixed[:] = base[:count]
-    for place in range(k):
-        mixed[place, :, place] = base[count:, place]
-    return rows
+    for taken, rows in zip(sets, mixed, strict=True):
+        rows[:, taken] = base[count:, taken]
+    return joined(base, mixed)
+
+
+def joined(base: NDArray[np.float64], mixed: NDArray[np.float64]) -> NDArray[np.float64]:
+    """A and B rows [2 count, k], then mixed rows [set, count, k]: [(2 + sets) count, k]."""
+    return np.concatenate([base, mixed.reshape(mixed.shape[0] * mixed.shape[1], base.shape[1])])
 
 
 def take_apart(y: NDArray[Any], count: int) -> Parts:

@@ -5,12 +5,13 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass, field
 from functools import cached_property
-from typing import Any
+from typing import Any, Protocol
 
 import numpy as np
 from numpy.typing import NDArray
 
-from uq.design.blocks import Block, Parts, aligned_blocks, is_power_of_two, spread, take_apart
+from uq.design.blocks import Block, Parts, aligned_blocks, is_power_of_two, joined, spread, take_apart
+from uq.design.sets import Sets, one_by_one
 from uq.design.sobol import MOST_INPUTS, MOST_ROWS, Columns, Words, coordinates, direction_numbers, scrambled
 from uq.errors import ValueMistake
 from uq.seeds import random_words
@@ -22,14 +23,26 @@ LEAST_MEMBERS = 512
 FIRST_ROUND = 64
 
 
+class Draws(Protocol):
+    """What turns points into inputs; the design does not know how."""
+
+    def values(self, u: Floats) -> Floats:
+        """Inputs x at points u, both [row, input]."""
+
+    def mixed(self, u: Floats, x: Floats, sets: Sets) -> Floats:
+        """From A and B rows of u and x: the A rows with the inputs of a set from B, for every set [set, row, input]."""
+
+
 @dataclass(frozen=True)
 class Design:
     """Independently scrambled replicates of Sobol' points in two columns per input: column 2i for A, column 2i + 1 for B.
 
-    A row holds, in this order of parts: the A point, the B point and, where `ranked`, for every input the A point with that input's
-    coordinate from B (Saltelli et al. 2010, doi:10.1016/j.cpc.2009.09.018). The coordinate of an input depends on seed, replicate, the
-    input's name and place, A or B, and the row, on nothing else: a design with more rows, more replicates or further inputs behind holds
-    the same points, and blocks of any size give the same bits. Raises `ValueMistake` where there are more inputs than columns.
+    A row holds, in this order of parts: the A point, the B point and for every one of `sets` the mixed point, A with the coordinates of
+    those places from B. Without `sets` these are, where `ranked`, the inputs one by one (Saltelli et al. 2010,
+    doi:10.1016/j.cpc.2009.09.018), else there are none; `uq.design.sets` makes others. The coordinate of an input depends on seed,
+    replicate, the input's name and place, A or B, and the row, on nothing else: a design with more rows, more replicates, other sets or
+    further inputs behind holds the same points, and blocks of any size give the same bits. Raises `ValueMistake` where there are more
+    inputs than columns.
 
     Pairs of columns: the variance of mean((u - 1/2)(v - 1/2)) is on average over all pairs 1.5 / 0.35 / 0.03 times that of independent
     points at 16 / 64 / 512 rows for 10 inputs (1.5 / 1.3 / 0.2 for 50), the worst pair 10 / 5 / 1 times (11 / 37 / 54), the same for pairs
@@ -41,9 +54,14 @@ class Design:
     rows: int
     replicates: int = REPLICATES
     ranked: bool = True
+    sets: Sets | None = None
     _replicates: dict[int, Columns] = field(default_factory=dict, init=False, repr=False, compare=False)
 
     def __post_init__(self) -> None:
+        if self.sets is None:
+            object.__setattr__(self, "sets", one_by_one(len(self.names)) if self.ranked else ())
+        if any(not taken or not set(taken) <= set(range(len(self.names))) for taken in self.mixed_sets):
+            raise ValueError("a set of inputs that are not there")
         if len(set(self.names)) < len(self.names):
             raise ValueError("two inputs of one name")
         if not is_power_of_two(self.rows) or self.rows > MOST_ROWS or self.replicates < 1 or self.seed < 0:
@@ -52,12 +70,12 @@ class Design:
             raise ValueMistake(f"{len(self.names)} uncertain inputs", f"at most {MOST_INPUTS}", "Sobol' points have no more columns")
 
     @classmethod
-    def for_members(cls, names: Sequence[str], seed: int, members: int, ranked: bool) -> Design:
-        """The design with at least so many A and B rows: `members` rounded up to a power of two, at least 512."""
+    def for_members(cls, names: Sequence[str], seed: int, members: int, ranked: bool, sets: Sets | None = None) -> Design:
+        """The design with at least so many A and B rows: `members` rounded up to a power of two, at least 512; `sets` as in the class."""
         rows = -(-max(members, LEAST_MEMBERS) // (2 * REPLICATES))
         if rows > MOST_ROWS:
             raise ValueMistake(f"{members} members", f"at most {2 * REPLICATES * MOST_ROWS}", key="members")
-        return cls(tuple(names), seed, 1 << (rows - 1).bit_length(), REPLICATES, ranked)
+        return cls(tuple(names), seed, 1 << (rows - 1).bit_length(), REPLICATES, ranked, sets)
 
     @property
     def members(self) -> int:
@@ -71,8 +89,18 @@ class Design:
 
     @property
     def parts(self) -> int:
-        """Members per row: A, B and, where ranked, one per input."""
-        return 2 + (len(self.names) if self.ranked else 0)
+        """Members per row: A, B and one per set."""
+        return 2 + len(self.mixed_sets)
+
+    @property
+    def mixed_sets(self) -> Sets:
+        """The places that each part of the mixed rows takes from B."""
+        return self.sets or ()
+
+    @property
+    def mixed_names(self) -> tuple[str, ...]:
+        """The names of those: of an input by itself its name, of several theirs with + between."""
+        return tuple("+".join(self.names[place] for place in taken) for taken in self.mixed_sets)
 
     def size_of_block(self, block: Block) -> int:
         """Members in a block."""
@@ -94,19 +122,26 @@ class Design:
         columns = coordinates(self._columns(block.replicate), block.first, block.count)
         return np.concatenate([columns[0::2].T, columns[1::2].T])
 
-    def spread(self, block: Block, base: Floats) -> Floats:
-        """Anything per A and B row [2 count, input] as it is for all members of the block [member, input].
+    def draw(self, block: Block, inputs: Draws) -> Floats:
+        """The inputs x [member, input] of all members of a block: A rows, B rows, then the mixed rows of every set.
 
-        `spread(block, inputs.values(base(block)))` has the bits of `inputs.values(points(block))` and transforms each coordinate once.
+        Each coordinate of A and B is transformed once. Where all inputs are independent this has the bits of
+        `inputs.values(points(block))`; where they are not, the mixed rows come from their conditional distribution.
         """
-        return spread(base, block.count) if self.ranked else base
+        u = self.base(block)
+        x = inputs.values(u)
+        return joined(x, inputs.mixed(u, x, self.mixed_sets)) if self.mixed_sets else x
+
+    def spread(self, block: Block, base: Floats) -> Floats:
+        """Anything per A and B row and independent input [2 count, input] as it is for all members of the block [member, input]."""
+        return spread(base, block.count, self.mixed_sets)
 
     def points(self, block: Block) -> Floats:
-        """All members of a block: u [parts count, input]: A rows, B rows, then for every input its mixed rows."""
+        """All members of a block: u [parts count, input]: A rows, B rows, then for every set its mixed rows."""
         return self.spread(block, self.base(block))
 
     def split(self, block: Block, y: NDArray[Any]) -> Parts:
-        """Results of the members of a block [member, ...] by part: a and b [row, ...], mixed [input, row, ...]; views of y."""
+        """Results of the members of a block [member, ...] by part: a and b [row, ...], mixed [set, row, ...]; views of y."""
         if len(y) != self.size_of_block(block):
             raise ValueError(f"{len(y)} results for {self.size_of_block(block)} members")
         return take_apart(y, block.count)

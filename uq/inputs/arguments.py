@@ -17,6 +17,8 @@ LOWEST_U = 2.0**-53
 HIGHEST_U = 1.0 - 2.0**-53
 # Normal scores of these points lie within +-8.21; a little beyond, so that rounding never matters.
 FARTHEST_SCORE = 8.3
+# Logarithms of draws must stay well inside the normal numbers of a double (about -708 to 709).
+LARGEST_LOGARITHM = 700.0
 
 
 class Mistakes(ValueMistake):

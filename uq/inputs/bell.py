@@ -8,11 +8,8 @@ from typing import ClassVar
 
 import numpy as np
 
-from uq.inputs.arguments import FARTHEST_SCORE, Arguments
+from uq.inputs.arguments import FARTHEST_SCORE, LARGEST_LOGARITHM, Arguments
 from uq.inputs.distribution import Distribution, Floats, Moments
-
-# Logarithms of draws must stay well inside the normal numbers of a double (about -708 to 709).
-LARGEST_LOGARITHM = 700.0
 
 
 @dataclass(frozen=True)
@@ -32,6 +29,9 @@ class Normal(Distribution):
 
     key: ClassVar[str] = "normal"
     forms: ClassVar[tuple[tuple[str, ...], ...]] = (("mean", "sd"), ("mean", "cv"), ("value", "expanded", "coverage"))
+    points: ClassVar[tuple[str, ...]] = ("mean", "value")
+    differences: ClassVar[tuple[str, ...]] = ("sd", "expanded")
+    multiplying: ClassVar[tuple[str, ...]] = ("cv",)
 
     @classmethod
     def relations(cls, arguments: Arguments) -> None:
@@ -55,11 +55,26 @@ class Normal(Distribution):
         scores: Floats = ndtri(u)
         return centre + spread * scores
 
+    def from_above(self, p: Floats) -> Floats:
+        from scipy.special import ndtri
+
+        return self.at_score(-ndtri(p))
+
+    def at_score(self, z: Floats) -> Floats:
+        centre, spread = self.moments()
+        return centre + spread * z
+
     def share_below(self, x: float) -> float:
         from scipy.special import ndtr
 
         centre, spread = self.moments()
         return float(ndtr((x - centre) / spread))
+
+    def share_above(self, x: float) -> float:
+        from scipy.special import ndtr
+
+        centre, spread = self.moments()
+        return float(ndtr((centre - x) / spread))
 
 
 def _normal_parameters(**given: float) -> tuple[float, float]:
@@ -85,6 +100,9 @@ class Lognormal(Distribution):
 
     key: ClassVar[str] = "lognormal"
     forms: ClassVar[tuple[tuple[str, ...], ...]] = (("median", "gsd"), ("median", "cv"), ("mean", "sd"), ("mean", "cv"))
+    points: ClassVar[tuple[str, ...]] = ("median", "mean")
+    differences: ClassVar[tuple[str, ...]] = ("sd",)
+    multiplying: ClassVar[tuple[str, ...]] = ("median", "mean")
 
     @classmethod
     def relations(cls, arguments: Arguments) -> None:
@@ -109,10 +127,18 @@ class Lognormal(Distribution):
     def quantile(self, u: Floats) -> Floats:
         from scipy.special import ndtri
 
+        return self.at_score(ndtri(u))
+
+    def from_above(self, p: Floats) -> Floats:
+        from scipy.special import ndtri
+
+        return self.at_score(-ndtri(p))
+
+    def at_score(self, z: Floats) -> Floats:
         # median x exp(s z), not exp(m + s z): the median is then met exactly, and the error does not grow with |m|.
         middle, spread = self._logarithmic()
         median = float(self.median) if self.median is not None else math.exp(middle)
-        factors: Floats = np.exp(spread * ndtri(u))
+        factors: Floats = np.exp(spread * z)
         return median * factors
 
     def share_below(self, x: float) -> float:
@@ -120,6 +146,12 @@ class Lognormal(Distribution):
 
         middle, spread = self._logarithmic()
         return float(ndtr((math.log(x) - middle) / spread)) if x > 0 else 0.0
+
+    def share_above(self, x: float) -> float:
+        from scipy.special import ndtr
+
+        middle, spread = self._logarithmic()
+        return float(ndtr((middle - math.log(x)) / spread)) if x > 0 else 1.0
 
     def _logarithmic(self) -> tuple[float, float]:
         return _logarithmic_parameters(**self.arguments())

@@ -10,6 +10,7 @@ import numpy as np
 
 from uq.errors import ValueMistake
 from uq.inputs.arguments import Arguments, Mistakes
+from uq.inputs.atoms import Atoms
 from uq.inputs.distribution import Distribution, Floats, Moments
 
 
@@ -44,10 +45,6 @@ class Data(Distribution):
                 arguments.refuse(name, f"the name of a {name}")
         return tuple(arguments.mistakes)
 
-    @classmethod
-    def relations(cls, arguments: Arguments) -> None:
-        """None: no argument is a number."""
-
     def with_values(self, values: Floats) -> Data:
         """The same with its values handed in; raises `Mistakes` where they are no distribution."""
         if np.size(values) == 0:
@@ -65,13 +62,24 @@ class Data(Distribution):
         ranks = np.ceil(np.asarray(u, dtype=np.float64) * count).astype(np.intp)
         return self.values[np.clip(ranks, 1, count) - 1]
 
+    def from_above(self, p: Floats) -> Floats:
+        count = len(self.values)
+        beyond = np.floor(np.asarray(p, dtype=np.float64) * count).astype(np.intp)
+        return self.values[np.clip(count - 1 - beyond, 0, count - 1)]
+
     def share_below(self, x: float) -> float:
         return float(np.searchsorted(self.values, x, side="left")) / len(self.values)
+
+    def share_above(self, x: float) -> float:
+        return float(len(self.values) - np.searchsorted(self.values, x, side="right")) / len(self.values)
+
+    def atoms(self) -> Atoms:
+        return Atoms(self.values, np.ones(len(self.values)))
 
     def arguments(self) -> dict[str, Any]:
         return {"file": self.file, "column": self.column, "values": self.values}
 
-    def words(self) -> str:
+    def stated(self) -> str:
         return f"data, column {self.column} of {self.file}, {len(self.values)} values"
 
 

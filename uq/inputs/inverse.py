@@ -18,7 +18,7 @@ Floats = NDArray[np.float64]
 Tail = Callable[[Floats], Floats]
 
 # Panels per tail and degree of the polynomials. Measured against scipy: relative error of x below 1e-13 for beta exponents and gamma
-# shapes from 0.5 on; tables serve gamma shapes from 0.1 to 2e5 and most beta exponents from 0.15 to 1e5, the rest is slow.
+# shapes from 0.5 on; tables serve gamma shapes from 0.1 to 1e5 and most beta exponents from 0.15 to 1e5, the rest is slow.
 _PANELS = 48
 _DEGREE = 9
 # The last coefficients must be below this; else the slow functions are used throughout.
@@ -44,14 +44,22 @@ class TwoTails:
         """lower(u) where u < 1/2, else upper(1 - u); u in (0, 1) of any shape."""
         flat = np.ravel(np.asarray(u, dtype=np.float64))
         above = flat >= 0.5
-        p = np.where(above, 1 - flat, flat)
+        return self._at(np.where(above, 1 - flat, flat), above).reshape(np.shape(u))
+
+    def from_above(self, p: Floats) -> Floats:
+        """upper(p) where p <= 1/2, else lower(1 - p); p in (0, 1) of any shape."""
+        flat = np.ravel(np.asarray(p, dtype=np.float64))
+        above = flat <= 0.5
+        return self._at(np.where(above, flat, 1 - flat), above).reshape(np.shape(p))
+
+    def _at(self, p: Floats, above: NDArray[np.bool_]) -> Floats:
         if self._table is None:
-            return self._slow(p, above).reshape(np.shape(u))
+            return self._slow(p, above)
         result = _from_table(self._table, np.maximum(p, LOWEST_U), above)
         outside = p < LOWEST_U
         if outside.any():
             result[outside] = self._slow(p[outside], above[outside])
-        return result.reshape(np.shape(u))
+        return result
 
     def _slow(self, p: Floats, above: NDArray[np.bool_]) -> Floats:
         result = np.empty_like(p)
