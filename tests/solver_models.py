@@ -9,7 +9,7 @@ import numpy as np
 
 from uq.lang.graph import Graph, Node
 from uq.model.build import build
-from uq.model.code import Course, Equations, Forcing
+from uq.model.code import Course, Equations, Forcing, Table
 from uq.solve.batch import Batch, Settings
 from uq.solve.compile import Compiled, compile_code
 from uq.solve.solve import solve
@@ -92,6 +92,16 @@ def number(like: Ex, value: float) -> Ex:
     return Ex(like.graph, like.graph.number(value))
 
 
+def table(name: str, at: Ex) -> Ex:
+    """The value of a table."""
+    return Ex(at.graph, at.graph.table(name, at.node))
+
+
+def table_slope(name: str, at: Ex) -> Ex:
+    """The derivative of a table."""
+    return Ex(at.graph, at.graph.table_slope(name, at.node))
+
+
 @dataclass(frozen=True)
 class Parts:
     """What `equations` takes besides starts and rates."""
@@ -101,6 +111,7 @@ class Parts:
     forcings: Sequence[Forcing] = ()
     courses: Sequence[Course] = ()
     outcomes: Sequence[Ex] = ()
+    tables: Sequence[Table] = ()
 
 
 def equations(inputs: str, states: str, starts: Sequence[Ex], rates: Sequence[Ex], parts: Parts = Parts()) -> Equations:
@@ -118,6 +129,7 @@ def equations(inputs: str, states: str, starts: Sequence[Ex], rates: Sequence[Ex
         tuple(e.node for e in parts.conditions),
         tuple(parts.courses),
         tuple(e.node for e in parts.outcomes),
+        tuple(parts.tables),
     )
 
 
@@ -127,15 +139,17 @@ def settings(states: int, accuracy: float = 1e-6, **changes: object) -> Settings
     return Settings(accuracy, **{k: v if k == "max_steps" else np.asarray(v, float) for k, v in given.items()})  # type: ignore[arg-type]
 
 
-def solved(eq: Equations, x: object, times: object, accuracy: float = 1e-6, start: float = 0.0, **changes: object) -> Batch:
+def solved(
+    eq: Equations, x: object, times: object, accuracy: float = 1e-6, start: float = 0.0, method: str = "explicit54", **changes: object
+) -> Batch:
     """Build, compile and solve."""
     rows = np.atleast_2d(np.asarray(x, float))
-    return solve(compiled(eq), rows, np.asarray(times, float), start, settings(len(eq.states), accuracy, **changes))
+    return solve(compiled(eq, method), rows, np.asarray(times, float), start, settings(len(eq.states), accuracy, **changes))
 
 
-def compiled(eq: Equations) -> Compiled:
+def compiled(eq: Equations, method: str = "explicit54") -> Compiled:
     """Machine code of equations."""
-    return compile_code(build(eq))
+    return compile_code(build(eq, method))
 
 
 def predator_prey() -> Equations:

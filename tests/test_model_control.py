@@ -8,6 +8,8 @@ from math import log2
 import numpy as np
 
 from uq.model import control
+from uq.model.pair import Control
+from uq.model.tableau import DORMAND_PRINCE_54, DORMAND_PRINCE_853
 from uq.model.writer import V, Writer
 from uq.solve.compile import Processor, parsed
 from uq.solve.memory import aligned
@@ -50,5 +52,7 @@ def test_within_takes_the_upper_end_for_what_is_not_a_number() -> None:
 
 def test_constants_are_those_of_the_source() -> None:
     # Hairer, Norsett, Wanner: DOPRI5 has beta = 0.04, expo1 = 0.2 - 0.75 beta, safety 0.9, factors 0.2 to 10, facold at least 1e-4.
-    assert (control.BETA, control.ALPHA, control.SAFETY, control.LEAST, control.MOST) == (0.04, 0.2 - 0.03, 0.9, 0.2, 10.0)
-    assert 2 * log2(1e-4) == control.START_LOG_ERROR
+    # DOP853 has expo1 = 1/8 - 0.2 beta, factors 0.333 to 6, and beta = 0 unless told otherwise.
+    assert DORMAND_PRINCE_54.control == Control(0.2 - 0.03, 0.04, 0.2, 10.0)
+    assert DORMAND_PRINCE_853.control == Control(0.125 - 0.2 * 0.04, 0.04, 0.333, 6.0)
+    assert (0.9, 2 * log2(1e-4)) == (control.SAFETY, control.START_LOG_ERROR)

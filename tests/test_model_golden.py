@@ -1,4 +1,4 @@
-"""The written text of two small models, reviewed as text.
+"""The written text of small models, reviewed as text.
 
 After a wanted change of the emitter renew the files with `python -m tests.test_model_golden` and read the difference.
 """
@@ -10,9 +10,9 @@ from pathlib import Path
 
 import pytest
 
-from tests.solver_models import Ex, Parts, equations, names, predator_prey
+from tests.solver_models import Ex, Parts, equations, names, predator_prey, table
 from uq.model.build import build
-from uq.model.code import Course, Equations, Forcing
+from uq.model.code import Course, Equations, Forcing, Table
 
 FOLDER = Path(__file__).parent / "golden"
 
@@ -27,14 +27,28 @@ def drained_tank() -> Equations:
     return equations("area outlet h0 limit", "h", [h0], [rate], parts)
 
 
-MODELS: tuple[Callable[[], Equations], ...] = (predator_prey, drained_tank)
+def heated_rod() -> Equations:
+    """A temperature between a smooth given one and a loss by a table."""
+    k, start, temperature, outside = names("k start temperature outside")
+    loss = table("loss", temperature)
+    course = Forcing("outside", (0.0, 6.0, 12.0), (280.0, 290.0, 281.0), "smooth", "repeat")
+    given = Table("loss", (250.0, 300.0, 400.0), (0.0, 1.0, 5.0), "smooth", "hold")
+    parts = Parts(forcings=[course], tables=[given])
+    return equations("k start", "temperature", [start], [k * (outside - temperature) - loss], parts)
 
 
-@pytest.mark.parametrize("model", MODELS)
-def test_the_text_is_the_reviewed_one(model: Callable[[], Equations]) -> None:
-    assert build(model()).text == (FOLDER / f"{model.__name__}.ll").read_text(encoding="utf-8")
+MODELS: tuple[tuple[str, Callable[[], Equations], str], ...] = (
+    ("predator_prey", predator_prey, "explicit54"),
+    ("drained_tank", drained_tank, "explicit54"),
+    ("heated_rod", heated_rod, "explicit853"),
+)
+
+
+@pytest.mark.parametrize(("name", "model", "method"), MODELS)
+def test_the_text_is_the_reviewed_one(name: str, model: Callable[[], Equations], method: str) -> None:
+    assert build(model(), method).text == (FOLDER / f"{name}.ll").read_text(encoding="utf-8")
 
 
 if __name__ == "__main__":
-    for each in MODELS:
-        (FOLDER / f"{each.__name__}.ll").write_text(build(each()).text, encoding="utf-8")
+    for file, each, how in MODELS:
+        (FOLDER / f"{file}.ll").write_text(build(each(), how).text, encoding="utf-8")

@@ -7,7 +7,9 @@ from fractions import Fraction
 
 import pytest
 
-from uq.model.tableau import DORMAND_PRINCE_54, density, size, trees
+from uq.model.pair import Pair
+from uq.model.tableau import DORMAND_PRINCE_54, DORMAND_PRINCE_853, PAIRS
+from uq.model.trees import density, size, trees
 
 
 def test_there_are_as_many_rooted_trees_as_published() -> None:
@@ -22,12 +24,33 @@ def test_density_of_tall_and_bushy_trees() -> None:
     assert density(bushy) == 4
 
 
-@pytest.mark.parametrize("part", ["a", "c", "e", "d"])
-def test_a_wrong_coefficient_is_refused(part: str) -> None:
-    row = getattr(DORMAND_PRINCE_54, part)
-    wrong = (*row[:-1], (*row[-1][:-1], row[-1][-1] + Fraction(1, 997))) if part == "a" else (*row[:-1], row[-1] + Fraction(1, 997))
-    with pytest.raises(ValueError, match="explicit54"):
-        replace(DORMAND_PRINCE_54, **{part: wrong})
+# What a wrong coefficient is off by: in exact fractions anything is seen, in decimals what is above their last printed digits.
+OFF = {"explicit54": Fraction(1, 10**40), "explicit853": Fraction(1, 10**20)}
+
+
+PARTS = [(pair, part) for pair in PAIRS for part in ("a", "c", "e", "d", "extra", "extra_c") if getattr(pair, part)]
+
+
+@pytest.mark.parametrize(("pair", "part"), PARTS, ids=lambda value: getattr(value, "name", value))
+def test_a_wrong_coefficient_is_refused(pair: Pair, part: str) -> None:
+    rows = getattr(pair, part)
+    off = OFF[pair.name]
+    wrong = (*rows[:-1], rows[-1] + off if isinstance(rows[-1], Fraction) else (*rows[-1][:-1], rows[-1][-1] + off))
+    with pytest.raises(ValueError, match=pair.name):
+        replace(pair, **{part: wrong})
+
+
+def test_every_coefficient_of_the_8_5_3_pair_is_that_of_another_print_of_it() -> None:
+    from scipy.integrate._ivp import dop853_coefficients as other
+
+    pair = DORMAND_PRINCE_853
+    for found, expected in (((*pair.a, *pair.extra), other.A), (pair.d, other.D)):
+        for row, theirs in zip(found, expected, strict=True):
+            assert [float(x) for x in row] == theirs[: len(row)].tolist()
+            assert not theirs[len(row) :].any()
+    assert [float(x) for x in (*pair.c, *pair.extra_c)] == other.C.tolist()
+    for row, theirs in zip(pair.e, (other.E5, other.E3), strict=True):
+        assert [float(x) for x in row] == pytest.approx(theirs[: len(row)].tolist(), abs=1e-16)
 
 
 def test_two_wrong_coefficients_that_keep_the_row_sum_are_refused() -> None:
@@ -37,13 +60,30 @@ def test_two_wrong_coefficients_that_keep_the_row_sum_are_refused() -> None:
         replace(DORMAND_PRINCE_54, a=(*DORMAND_PRINCE_54.a[:5], tuple(row), DORMAND_PRINCE_54.a[6]))
 
 
-def test_orders_are_not_understated() -> None:
-    for claim in ({"order": 6}, {"embedded_order": 5}, {"extension_order": 5}):
+@pytest.mark.parametrize(
+    ("pair", "claims"),
+    [
+        (DORMAND_PRINCE_54, ({"order": 6}, {"embedded_orders": (5,)}, {"extension_order": 5})),
+        (DORMAND_PRINCE_853, ({"order": 9}, {"embedded_orders": (6, 3)}, {"embedded_orders": (5, 4)}, {"extension_order": 8})),
+    ],
+)
+def test_orders_are_not_understated(pair: Pair, claims: tuple[dict[str, object], ...]) -> None:
+    for claim in claims:
         with pytest.raises(ValueError, match="order condition"):
-            replace(DORMAND_PRINCE_54, **claim)
+            replace(pair, **claim)
 
 
-def test_the_extension_meets_the_step_at_both_ends() -> None:
-    pair = DORMAND_PRINCE_54
-    assert pair.extension(Fraction(0)) == (0,) * 7
-    assert pair.extension(Fraction(1)) == (*pair.a[-1], 0)
+@pytest.mark.parametrize("pair", PAIRS, ids=lambda pair: pair.name)
+def test_the_extension_meets_the_step_at_both_ends(pair: Pair) -> None:
+    assert pair.extension(Fraction(0)) == (0,) * pair.all_stages
+    assert pair.extension(Fraction(1)) == pair.padded((*pair.a[-1], Fraction(0)))
+
+
+@pytest.mark.parametrize("pair", PAIRS, ids=lambda pair: pair.name)
+def test_the_extension_has_the_rates_of_both_ends(pair: Pair) -> None:
+    little = Fraction(1, 10**12)
+    first, last = pair.extension(little), pair.extension(1 - little)
+    whole = pair.extension(Fraction(1))
+    slopes = [[w / little for w in first], [(v - w) / little for v, w in zip(whole, last, strict=True)]]
+    for slope, stage in zip(slopes, (0, pair.stages - 1), strict=True):
+        assert [float(w) for w in slope] == pytest.approx([float(k == stage) for k in range(pair.all_stages)], abs=1e-8)

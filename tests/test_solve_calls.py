@@ -5,10 +5,12 @@ from __future__ import annotations
 import gc
 import itertools
 import os
+import platform
 import subprocess
 import sys
 import threading
 import time
+from dataclasses import replace
 from pathlib import Path
 
 import numpy as np
@@ -64,6 +66,8 @@ def test_solving_releases_the_interpreter() -> None:
         (np.ones((2, 2)), [1.0], {"scales": [1.0, 1.0]}, "scales"),
         (np.ones((2, 2)), [1.0], {"scales": [0.0]}, "above 0"),
         (np.ones((2, 2)), [1.0], {"lowest": []}, "lowest"),
+        (np.ones((2, 2)), [1.0], {"negligible": [1.0, 1.0]}, "negligible"),
+        (np.ones((2, 2)), [1.0], {"negligible": [0.0]}, "above 0"),
     ],
 )
 def test_callers_defects_are_told(x, times, changes, what) -> None:
@@ -98,12 +102,19 @@ def test_a_processor_without_fma_is_refused_in_a_sentence(monkeypatch: pytest.Mo
         Processor.here()
 
 
-def test_ten_states_are_compiled_quickly() -> None:
+def test_a_processor_in_words() -> None:
+    assert Processor("some", "+fma,+avx2,-avx512f").words == f"{platform.machine()}, some, avx2"
+    assert Processor("some", "").words == f"{platform.machine()}, some"
+    assert Processor.here().name in Processor.here().words
+
+
+@pytest.mark.parametrize("method", ["explicit54", "explicit853"])
+def test_ten_states_are_compiled_quickly(method: str) -> None:
     leaves = names("k x0 " + " ".join(f"s{i}" for i in range(10)))
     rates = [leaves[0] * (leaves[1 + i] - leaves[2 + i]) - (leaves[2 + i] * -0.1).exp() for i in range(10)]
     eq = equations("k x0", " ".join(f"s{i}" for i in range(10)), [leaves[1]] * 10, rates)
     began = time.perf_counter()
-    compile_for(build(eq), Processor.here())
+    compile_for(build(eq, method), Processor.here())
     assert time.perf_counter() - began < 3.0  # a tenth of that on a quiet machine; the benchmark tells
 
 
@@ -121,10 +132,12 @@ def test_the_kernel_knows_every_slot_that_it_asks_for() -> None:
 
 
 def test_slots_do_not_overlap() -> None:
-    layout = Layout(inputs=3, hoisted=2, states=4, forcings=1, observed=5, conditions=6)
-    firsts = [len(Head), layout.first_hoisted, layout.first_base, layout.first_slope, layout.first_state, layout.first_rate]
+    sizes = Layout(inputs=3, hoisted=2, states=4, forcings=2, observed=5, conditions=6)
+    layout = replace(sizes, smooth=1, curve_parts=8, spare_columns=17)
+    firsts = [len(Head), layout.first_hoisted, layout.first_base, layout.first_slope]
+    firsts += [layout.first_second, layout.first_third, layout.first_state, layout.first_rate]
     firsts += [layout.first_largest, layout.first_curve, layout.first_spare, layout.first_observed, layout.slots]
-    assert [b - a for a, b in itertools.pairwise(firsts)] == [3, 2, 1, 1, 4, 4, 4, 20, 28, 5]
+    assert [b - a for a, b in itertools.pairwise(firsts)] == [3, 2, 2, 2, 1, 1, 4, 4, 4, 32, 68, 5]
     assert layout.moved == layout.first_curve
 
 

@@ -2,11 +2,20 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
+
 import numpy as np
 import pytest
 
-from tests.solver_models import Parts, equations, names, one_state, solved
-from uq.solve.batch import Status
+from tests.solver_models import Ex, Parts, equations, names, one_state, settings, solved
+from uq.model.build import write
+from uq.model.code import Course
+from uq.model.columns import Looped
+from uq.model.points import Plan
+from uq.model.tableau import PAIRS
+from uq.solve.batch import Status, Truth
+from uq.solve.compile import Processor, compile_for
+from uq.solve.solve import solve
 from uq.solve.statuses import SENTENCES, describe
 
 TIMES = np.linspace(0.0, 3.0, 31)
@@ -129,17 +138,84 @@ def test_valid_ranges_are_judged_at_the_start_and_at_accepted_steps() -> None:
     gone = batch.end_time[:, None] <= TIMES
     failed = batch.status != Status.ok
     assert np.array_equal(np.isnan(batch.values[failed]), np.repeat(gone[failed, None], 2, axis=1))
-    assert not batch.conditions[failed, 0][gone[failed]].any()
-    assert batch.conditions[failed, 0][~gone[failed]].all()
+    assert np.all(batch.conditions[failed, 0][gone[failed]] == Truth.unknown)
+    assert np.all(batch.conditions[failed, 0][~gone[failed]] == Truth.true)
 
 
-def test_a_condition_of_what_is_no_number_is_false() -> None:
+def test_a_state_outside_of_its_range_within_a_step_is_seen_at_the_output_times() -> None:
+    # x' = 1 - y with y = t: x is highest in the middle of one long step and valid again at its end
+    k, x0, x, y = names("k x0 x y")
+    eq = equations("k x0", "x y", [x0, x0], [k * (1 - y), 1 + 0 * y], Parts(observed=[x, x * 2], conditions=[x > 0.2]))
+    times = np.array([0.0, 0.5, 0.75, 1.0, 2.0])
+    for method in ("explicit54", "explicit853"):
+        batch = solved(eq, [[1.0, 0.0], [0.5, 0.0]], times, 1e-6, method=method, highest=[0.45, np.inf])
+        assert batch.status.tolist() == [Status.out_of_range, Status.ok]
+        assert batch.end_time.tolist() == [0.75, 2.0]
+        assert batch.values[0, :, 1] == pytest.approx([0.375, 0.75])
+        assert np.isnan(batch.values[0]).tolist() == [[False, False, True, True, True]] * 2
+        assert batch.conditions.tolist() == [[[0, 1, 2, 2, 2]], [[0, 0, 1, 1, 0]]]
+
+
+def test_a_range_left_within_one_step_is_seen_whatever_else_happens_in_it() -> None:
+    # one step from 0 to 10; the rate is a number, so nothing else makes steps short
     k, x0, x = names("k x0 x")
-    eq = equations("k x0", "x", [x0], [-k * x], Parts(observed=[(x - 100).ln()], conditions=[(x - 100).ln() > 0, (x - 100).ln() < 0]))
-    batch = solved(eq, ROWS[:3], TIMES)
+    eq = equations("k x0", "x y", [x0, x0], [k, -k], Parts(observed=[x]))
+    x_rows = np.column_stack([np.linspace(0.5, 2.0, 16), np.zeros(16)])
+    batch = solved(eq, x_rows, np.linspace(0.0, 10.0, 11), lowest=[-np.inf, -8.0])
+    crossing = np.ceil(8.0 / x_rows[:, 0] + 1e-12)
+    assert np.array_equal(batch.status == Status.out_of_range, crossing <= 10)
+    assert np.array_equal(batch.end_time, np.minimum(crossing, 10.0))
+    assert np.array_equal(np.isnan(batch.values[:, 0]), (np.arange(11) >= crossing[:, None]) & (crossing[:, None] <= 10))
+
+
+@pytest.mark.parametrize(("method", "accuracy"), [("explicit54", 1e-3), ("explicit54", 1e-6), ("explicit853", 1e-8)])
+def test_the_solvers_own_error_does_not_lead_out_of_a_range(method: str, accuracy: float) -> None:
+    # both states settle at 0, where the solution swings by its own error, at the ends of steps and between them
+    k, x0, x, y = names("k x0 x y")
+    eq = equations("k x0", "x y", [x0, x0 * 0], [-50 * k * x, 50 * k * x - k * y])
+    times = np.linspace(0.0, 30.0, 301)
+    batch = solved(eq, ROWS, times, accuracy, method=method, lowest=[0.0, 0.0], highest=[5.0, 5.0])
     assert np.all(batch.status == Status.ok)
-    assert np.isnan(batch.values).all()
-    assert not batch.conditions.any()
+    assert batch.values.min() < 0
+    strict = solved(eq, ROWS, times, accuracy, method=method, lowest=[0.05, -5.0], highest=[5.0, 5.0])
+    assert np.all(strict.status == Status.out_of_range)
+
+
+def test_a_condition_of_what_is_no_number_is_unknown_unless_the_rest_decides() -> None:
+    k, x0, x = names("k x0 x")
+    nothing, yes, no = (x - 100).ln(), x > -1, x < -1
+    maybe = nothing > 0
+    asked = {
+        "unknown": [maybe, nothing < 0, ~maybe, ~(nothing <= 0), maybe & yes, yes & maybe, maybe | no, no | maybe, maybe & ~maybe, nothing],
+        "true": [maybe | yes, yes | maybe, ~(maybe & no), yes, x],
+        "false": [maybe & no, no & maybe, ~(maybe | yes), no, x - x],
+    }
+    conditions = [condition for group in asked.values() for condition in group]
+    outcome = Ex(x.graph, x.graph.name("course:0"))
+    parts = Parts(
+        observed=[nothing, maybe.where(1, 2), (maybe & no).where(1, 2), maybe],
+        conditions=conditions,
+        courses=[Course("highest", 0, 0.0, 3.0)],
+        outcomes=[(outcome > 0).where(1, 0), outcome > 0],
+    )
+    for looped in (False, True):
+        eq = equations("k x0", "x", [x0], [-k * x], parts)
+        plan = Plan.of(eq, PAIRS[0])
+        code = compile_for(write(replace(plan, form=Looped) if looped else plan), Processor.here())
+        batch = solve(code, ROWS[:3], TIMES, 0.0, settings(1))
+        assert np.all(batch.status == Status.ok)
+        assert np.isnan(batch.values[:, [0, 1, 3]]).all()
+        assert np.all(batch.values[:, 2] == 2.0)
+        assert np.isnan(batch.outcomes).all()
+        expected = [Truth[name] for name, group in asked.items() for _ in group]
+        assert np.all(batch.conditions == np.array(expected)[:, None])
+
+
+def test_a_rate_that_asks_what_cannot_be_known_is_not_finite() -> None:
+    # from x = 1 on the root is no number: neither branch is right
+    batch = solved(one_state(lambda x, k, t: ((1 - x).sqrt() > 0.1).where(k, 0.5 * k)), [[1.0, 0.0]], TIMES)
+    assert batch.status[0] == Status.not_finite
+    assert batch.end_time[0] == pytest.approx(1.01, abs=0.02)
 
 
 def test_nothing_takes_forever() -> None:

@@ -38,6 +38,13 @@ def test_a_state_that_stays_at_nothing_falls_back_to_one() -> None:
     assert fell_back == ("still",)
 
 
+def test_scales_are_found_whatever_is_negligible() -> None:
+    x = np.column_stack([np.full(101, 0.5), np.linspace(1.0, 3.0, 101)])
+    given = settings(1, negligible=[1e-3])
+    scales, _ = pilot_scales(compiled(one_state(lambda x, k, t: -k * x)), x, TIMES, 0.0, given)
+    assert scales == pytest.approx([2.0])
+
+
 def test_nothing_anywhere() -> None:
     scales, fell_back = pilot_scales(compiled(one_state(lambda x, k, t: k * x)), np.zeros((16, 2)), TIMES, 0.0, settings(1))
     assert scales.tolist() == [1.0]

@@ -49,7 +49,7 @@ def pendulum() -> Equations:
 
 def epidemic() -> Equations:
     """Susceptible, infected, recovered shares."""
-    beta, gamma, i0, s, i, r = names("beta gamma i0 s i r")
+    beta, gamma, i0, s, i, _ = names("beta gamma i0 s i r")
     return equations("beta gamma i0", "s i r", [1 - i0, i0, 0 * i0], [-beta * s * i, beta * s * i - gamma * i, gamma * i])
 
 
@@ -57,7 +57,7 @@ def heating() -> Equations:
     """A tank that heats itself, with an Arrhenius term."""
     k0, e, ua, temperature, x = names("k0 e ua T x")
     k = k0 * (-e / (0.008314 * temperature)).exp()
-    heat = 400 * k * (1 - x) - ua * (temperature - 295)
+    heat = 60 * k * (1 - x) - ua * (temperature - 295)
     return equations("k0 e ua", "T x", [0 * k0 + 310, 0 * k0], [heat, k * (1 - x)])
 
 

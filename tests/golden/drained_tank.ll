@@ -39,7 +39,7 @@ entry:
   %v32 = getelementptr inbounds <8 x double>, ptr %settings, i64 0
   %v33 = load <8 x double>, ptr %v32, align 64
   %v34 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v2)
-  %v35 = getelementptr inbounds <8 x double>, ptr %settings, i64 7
+  %v35 = getelementptr inbounds <8 x double>, ptr %settings, i64 9
   %v36 = load <8 x double>, ptr %v35, align 64
   %v37 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v33, <8 x double> %v34, <8 x double> %v36)
   %v38 = fdiv <8 x double> %v2, %v37
@@ -59,114 +59,124 @@ entry:
   %v52 = fmul <8 x double> splat (double 0x3F847AE147AE147B), %v41
   %v53 = fdiv <8 x double> %v52, %v47
   %v54 = select <8 x i1> %v50, <8 x double> %v51, <8 x double> %v53
-  %v55 = fcmp olt <8 x double> %v54, %v31
-  %v56 = select <8 x i1> %v55, <8 x double> %v54, <8 x double> %v31
-  %v57 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v56, <8 x double> %v27, <8 x double> %v2)
-  %v58 = fadd <8 x double> %v7, %v56
-  %v59 = fsub <8 x double> %v58, %v13
-  %v60 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v59, <8 x double> %v18)
-  %v61 = fcmp ogt <8 x double> %v57, splat (double 0x0000000000000000)
-  %v62 = select <8 x i1> %v61, <8 x double> %v57, <8 x double> splat (double 0x0000000000000000)
-  %v63 = fcmp uno <8 x double> %v57, %v57
-  %v64 = select <8 x i1> %v63, <8 x double> %v57, <8 x double> %v62
-  %v65 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v64)
-  %v66 = fneg <8 x double> %v11
-  %v67 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v66, <8 x double> %v65, <8 x double> %v60)
-  %v68 = fdiv <8 x double> %v67, %v9
-  %v69 = fsub <8 x double> %v68, %v27
-  %v70 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v2)
-  %v71 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v33, <8 x double> %v70, <8 x double> %v36)
-  %v72 = fdiv <8 x double> %v69, %v71
-  %v73 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v72, <8 x double> %v72, <8 x double> splat (double 0x0000000000000000))
-  %v74 = fmul <8 x double> %v73, splat (double 0x3FF0000000000000)
-  %v75 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v74)
-  %v76 = fdiv <8 x double> %v75, %v56
-  %v77 = fcmp ogt <8 x double> %v47, %v76
-  %v78 = select <8 x i1> %v77, <8 x double> %v47, <8 x double> %v76
-  %v79 = fcmp olt <8 x double> %v78, splat (double 0x73D658E3AB795204)
-  %v80 = select <8 x i1> %v79, <8 x double> %v78, <8 x double> splat (double 0x73D658E3AB795204)
-  %v81 = fcmp ogt <8 x double> %v80, splat (double 0x0C06E93F5DA2824C)
-  %v82 = select <8 x i1> %v81, <8 x double> %v80, <8 x double> splat (double 0x0C06E93F5DA2824C)
-  %v83 = bitcast <8 x double> %v82 to <8 x i64>
-  %v84 = lshr <8 x i64> %v83, splat (i64 52)
-  %v85 = or <8 x i64> %v84, splat (i64 4841369599423283200)
-  %v86 = bitcast <8 x i64> %v85 to <8 x double>
-  %v87 = fsub <8 x double> %v86, splat (double 0x43300000000003FF)
-  %v88 = and <8 x i64> %v83, splat (i64 4503599627370495)
-  %v89 = or <8 x i64> %v88, splat (i64 4607182418800017408)
-  %v90 = bitcast <8 x i64> %v89 to <8 x double>
-  %v91 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v90, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
-  %v92 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v91, <8 x double> %v90, <8 x double> splat (double 0x3FF96E7C9A8551E4))
-  %v93 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v92, <8 x double> %v90, <8 x double> splat (double 0xC00BEB4578B01506))
-  %v94 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v93, <8 x double> %v90, <8 x double> splat (double 0x401431010187BF7D))
-  %v95 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v94, <8 x double> %v90, <8 x double> splat (double 0xC0064DAC40654ADD))
-  %v96 = fadd <8 x double> %v87, %v95
-  %v97 = fmul <8 x double> %v96, splat (double 0xBFC999999999999A)
-  %v98 = fadd <8 x double> %v97, splat (double 0xBFF542A5A12E1C5A)
-  %v99 = fadd <8 x double> %v98, splat (double 0x4338000000000000)
-  %v100 = fsub <8 x double> %v99, splat (double 0x4338000000000000)
-  %v101 = fsub <8 x double> %v98, %v100
-  %v102 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v101, <8 x double> splat (double 0x3FACA1CEF240FA9C))
-  %v103 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v102, <8 x double> %v101, <8 x double> splat (double 0x3FCEBFA4C61D8623))
-  %v104 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v103, <8 x double> %v101, <8 x double> splat (double 0x3FE62E0C17657753))
-  %v105 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v104, <8 x double> %v101, <8 x double> splat (double 0x3FF0000000000000))
-  %v106 = bitcast <8 x double> %v99 to <8 x i64>
-  %v107 = shl <8 x i64> %v106, splat (i64 52)
-  %v108 = bitcast <8 x double> %v105 to <8 x i64>
-  %v109 = add <8 x i64> %v108, %v107
-  %v110 = bitcast <8 x i64> %v109 to <8 x double>
-  %v111 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
-  %v112 = fmul <8 x double> %v56, splat (double 0x3F50624DD2F1A9FC)
-  %v113 = fcmp ogt <8 x double> %v111, %v112
-  %v114 = select <8 x i1> %v113, <8 x double> %v111, <8 x double> %v112
-  %v115 = fcmp ole <8 x double> %v78, splat (double 0x3CD203AF9EE75616)
-  %v116 = select <8 x i1> %v115, <8 x double> %v114, <8 x double> %v110
-  %v117 = fmul <8 x double> splat (double 0x4059000000000000), %v56
-  %v118 = fcmp olt <8 x double> %v117, %v116
-  %v119 = select <8 x i1> %v118, <8 x double> %v117, <8 x double> %v116
-  %v120 = fcmp olt <8 x double> %v119, %v31
-  %v121 = select <8 x i1> %v120, <8 x double> %v119, <8 x double> %v31
-  %v122 = fcmp ord <8 x double> %v76, %v76
-  %v123 = select <8 x i1> %v122, <8 x double> %v121, <8 x double> %v56
-  %v124 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
-  store <8 x double> %v123, ptr %v124, align 64
-  %v125 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
-  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v125, align 64
-  %v126 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
-  store <8 x double> splat (double 0x0000000000000000), ptr %v126, align 64
-  %v127 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
-  store <8 x double> splat (double 0x0000000000000000), ptr %v127, align 64
-  %v128 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
-  store <8 x double> splat (double 0x0000000000000000), ptr %v128, align 64
-  %v129 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
-  store <8 x double> splat (double 0x0000000000000000), ptr %v129, align 64
-  %v130 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
-  store <8 x double> splat (double 0x0000000000000000), ptr %v130, align 64
-  %v131 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v131, align 64
-  %v132 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
-  store <8 x double> %v7, ptr %v132, align 64
-  %v133 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v133, align 64
-  %v134 = getelementptr inbounds <8 x double>, ptr %settings, i64 8
-  %v135 = load <8 x double>, ptr %v134, align 64
-  %v136 = fcmp olt <8 x double> %v2, %v135
-  %v137 = or <8 x i1> zeroinitializer, %v136
-  %v138 = getelementptr inbounds <8 x double>, ptr %settings, i64 9
-  %v139 = load <8 x double>, ptr %v138, align 64
-  %v140 = fcmp ogt <8 x double> %v2, %v139
-  %v141 = or <8 x i1> %v137, %v140
-  %v142 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v2, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
-  %v143 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v27, <8 x double> splat (double 0x0000000000000000), <8 x double> %v142)
-  %v144 = fcmp uno <8 x double> %v143, %v143
-  %v145 = select <8 x i1> %v141, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
-  %v146 = select <8 x i1> %v144, <8 x double> splat (double 0x4008000000000000), <8 x double> %v145
-  %v147 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
-  store <8 x double> %v146, ptr %v147, align 64
-  %v148 = or <8 x i1> %v141, %v144
-  %v149 = bitcast <8 x i1> %v148 to i8
-  %v150 = zext i8 %v149 to i64
-  ret i64 %v150
+  %v55 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
+  %v56 = getelementptr inbounds <8 x double>, ptr %settings, i64 2
+  %v57 = load <8 x double>, ptr %v56, align 64
+  %v58 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v55, <8 x double> %v57)
+  %v59 = fcmp ogt <8 x double> %v54, %v58
+  %v60 = select <8 x i1> %v59, <8 x double> %v54, <8 x double> %v58
+  %v61 = fcmp olt <8 x double> %v60, %v31
+  %v62 = select <8 x i1> %v61, <8 x double> %v60, <8 x double> %v31
+  %v63 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v62, <8 x double> %v27, <8 x double> %v2)
+  %v64 = fadd <8 x double> %v7, %v62
+  %v65 = fsub <8 x double> %v64, %v13
+  %v66 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v65, <8 x double> %v18)
+  %v67 = fcmp ogt <8 x double> %v63, splat (double 0x0000000000000000)
+  %v68 = select <8 x i1> %v67, <8 x double> %v63, <8 x double> splat (double 0x0000000000000000)
+  %v69 = fcmp uno <8 x double> %v63, %v63
+  %v70 = select <8 x i1> %v69, <8 x double> %v63, <8 x double> %v68
+  %v71 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v70)
+  %v72 = fneg <8 x double> %v11
+  %v73 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v72, <8 x double> %v71, <8 x double> %v66)
+  %v74 = fdiv <8 x double> %v73, %v9
+  %v75 = fsub <8 x double> %v74, %v27
+  %v76 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v2)
+  %v77 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v33, <8 x double> %v76, <8 x double> %v36)
+  %v78 = fdiv <8 x double> %v75, %v77
+  %v79 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v78, <8 x double> %v78, <8 x double> splat (double 0x0000000000000000))
+  %v80 = fmul <8 x double> %v79, splat (double 0x3FF0000000000000)
+  %v81 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v80)
+  %v82 = fdiv <8 x double> %v81, %v62
+  %v83 = fcmp ogt <8 x double> %v47, %v82
+  %v84 = select <8 x i1> %v83, <8 x double> %v47, <8 x double> %v82
+  %v85 = fcmp olt <8 x double> %v84, splat (double 0x73D658E3AB795204)
+  %v86 = select <8 x i1> %v85, <8 x double> %v84, <8 x double> splat (double 0x73D658E3AB795204)
+  %v87 = fcmp ogt <8 x double> %v86, splat (double 0x0C06E93F5DA2824C)
+  %v88 = select <8 x i1> %v87, <8 x double> %v86, <8 x double> splat (double 0x0C06E93F5DA2824C)
+  %v89 = bitcast <8 x double> %v88 to <8 x i64>
+  %v90 = lshr <8 x i64> %v89, splat (i64 52)
+  %v91 = or <8 x i64> %v90, splat (i64 4841369599423283200)
+  %v92 = bitcast <8 x i64> %v91 to <8 x double>
+  %v93 = fsub <8 x double> %v92, splat (double 0x43300000000003FF)
+  %v94 = and <8 x i64> %v89, splat (i64 4503599627370495)
+  %v95 = or <8 x i64> %v94, splat (i64 4607182418800017408)
+  %v96 = bitcast <8 x i64> %v95 to <8 x double>
+  %v97 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v96, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
+  %v98 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v97, <8 x double> %v96, <8 x double> splat (double 0x3FF96E7C9A8551E4))
+  %v99 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v98, <8 x double> %v96, <8 x double> splat (double 0xC00BEB4578B01506))
+  %v100 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v99, <8 x double> %v96, <8 x double> splat (double 0x401431010187BF7D))
+  %v101 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v100, <8 x double> %v96, <8 x double> splat (double 0xC0064DAC40654ADD))
+  %v102 = fadd <8 x double> %v93, %v101
+  %v103 = fmul <8 x double> %v102, splat (double 0xBFC999999999999A)
+  %v104 = fadd <8 x double> %v103, splat (double 0xBFF542A5A12E1C5A)
+  %v105 = fadd <8 x double> %v104, splat (double 0x4338000000000000)
+  %v106 = fsub <8 x double> %v105, splat (double 0x4338000000000000)
+  %v107 = fsub <8 x double> %v104, %v106
+  %v108 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v107, <8 x double> splat (double 0x3FACA1CEF240FA9C))
+  %v109 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v108, <8 x double> %v107, <8 x double> splat (double 0x3FCEBFA4C61D8623))
+  %v110 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v109, <8 x double> %v107, <8 x double> splat (double 0x3FE62E0C17657753))
+  %v111 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v110, <8 x double> %v107, <8 x double> splat (double 0x3FF0000000000000))
+  %v112 = bitcast <8 x double> %v105 to <8 x i64>
+  %v113 = shl <8 x i64> %v112, splat (i64 52)
+  %v114 = bitcast <8 x double> %v111 to <8 x i64>
+  %v115 = add <8 x i64> %v114, %v113
+  %v116 = bitcast <8 x i64> %v115 to <8 x double>
+  %v117 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
+  %v118 = fmul <8 x double> %v62, splat (double 0x3F50624DD2F1A9FC)
+  %v119 = fcmp ogt <8 x double> %v117, %v118
+  %v120 = select <8 x i1> %v119, <8 x double> %v117, <8 x double> %v118
+  %v121 = fcmp ole <8 x double> %v84, splat (double 0x3CD203AF9EE75616)
+  %v122 = select <8 x i1> %v121, <8 x double> %v120, <8 x double> %v116
+  %v123 = fmul <8 x double> splat (double 0x4059000000000000), %v62
+  %v124 = fcmp olt <8 x double> %v123, %v122
+  %v125 = select <8 x i1> %v124, <8 x double> %v123, <8 x double> %v122
+  %v126 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
+  %v127 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v126, <8 x double> %v57)
+  %v128 = fcmp ogt <8 x double> %v125, %v127
+  %v129 = select <8 x i1> %v128, <8 x double> %v125, <8 x double> %v127
+  %v130 = fcmp olt <8 x double> %v129, %v31
+  %v131 = select <8 x i1> %v130, <8 x double> %v129, <8 x double> %v31
+  %v132 = fcmp ord <8 x double> %v82, %v82
+  %v133 = select <8 x i1> %v132, <8 x double> %v131, <8 x double> %v62
+  %v134 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
+  store <8 x double> %v133, ptr %v134, align 64
+  %v135 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
+  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v135, align 64
+  %v136 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
+  store <8 x double> splat (double 0x0000000000000000), ptr %v136, align 64
+  %v137 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
+  store <8 x double> splat (double 0x0000000000000000), ptr %v137, align 64
+  %v138 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
+  store <8 x double> splat (double 0x0000000000000000), ptr %v138, align 64
+  %v139 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
+  store <8 x double> splat (double 0x0000000000000000), ptr %v139, align 64
+  %v140 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
+  store <8 x double> splat (double 0x0000000000000000), ptr %v140, align 64
+  %v141 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v141, align 64
+  %v142 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  store <8 x double> %v7, ptr %v142, align 64
+  %v143 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v143, align 64
+  %v144 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
+  %v145 = load <8 x double>, ptr %v144, align 64
+  %v146 = fcmp olt <8 x double> %v2, %v145
+  %v147 = or <8 x i1> zeroinitializer, %v146
+  %v148 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
+  %v149 = load <8 x double>, ptr %v148, align 64
+  %v150 = fcmp ogt <8 x double> %v2, %v149
+  %v151 = or <8 x i1> %v147, %v150
+  %v152 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v2, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
+  %v153 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v27, <8 x double> splat (double 0x0000000000000000), <8 x double> %v152)
+  %v154 = fcmp uno <8 x double> %v153, %v153
+  %v155 = select <8 x i1> %v151, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
+  %v156 = select <8 x i1> %v154, <8 x double> splat (double 0x4008000000000000), <8 x double> %v155
+  %v157 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
+  store <8 x double> %v156, ptr %v157, align 64
+  %v158 = or <8 x i1> %v151, %v154
+  %v159 = bitcast <8 x i1> %v158 to i8
+  %v160 = zext i8 %v159 to i64
+  ret i64 %v160
 }
 
 define i64 @uq_rates(ptr noalias %lanes, ptr noalias readonly %settings) #0 {
@@ -218,7 +228,7 @@ entry:
   ret i64 %v41
 }
 
-define i64 @uq_step(ptr noalias %lanes, ptr noalias readonly %settings) #0 {
+define i64 @uq_step(ptr noalias %lanes, ptr noalias readonly %settings) #1 {
 entry:
   ; length of the attempt: proposed, stretched or halved towards the end of the segment
   %v1 = getelementptr inbounds <8 x double>, ptr %lanes, i64 0
@@ -234,21 +244,21 @@ entry:
   %v11 = fcmp oge <8 x double> %v10, %v7
   %v12 = fmul <8 x double> %v7, splat (double 0x3FE0000000000000)
   %v13 = select <8 x i1> %v11, <8 x double> %v12, <8 x double> %v4
-  %v14 = select <8 x i1> %v9, <8 x double> %v7, <8 x double> %v13
-  %v15 = fadd <8 x double> %v2, %v14
-  %v16 = select <8 x i1> %v9, <8 x double> %v6, <8 x double> %v15
+  %v14 = fadd <8 x double> %v2, %v13
+  %v15 = select <8 x i1> %v9, <8 x double> %v6, <8 x double> %v14
+  %v16 = fsub <8 x double> %v15, %v2
   ; stages
   %v17 = getelementptr inbounds <8 x double>, ptr %lanes, i64 25
   %v18 = load <8 x double>, ptr %v17, align 64
   %v19 = fmul <8 x double> splat (double 0x3FC999999999999A), %v18
   %v20 = getelementptr inbounds <8 x double>, ptr %lanes, i64 24
   %v21 = load <8 x double>, ptr %v20, align 64
-  %v22 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v19, <8 x double> %v21)
+  %v22 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v19, <8 x double> %v21)
   %v23 = getelementptr inbounds <8 x double>, ptr %lanes, i64 18
   %v24 = load <8 x double>, ptr %v23, align 64
   %v25 = getelementptr inbounds <8 x double>, ptr %lanes, i64 19
   %v26 = load <8 x double>, ptr %v25, align 64
-  %v27 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FC999999999999A), <8 x double> %v14, <8 x double> %v2)
+  %v27 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FC999999999999A), <8 x double> %v16, <8 x double> %v2)
   %v28 = getelementptr inbounds <8 x double>, ptr %lanes, i64 11
   %v29 = load <8 x double>, ptr %v28, align 64
   %v30 = fsub <8 x double> %v27, %v29
@@ -267,8 +277,8 @@ entry:
   %v43 = fdiv <8 x double> %v42, %v24
   %v44 = fmul <8 x double> splat (double 0x3FB3333333333333), %v18
   %v45 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FCCCCCCCCCCCCCD), <8 x double> %v43, <8 x double> %v44)
-  %v46 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v45, <8 x double> %v21)
-  %v47 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FD3333333333333), <8 x double> %v14, <8 x double> %v2)
+  %v46 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v45, <8 x double> %v21)
+  %v47 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FD3333333333333), <8 x double> %v16, <8 x double> %v2)
   %v48 = fsub <8 x double> %v47, %v29
   %v49 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v32, <8 x double> %v48, <8 x double> %v34)
   %v50 = fcmp ogt <8 x double> %v46, splat (double 0x0000000000000000)
@@ -282,8 +292,8 @@ entry:
   %v58 = fmul <8 x double> splat (double 0x3FEF49F49F49F49F), %v18
   %v59 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xC00DDDDDDDDDDDDE), <8 x double> %v43, <8 x double> %v58)
   %v60 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x400C71C71C71C71C), <8 x double> %v57, <8 x double> %v59)
-  %v61 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v60, <8 x double> %v21)
-  %v62 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FE999999999999A), <8 x double> %v14, <8 x double> %v2)
+  %v61 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v60, <8 x double> %v21)
+  %v62 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FE999999999999A), <8 x double> %v16, <8 x double> %v2)
   %v63 = fsub <8 x double> %v62, %v29
   %v64 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v32, <8 x double> %v63, <8 x double> %v34)
   %v65 = fcmp ogt <8 x double> %v61, splat (double 0x0000000000000000)
@@ -298,8 +308,8 @@ entry:
   %v74 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xC027310BD29520E4), <8 x double> %v43, <8 x double> %v73)
   %v75 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x4023A552363C5290), <8 x double> %v57, <8 x double> %v74)
   %v76 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFD29C9EBA1E3345), <8 x double> %v72, <8 x double> %v75)
-  %v77 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v76, <8 x double> %v21)
-  %v78 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FEC71C71C71C71C), <8 x double> %v14, <8 x double> %v2)
+  %v77 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v76, <8 x double> %v21)
+  %v78 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FEC71C71C71C71C), <8 x double> %v16, <8 x double> %v2)
   %v79 = fsub <8 x double> %v78, %v29
   %v80 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v32, <8 x double> %v79, <8 x double> %v34)
   %v81 = fcmp ogt <8 x double> %v77, splat (double 0x0000000000000000)
@@ -315,8 +325,8 @@ entry:
   %v91 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x4021D016A3721E8B), <8 x double> %v57, <8 x double> %v90)
   %v92 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FD1D1745D1745D1), <8 x double> %v72, <8 x double> %v91)
   %v93 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFD1818970D9CC2F), <8 x double> %v88, <8 x double> %v92)
-  %v94 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v93, <8 x double> %v21)
-  %v95 = fsub <8 x double> %v16, %v29
+  %v94 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v93, <8 x double> %v21)
+  %v95 = fsub <8 x double> %v15, %v29
   %v96 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v32, <8 x double> %v95, <8 x double> %v34)
   %v97 = fcmp ogt <8 x double> %v94, splat (double 0x0000000000000000)
   %v98 = select <8 x i1> %v97, <8 x double> %v94, <8 x double> splat (double 0x0000000000000000)
@@ -331,8 +341,8 @@ entry:
   %v107 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FE4D55555555555), <8 x double> %v72, <8 x double> %v106)
   %v108 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFD4A1CFB2B78C13), <8 x double> %v88, <8 x double> %v107)
   %v109 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FC0C30C30C30C31), <8 x double> %v104, <8 x double> %v108)
-  %v110 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v109, <8 x double> %v21)
-  %v111 = fsub <8 x double> %v16, %v29
+  %v110 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v109, <8 x double> %v21)
+  %v111 = fsub <8 x double> %v15, %v29
   %v112 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v32, <8 x double> %v111, <8 x double> %v34)
   %v113 = fcmp ogt <8 x double> %v110, splat (double 0x0000000000000000)
   %v114 = select <8 x i1> %v113, <8 x double> %v110, <8 x double> splat (double 0x0000000000000000)
@@ -349,7 +359,7 @@ entry:
   %v124 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v110)
   %v125 = fcmp ogt <8 x double> %v123, %v124
   %v126 = select <8 x i1> %v125, <8 x double> %v123, <8 x double> %v124
-  %v127 = getelementptr inbounds <8 x double>, ptr %settings, i64 7
+  %v127 = getelementptr inbounds <8 x double>, ptr %settings, i64 9
   %v128 = load <8 x double>, ptr %v127, align 64
   %v129 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v122, <8 x double> %v126, <8 x double> %v128)
   %v130 = fmul <8 x double> splat (double 0x3F54320FEDCBA987), %v18
@@ -358,7 +368,7 @@ entry:
   %v133 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFAA0AD1D2CA1858), <8 x double> %v88, <8 x double> %v132)
   %v134 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA5748A7BDAF0E2), <8 x double> %v104, <8 x double> %v133)
   %v135 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBF9999999999999A), <8 x double> %v120, <8 x double> %v134)
-  %v136 = fmul <8 x double> %v14, %v135
+  %v136 = fmul <8 x double> %v16, %v135
   %v137 = fdiv <8 x double> %v136, %v129
   %v138 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v137, <8 x double> %v137, <8 x double> splat (double 0x0000000000000000))
   %v139 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v110, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
@@ -415,7 +425,7 @@ entry:
   %v189 = bitcast <8 x double> %v186 to <8 x i64>
   %v190 = add <8 x i64> %v189, %v188
   %v191 = bitcast <8 x i64> %v190 to <8 x double>
-  %v192 = fmul <8 x double> %v14, %v191
+  %v192 = fmul <8 x double> %v16, %v191
   %v193 = fcmp oge <8 x double> %v191, splat (double 0x3FF0000000000000)
   %v194 = fcmp ogt <8 x double> %v4, %v192
   %v195 = and <8 x i1> %v193, %v194
@@ -427,7 +437,7 @@ entry:
   %v200 = fcmp ogt <8 x double> %v143, splat (double 0x0000000000000000)
   %v201 = xor <8 x i1> %v146, splat (i1 true)
   %v202 = and <8 x i1> %v200, %v201
-  %v203 = select <8 x i1> %v146, <8 x double> %v16, <8 x double> %v2
+  %v203 = select <8 x i1> %v146, <8 x double> %v15, <8 x double> %v2
   %v204 = getelementptr inbounds <8 x double>, ptr %lanes, i64 0
   store <8 x double> %v203, ptr %v204, align 64
   %v205 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
@@ -437,7 +447,7 @@ entry:
   store <8 x double> %v207, ptr %v208, align 64
   %v209 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
   %v210 = load <8 x double>, ptr %v209, align 64
-  %v211 = select <8 x i1> %v146, <8 x double> %v14, <8 x double> %v210
+  %v211 = select <8 x i1> %v146, <8 x double> %v16, <8 x double> %v210
   %v212 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
   store <8 x double> %v211, ptr %v212, align 64
   %v213 = select <8 x i1> %v146, <8 x double> %v199, <8 x double> %v166
@@ -484,11 +494,11 @@ entry:
   %v247 = and <8 x i1> %v245, %v246
   %v248 = or <8 x i1> %v240, %v244
   %v249 = and <8 x i1> %v247, %v248
-  %v250 = getelementptr inbounds <8 x double>, ptr %settings, i64 8
+  %v250 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
   %v251 = load <8 x double>, ptr %v250, align 64
   %v252 = fcmp olt <8 x double> %v110, %v251
   %v253 = or <8 x i1> zeroinitializer, %v252
-  %v254 = getelementptr inbounds <8 x double>, ptr %settings, i64 9
+  %v254 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
   %v255 = load <8 x double>, ptr %v254, align 64
   %v256 = fcmp ogt <8 x double> %v110, %v255
   %v257 = or <8 x i1> %v253, %v256
@@ -496,8 +506,8 @@ entry:
   %v259 = or <8 x i1> %v249, %v258
   %v260 = getelementptr inbounds <8 x double>, ptr %lanes, i64 3
   %v261 = load <8 x double>, ptr %v260, align 64
-  %v262 = fcmp olt <8 x double> %v261, %v16
-  %v263 = fcmp ole <8 x double> %v261, %v16
+  %v262 = fcmp olt <8 x double> %v261, %v15
+  %v263 = fcmp ole <8 x double> %v261, %v15
   %v264 = or <8 x i1> %v235, %v259
   %v265 = select <8 x i1> %v264, <8 x i1> %v262, <8 x i1> %v263
   %v266 = and <8 x i1> %v146, %v265
@@ -511,8 +521,8 @@ entry:
 curve:
   %v273 = fsub <8 x double> %v110, %v21
   %v274 = fneg <8 x double> %v273
-  %v275 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v18, <8 x double> %v274)
-  %v276 = fneg <8 x double> %v14
+  %v275 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v18, <8 x double> %v274)
+  %v276 = fneg <8 x double> %v16
   %v277 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v276, <8 x double> %v120, <8 x double> %v273)
   %v278 = fsub <8 x double> %v277, %v275
   %v279 = fmul <8 x double> splat (double 0xBFF208439215A046), %v18
@@ -521,7 +531,7 @@ curve:
   %v282 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x400C2CEAE0978C92), <8 x double> %v88, <8 x double> %v281)
   %v283 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFFC46C8B61F95E5), <8 x double> %v104, <8 x double> %v282)
   %v284 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x40030F4BDF0DC914), <8 x double> %v120, <8 x double> %v283)
-  %v285 = fmul <8 x double> %v14, %v284
+  %v285 = fmul <8 x double> %v16, %v284
   %v286 = getelementptr inbounds <8 x double>, ptr %lanes, i64 27
   store <8 x double> %v21, ptr %v286, align 64
   %v287 = getelementptr inbounds <8 x double>, ptr %lanes, i64 28
@@ -547,57 +557,64 @@ move:
   %v299 = select <8 x i1> %v298, <8 x double> %v296, <8 x double> %v297
   %v300 = getelementptr inbounds <8 x double>, ptr %lanes, i64 26
   store <8 x double> %v299, ptr %v300, align 64
+  %v301 = or i64 %v268, %v270
   br i1 %v272, label %observe, label %judge
 observe:
-  %v301 = or i64 %v268, %v270
   %v302 = bitcast <8 x i1> %v266 to i8
   %v303 = zext i8 %v302 to i64
-  call void @uq_observe(ptr %lanes, ptr %settings, i64 %v303, i64 %v301)
+  %v304 = call i64 @uq_observe(ptr %lanes, ptr %settings, i64 %v303, i64 %v301)
   br label %judge
 judge:
-  %v304 = bitcast <8 x i1> %v259 to i8
-  %v305 = icmp ne i8 %v304, 0
-  br i1 %v305, label %failure, label %done
+  %v305 = phi i64 [ 0, %move ], [ %v304, %observe ]
+  %v306 = trunc i64 %v305 to i8
+  %v307 = bitcast i8 %v306 to <8 x i1>
+  %v308 = or <8 x i1> %v258, %v307
+  %v309 = or <8 x i1> %v249, %v308
+  %v310 = bitcast <8 x i1> %v309 to i8
+  %v311 = zext i8 %v310 to i64
+  %v312 = bitcast <8 x i1> %v309 to i8
+  %v313 = icmp ne i8 %v312, 0
+  br i1 %v313, label %failure, label %done
 failure:
-  %v306 = fcmp ogt <8 x double> %v223, splat (double 0x3F50000000000000)
-  %v307 = select <8 x i1> %v306, <8 x double> splat (double 0x4008000000000000), <8 x double> splat (double 0x401C000000000000)
-  %v308 = fmul <8 x double> %v239, splat (double 0x40C3880000000000)
-  %v309 = getelementptr inbounds <8 x double>, ptr %settings, i64 3
-  %v310 = load <8 x double>, ptr %v309, align 64
-  %v311 = fmul <8 x double> %v291, %v292
-  %v312 = fcmp ogt <8 x double> %v311, splat (double 0x0000000000000000)
-  %v313 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v291)
-  %v314 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v292)
-  %v315 = fmul <8 x double> %v308, %v314
-  %v316 = fcmp ole <8 x double> %v313, %v315
-  %v317 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v291)
-  %v318 = fcmp ogt <8 x double> %v317, splat (double 0x5F138D352E5096AF)
-  %v319 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v291)
-  %v320 = fmul <8 x double> %v122, %v319
-  %v321 = fmul <8 x double> %v128, splat (double 0x412E848000000000)
-  %v322 = fcmp ogt <8 x double> %v320, %v321
-  %v323 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v291)
-  %v324 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v292)
-  %v325 = fmul <8 x double> %v310, %v324
-  %v326 = fcmp ole <8 x double> %v323, %v325
-  %v327 = and <8 x i1> %v322, %v326
-  %v328 = or <8 x i1> %v316, %v318
-  %v329 = or <8 x i1> %v328, %v327
-  %v330 = and <8 x i1> %v312, %v329
-  %v331 = or <8 x i1> zeroinitializer, %v330
-  %v332 = select <8 x i1> %v331, <8 x double> splat (double 0x4010000000000000), <8 x double> %v307
-  %v333 = select <8 x i1> %v240, <8 x double> %v332, <8 x double> splat (double 0x4014000000000000)
-  %v334 = select <8 x i1> %v258, <8 x double> splat (double 0x4000000000000000), <8 x double> %v333
-  %v335 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
-  store <8 x double> %v334, ptr %v335, align 64
+  %v314 = fcmp ogt <8 x double> %v223, splat (double 0x3F50000000000000)
+  %v315 = select <8 x i1> %v314, <8 x double> splat (double 0x4008000000000000), <8 x double> splat (double 0x401C000000000000)
+  %v316 = fmul <8 x double> %v239, splat (double 0x40C3880000000000)
+  %v317 = getelementptr inbounds <8 x double>, ptr %settings, i64 3
+  %v318 = load <8 x double>, ptr %v317, align 64
+  %v319 = fmul <8 x double> %v291, %v292
+  %v320 = fcmp ogt <8 x double> %v319, splat (double 0x0000000000000000)
+  %v321 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v291)
+  %v322 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v292)
+  %v323 = fmul <8 x double> %v316, %v322
+  %v324 = fcmp ole <8 x double> %v321, %v323
+  %v325 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v291)
+  %v326 = fcmp ogt <8 x double> %v325, splat (double 0x5F138D352E5096AF)
+  %v327 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v291)
+  %v328 = fmul <8 x double> %v122, %v327
+  %v329 = fmul <8 x double> %v128, splat (double 0x412E848000000000)
+  %v330 = fcmp ogt <8 x double> %v328, %v329
+  %v331 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v291)
+  %v332 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v292)
+  %v333 = fmul <8 x double> %v318, %v332
+  %v334 = fcmp ole <8 x double> %v331, %v333
+  %v335 = and <8 x i1> %v330, %v334
+  %v336 = or <8 x i1> %v324, %v326
+  %v337 = or <8 x i1> %v336, %v335
+  %v338 = and <8 x i1> %v320, %v337
+  %v339 = or <8 x i1> zeroinitializer, %v338
+  %v340 = select <8 x i1> %v339, <8 x double> splat (double 0x4010000000000000), <8 x double> %v315
+  %v341 = select <8 x i1> %v240, <8 x double> %v340, <8 x double> splat (double 0x4014000000000000)
+  %v342 = select <8 x i1> %v308, <8 x double> splat (double 0x4000000000000000), <8 x double> %v341
+  %v343 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
+  store <8 x double> %v342, ptr %v343, align 64
   br label %done
 done:
-  %v336 = shl i64 %v270, 8
-  %v337 = or i64 %v268, %v336
-  ret i64 %v337
+  %v344 = shl i64 %v311, 8
+  %v345 = or i64 %v268, %v344
+  ret i64 %v345
 }
 
-define void @uq_observe(ptr noalias %lanes, ptr noalias readonly %settings, i64 %due, i64 %strict) #0 {
+define i64 @uq_observe(ptr noalias %lanes, ptr noalias readonly %settings, i64 %due, i64 %strict) #0 {
 entry:
   %v1 = getelementptr inbounds <8 x double>, ptr %lanes, i64 0
   %v2 = load <8 x double>, ptr %v1, align 64
@@ -615,211 +632,267 @@ entry:
   %v14 = load <8 x i64>, ptr %v13, align 64
   br label %next
 next:
-  %due.now = phi <8 x i1> [ %v4, %entry ], [ %due.then, %next ]
-  %at.now = phi <8 x double> [ %v8, %entry ], [ %at.then, %next ]
-  %clock.now = phi <8 x i64> [ %v10, %entry ], [ %clock.then, %next ]
-  %place.now = phi <8 x i64> [ %v12, %entry ], [ %place.then, %next ]
-  %truth_place.now = phi <8 x i64> [ %v14, %entry ], [ %truth_place.then, %next ]
-  %v15 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  %due.now = phi <8 x i1> [ %v4, %entry ], [ %due.then, %values ]
+  %at.now = phi <8 x double> [ %v8, %entry ], [ %at.then, %values ]
+  %clock.now = phi <8 x i64> [ %v10, %entry ], [ %clock.then, %values ]
+  %place.now = phi <8 x i64> [ %v12, %entry ], [ %place.then, %values ]
+  %truth_place.now = phi <8 x i64> [ %v14, %entry ], [ %truth_place.then, %values ]
+  %strayed.now = phi <8 x i1> [ zeroinitializer, %entry ], [ %strayed.then, %values ]
+  %v15 = getelementptr inbounds <8 x double>, ptr %settings, i64 5
   %v16 = load <8 x double>, ptr %v15, align 64
-  %v17 = fsub <8 x double> %at.now, %v16
-  %v18 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
-  %v19 = load <8 x double>, ptr %v18, align 64
-  %v20 = fdiv <8 x double> %v17, %v19
-  %v21 = fsub <8 x double> splat (double 0x3FF0000000000000), %v20
-  %v22 = fcmp oge <8 x double> %at.now, %v2
-  %v23 = getelementptr inbounds <8 x double>, ptr %lanes, i64 21
+  %v17 = fcmp ogt <8 x double> %v16, splat (double 0x0000000000000000)
+  %v18 = bitcast <8 x i1> %v17 to i8
+  %v19 = icmp ne i8 %v18, 0
+  br i1 %v19, label %judge, label %values
+judge:
+  %v20 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  %v21 = load <8 x double>, ptr %v20, align 64
+  %v22 = fsub <8 x double> %at.now, %v21
+  %v23 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
   %v24 = load <8 x double>, ptr %v23, align 64
-  %v25 = getelementptr inbounds <8 x double>, ptr %lanes, i64 27
-  %v26 = load <8 x double>, ptr %v25, align 64
-  %v27 = getelementptr inbounds <8 x double>, ptr %lanes, i64 28
-  %v28 = load <8 x double>, ptr %v27, align 64
-  %v29 = getelementptr inbounds <8 x double>, ptr %lanes, i64 29
-  %v30 = load <8 x double>, ptr %v29, align 64
-  %v31 = getelementptr inbounds <8 x double>, ptr %lanes, i64 30
-  %v32 = load <8 x double>, ptr %v31, align 64
-  %v33 = getelementptr inbounds <8 x double>, ptr %lanes, i64 31
+  %v25 = fdiv <8 x double> %v22, %v24
+  %v26 = fsub <8 x double> splat (double 0x3FF0000000000000), %v25
+  %v27 = fcmp oge <8 x double> %at.now, %v2
+  %v28 = getelementptr inbounds <8 x double>, ptr %lanes, i64 31
+  %v29 = load <8 x double>, ptr %v28, align 64
+  %v30 = getelementptr inbounds <8 x double>, ptr %lanes, i64 30
+  %v31 = load <8 x double>, ptr %v30, align 64
+  %v32 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> %v29, <8 x double> %v31)
+  %v33 = getelementptr inbounds <8 x double>, ptr %lanes, i64 29
   %v34 = load <8 x double>, ptr %v33, align 64
-  %v35 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v21, <8 x double> %v34, <8 x double> %v32)
-  %v36 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v20, <8 x double> %v35, <8 x double> %v30)
-  %v37 = getelementptr inbounds <8 x double>, ptr %lanes, i64 24
-  %v38 = load <8 x double>, ptr %v37, align 64
-  %v39 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v21, <8 x double> %v36, <8 x double> %v28)
-  %v40 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v20, <8 x double> %v39, <8 x double> %v26)
-  %v41 = select <8 x i1> %v22, <8 x double> %v38, <8 x double> %v40
-  %v42 = getelementptr inbounds <8 x double>, ptr %lanes, i64 11
+  %v35 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v25, <8 x double> %v32, <8 x double> %v34)
+  %v36 = getelementptr inbounds <8 x double>, ptr %lanes, i64 28
+  %v37 = load <8 x double>, ptr %v36, align 64
+  %v38 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> %v35, <8 x double> %v37)
+  %v39 = getelementptr inbounds <8 x double>, ptr %lanes, i64 27
+  %v40 = load <8 x double>, ptr %v39, align 64
+  %v41 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v25, <8 x double> %v38, <8 x double> %v40)
+  %v42 = getelementptr inbounds <8 x double>, ptr %lanes, i64 24
   %v43 = load <8 x double>, ptr %v42, align 64
-  %v44 = fsub <8 x double> %at.now, %v43
-  %v45 = getelementptr inbounds <8 x double>, ptr %lanes, i64 23
+  %v44 = select <8 x i1> %v27, <8 x double> %v43, <8 x double> %v41
+  %v45 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
   %v46 = load <8 x double>, ptr %v45, align 64
-  %v47 = getelementptr inbounds <8 x double>, ptr %lanes, i64 22
-  %v48 = load <8 x double>, ptr %v47, align 64
-  %v49 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v46, <8 x double> %v44, <8 x double> %v48)
-  %v50 = fcmp ogt <8 x double> %v41, %v24
-  %v51 = getelementptr inbounds <8 x i64>, ptr %settings, i64 6
-  %v52 = load <8 x i64>, ptr %v51, align 64
-  %v53 = getelementptr inbounds <8 x i64>, ptr %settings, i64 5
-  %v54 = load <8 x i64>, ptr %v53, align 64
-  %v55 = select <8 x i1> %due.now, <8 x i64> %truth_place.now, <8 x i64> %v52
-  %v56 = zext <8 x i1> %v50 to <8 x i8>
-  %v57 = extractelement <8 x i64> %v55, i64 0
-  %v58 = extractelement <8 x i64> %v55, i64 1
-  %v59 = extractelement <8 x i64> %v55, i64 2
-  %v60 = extractelement <8 x i64> %v55, i64 3
-  %v61 = extractelement <8 x i64> %v55, i64 4
-  %v62 = extractelement <8 x i64> %v55, i64 5
-  %v63 = extractelement <8 x i64> %v55, i64 6
-  %v64 = extractelement <8 x i64> %v55, i64 7
-  %v65 = inttoptr i64 %v57 to ptr
-  %v66 = inttoptr i64 %v58 to ptr
-  %v67 = inttoptr i64 %v59 to ptr
-  %v68 = inttoptr i64 %v60 to ptr
-  %v69 = inttoptr i64 %v61 to ptr
-  %v70 = inttoptr i64 %v62 to ptr
-  %v71 = inttoptr i64 %v63 to ptr
-  %v72 = inttoptr i64 %v64 to ptr
-  %v73 = extractelement <8 x i8> %v56, i64 0
-  store i8 %v73, ptr %v65, align 1
-  %v74 = extractelement <8 x i8> %v56, i64 1
-  store i8 %v74, ptr %v66, align 1
-  %v75 = extractelement <8 x i8> %v56, i64 2
-  store i8 %v75, ptr %v67, align 1
-  %v76 = extractelement <8 x i8> %v56, i64 3
-  store i8 %v76, ptr %v68, align 1
-  %v77 = extractelement <8 x i8> %v56, i64 4
-  store i8 %v77, ptr %v69, align 1
-  %v78 = extractelement <8 x i8> %v56, i64 5
-  store i8 %v78, ptr %v70, align 1
-  %v79 = extractelement <8 x i8> %v56, i64 6
-  store i8 %v79, ptr %v71, align 1
-  %v80 = extractelement <8 x i8> %v56, i64 7
-  store i8 %v80, ptr %v72, align 1
-  %v81 = add <8 x i64> %truth_place.now, %v54
-  %v82 = getelementptr inbounds <8 x i64>, ptr %settings, i64 4
-  %v83 = load <8 x i64>, ptr %v82, align 64
-  %v84 = select <8 x i1> %due.now, <8 x i64> %place.now, <8 x i64> %v52
-  %v85 = extractelement <8 x i64> %v84, i64 0
-  %v86 = extractelement <8 x i64> %v84, i64 1
-  %v87 = extractelement <8 x i64> %v84, i64 2
-  %v88 = extractelement <8 x i64> %v84, i64 3
-  %v89 = extractelement <8 x i64> %v84, i64 4
-  %v90 = extractelement <8 x i64> %v84, i64 5
-  %v91 = extractelement <8 x i64> %v84, i64 6
-  %v92 = extractelement <8 x i64> %v84, i64 7
-  %v93 = inttoptr i64 %v85 to ptr
-  %v94 = inttoptr i64 %v86 to ptr
-  %v95 = inttoptr i64 %v87 to ptr
-  %v96 = inttoptr i64 %v88 to ptr
-  %v97 = inttoptr i64 %v89 to ptr
-  %v98 = inttoptr i64 %v90 to ptr
-  %v99 = inttoptr i64 %v91 to ptr
-  %v100 = inttoptr i64 %v92 to ptr
-  %v101 = extractelement <8 x double> %v41, i64 0
-  store double %v101, ptr %v93, align 8
-  %v102 = extractelement <8 x double> %v41, i64 1
-  store double %v102, ptr %v94, align 8
-  %v103 = extractelement <8 x double> %v41, i64 2
-  store double %v103, ptr %v95, align 8
-  %v104 = extractelement <8 x double> %v41, i64 3
-  store double %v104, ptr %v96, align 8
-  %v105 = extractelement <8 x double> %v41, i64 4
-  store double %v105, ptr %v97, align 8
-  %v106 = extractelement <8 x double> %v41, i64 5
-  store double %v106, ptr %v98, align 8
-  %v107 = extractelement <8 x double> %v41, i64 6
-  store double %v107, ptr %v99, align 8
-  %v108 = extractelement <8 x double> %v41, i64 7
-  store double %v108, ptr %v100, align 8
-  %v109 = add <8 x i64> %place.now, %v83
-  %v110 = select <8 x i1> %due.now, <8 x i64> %v109, <8 x i64> %v52
-  %v111 = extractelement <8 x i64> %v110, i64 0
-  %v112 = extractelement <8 x i64> %v110, i64 1
-  %v113 = extractelement <8 x i64> %v110, i64 2
-  %v114 = extractelement <8 x i64> %v110, i64 3
-  %v115 = extractelement <8 x i64> %v110, i64 4
-  %v116 = extractelement <8 x i64> %v110, i64 5
-  %v117 = extractelement <8 x i64> %v110, i64 6
-  %v118 = extractelement <8 x i64> %v110, i64 7
-  %v119 = inttoptr i64 %v111 to ptr
-  %v120 = inttoptr i64 %v112 to ptr
-  %v121 = inttoptr i64 %v113 to ptr
-  %v122 = inttoptr i64 %v114 to ptr
-  %v123 = inttoptr i64 %v115 to ptr
-  %v124 = inttoptr i64 %v116 to ptr
-  %v125 = inttoptr i64 %v117 to ptr
-  %v126 = inttoptr i64 %v118 to ptr
-  %v127 = extractelement <8 x double> %v49, i64 0
-  store double %v127, ptr %v119, align 8
-  %v128 = extractelement <8 x double> %v49, i64 1
-  store double %v128, ptr %v120, align 8
-  %v129 = extractelement <8 x double> %v49, i64 2
-  store double %v129, ptr %v121, align 8
-  %v130 = extractelement <8 x double> %v49, i64 3
-  store double %v130, ptr %v122, align 8
-  %v131 = extractelement <8 x double> %v49, i64 4
-  store double %v131, ptr %v123, align 8
-  %v132 = extractelement <8 x double> %v49, i64 5
-  store double %v132, ptr %v124, align 8
-  %v133 = extractelement <8 x double> %v49, i64 6
-  store double %v133, ptr %v125, align 8
-  %v134 = extractelement <8 x double> %v49, i64 7
-  store double %v134, ptr %v126, align 8
-  %v135 = add <8 x i64> %v109, %v83
-  %v136 = select <8 x i1> %due.now, <8 x i64> splat (i64 8), <8 x i64> zeroinitializer
-  %clock.then = add <8 x i64> %clock.now, %v136
-  %place.then = add <8 x i64> %place.now, %v136
-  %v137 = select <8 x i1> %due.now, <8 x i64> splat (i64 1), <8 x i64> zeroinitializer
-  %truth_place.then = add <8 x i64> %truth_place.now, %v137
-  %v138 = extractelement <8 x i64> %clock.then, i64 0
-  %v139 = extractelement <8 x i64> %clock.then, i64 1
-  %v140 = extractelement <8 x i64> %clock.then, i64 2
-  %v141 = extractelement <8 x i64> %clock.then, i64 3
-  %v142 = extractelement <8 x i64> %clock.then, i64 4
-  %v143 = extractelement <8 x i64> %clock.then, i64 5
-  %v144 = extractelement <8 x i64> %clock.then, i64 6
-  %v145 = extractelement <8 x i64> %clock.then, i64 7
-  %v146 = inttoptr i64 %v138 to ptr
-  %v147 = inttoptr i64 %v139 to ptr
-  %v148 = inttoptr i64 %v140 to ptr
-  %v149 = inttoptr i64 %v141 to ptr
-  %v150 = inttoptr i64 %v142 to ptr
-  %v151 = inttoptr i64 %v143 to ptr
-  %v152 = inttoptr i64 %v144 to ptr
-  %v153 = inttoptr i64 %v145 to ptr
-  %v154 = load double, ptr %v146, align 8
-  %v155 = insertelement <8 x double> poison, double %v154, i64 0
-  %v156 = load double, ptr %v147, align 8
-  %v157 = insertelement <8 x double> %v155, double %v156, i64 1
-  %v158 = load double, ptr %v148, align 8
-  %v159 = insertelement <8 x double> %v157, double %v158, i64 2
-  %v160 = load double, ptr %v149, align 8
-  %v161 = insertelement <8 x double> %v159, double %v160, i64 3
-  %v162 = load double, ptr %v150, align 8
-  %v163 = insertelement <8 x double> %v161, double %v162, i64 4
-  %v164 = load double, ptr %v151, align 8
-  %v165 = insertelement <8 x double> %v163, double %v164, i64 5
-  %v166 = load double, ptr %v152, align 8
-  %v167 = insertelement <8 x double> %v165, double %v166, i64 6
-  %v168 = load double, ptr %v153, align 8
-  %v169 = insertelement <8 x double> %v167, double %v168, i64 7
-  %at.then = select <8 x i1> %due.now, <8 x double> %v169, <8 x double> %at.now
-  %v170 = fcmp olt <8 x double> %at.then, %v2
-  %v171 = fcmp ole <8 x double> %at.then, %v2
-  %v172 = select <8 x i1> %v6, <8 x i1> %v170, <8 x i1> %v171
-  %due.then = and <8 x i1> %due.now, %v172
-  %v173 = bitcast <8 x i1> %due.then to i8
-  %v174 = icmp ne i8 %v173, 0
-  br i1 %v174, label %next, label %done
+  %v47 = fcmp olt <8 x double> %v44, %v46
+  %v48 = or <8 x i1> zeroinitializer, %v47
+  %v49 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
+  %v50 = load <8 x double>, ptr %v49, align 64
+  %v51 = fcmp ogt <8 x double> %v44, %v50
+  %v52 = or <8 x i1> %v48, %v51
+  %v53 = and <8 x i1> %due.now, %v52
+  %v54 = xor <8 x i1> %v53, splat (i1 true)
+  %v55 = and <8 x i1> %due.now, %v54
+  %v56 = or <8 x i1> %strayed.now, %v53
+  br label %values
+values:
+  %due.good = phi <8 x i1> [ %due.now, %next ], [ %v55, %judge ]
+  %strayed.then = phi <8 x i1> [ %strayed.now, %next ], [ %v56, %judge ]
+  %v57 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  %v58 = load <8 x double>, ptr %v57, align 64
+  %v59 = fsub <8 x double> %at.now, %v58
+  %v60 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
+  %v61 = load <8 x double>, ptr %v60, align 64
+  %v62 = fdiv <8 x double> %v59, %v61
+  %v63 = fsub <8 x double> splat (double 0x3FF0000000000000), %v62
+  %v64 = fcmp oge <8 x double> %at.now, %v2
+  %v65 = getelementptr inbounds <8 x double>, ptr %lanes, i64 21
+  %v66 = load <8 x double>, ptr %v65, align 64
+  %v67 = getelementptr inbounds <8 x double>, ptr %lanes, i64 31
+  %v68 = load <8 x double>, ptr %v67, align 64
+  %v69 = getelementptr inbounds <8 x double>, ptr %lanes, i64 30
+  %v70 = load <8 x double>, ptr %v69, align 64
+  %v71 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v63, <8 x double> %v68, <8 x double> %v70)
+  %v72 = getelementptr inbounds <8 x double>, ptr %lanes, i64 29
+  %v73 = load <8 x double>, ptr %v72, align 64
+  %v74 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v62, <8 x double> %v71, <8 x double> %v73)
+  %v75 = getelementptr inbounds <8 x double>, ptr %lanes, i64 28
+  %v76 = load <8 x double>, ptr %v75, align 64
+  %v77 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v63, <8 x double> %v74, <8 x double> %v76)
+  %v78 = getelementptr inbounds <8 x double>, ptr %lanes, i64 27
+  %v79 = load <8 x double>, ptr %v78, align 64
+  %v80 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v62, <8 x double> %v77, <8 x double> %v79)
+  %v81 = getelementptr inbounds <8 x double>, ptr %lanes, i64 24
+  %v82 = load <8 x double>, ptr %v81, align 64
+  %v83 = select <8 x i1> %v64, <8 x double> %v82, <8 x double> %v80
+  %v84 = getelementptr inbounds <8 x double>, ptr %lanes, i64 11
+  %v85 = load <8 x double>, ptr %v84, align 64
+  %v86 = fsub <8 x double> %at.now, %v85
+  %v87 = getelementptr inbounds <8 x double>, ptr %lanes, i64 23
+  %v88 = load <8 x double>, ptr %v87, align 64
+  %v89 = getelementptr inbounds <8 x double>, ptr %lanes, i64 22
+  %v90 = load <8 x double>, ptr %v89, align 64
+  %v91 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v88, <8 x double> %v86, <8 x double> %v90)
+  %v92 = fcmp uno <8 x double> %v83, %v66
+  %v93 = fcmp ogt <8 x double> %v83, %v66
+  %v94 = getelementptr inbounds <8 x i64>, ptr %settings, i64 8
+  %v95 = load <8 x i64>, ptr %v94, align 64
+  %v96 = getelementptr inbounds <8 x i64>, ptr %settings, i64 7
+  %v97 = load <8 x i64>, ptr %v96, align 64
+  %v98 = select <8 x i1> %due.good, <8 x i64> %truth_place.now, <8 x i64> %v95
+  %v99 = zext <8 x i1> %v93 to <8 x i8>
+  %v100 = select <8 x i1> %v92, <8 x i8> splat (i8 2), <8 x i8> %v99
+  %v101 = extractelement <8 x i64> %v98, i64 0
+  %v102 = extractelement <8 x i64> %v98, i64 1
+  %v103 = extractelement <8 x i64> %v98, i64 2
+  %v104 = extractelement <8 x i64> %v98, i64 3
+  %v105 = extractelement <8 x i64> %v98, i64 4
+  %v106 = extractelement <8 x i64> %v98, i64 5
+  %v107 = extractelement <8 x i64> %v98, i64 6
+  %v108 = extractelement <8 x i64> %v98, i64 7
+  %v109 = inttoptr i64 %v101 to ptr
+  %v110 = inttoptr i64 %v102 to ptr
+  %v111 = inttoptr i64 %v103 to ptr
+  %v112 = inttoptr i64 %v104 to ptr
+  %v113 = inttoptr i64 %v105 to ptr
+  %v114 = inttoptr i64 %v106 to ptr
+  %v115 = inttoptr i64 %v107 to ptr
+  %v116 = inttoptr i64 %v108 to ptr
+  %v117 = extractelement <8 x i8> %v100, i64 0
+  store i8 %v117, ptr %v109, align 1
+  %v118 = extractelement <8 x i8> %v100, i64 1
+  store i8 %v118, ptr %v110, align 1
+  %v119 = extractelement <8 x i8> %v100, i64 2
+  store i8 %v119, ptr %v111, align 1
+  %v120 = extractelement <8 x i8> %v100, i64 3
+  store i8 %v120, ptr %v112, align 1
+  %v121 = extractelement <8 x i8> %v100, i64 4
+  store i8 %v121, ptr %v113, align 1
+  %v122 = extractelement <8 x i8> %v100, i64 5
+  store i8 %v122, ptr %v114, align 1
+  %v123 = extractelement <8 x i8> %v100, i64 6
+  store i8 %v123, ptr %v115, align 1
+  %v124 = extractelement <8 x i8> %v100, i64 7
+  store i8 %v124, ptr %v116, align 1
+  %v125 = add <8 x i64> %truth_place.now, %v97
+  %v126 = getelementptr inbounds <8 x i64>, ptr %settings, i64 6
+  %v127 = load <8 x i64>, ptr %v126, align 64
+  %v128 = select <8 x i1> %due.good, <8 x i64> %place.now, <8 x i64> %v95
+  %v129 = extractelement <8 x i64> %v128, i64 0
+  %v130 = extractelement <8 x i64> %v128, i64 1
+  %v131 = extractelement <8 x i64> %v128, i64 2
+  %v132 = extractelement <8 x i64> %v128, i64 3
+  %v133 = extractelement <8 x i64> %v128, i64 4
+  %v134 = extractelement <8 x i64> %v128, i64 5
+  %v135 = extractelement <8 x i64> %v128, i64 6
+  %v136 = extractelement <8 x i64> %v128, i64 7
+  %v137 = inttoptr i64 %v129 to ptr
+  %v138 = inttoptr i64 %v130 to ptr
+  %v139 = inttoptr i64 %v131 to ptr
+  %v140 = inttoptr i64 %v132 to ptr
+  %v141 = inttoptr i64 %v133 to ptr
+  %v142 = inttoptr i64 %v134 to ptr
+  %v143 = inttoptr i64 %v135 to ptr
+  %v144 = inttoptr i64 %v136 to ptr
+  %v145 = extractelement <8 x double> %v83, i64 0
+  store double %v145, ptr %v137, align 8
+  %v146 = extractelement <8 x double> %v83, i64 1
+  store double %v146, ptr %v138, align 8
+  %v147 = extractelement <8 x double> %v83, i64 2
+  store double %v147, ptr %v139, align 8
+  %v148 = extractelement <8 x double> %v83, i64 3
+  store double %v148, ptr %v140, align 8
+  %v149 = extractelement <8 x double> %v83, i64 4
+  store double %v149, ptr %v141, align 8
+  %v150 = extractelement <8 x double> %v83, i64 5
+  store double %v150, ptr %v142, align 8
+  %v151 = extractelement <8 x double> %v83, i64 6
+  store double %v151, ptr %v143, align 8
+  %v152 = extractelement <8 x double> %v83, i64 7
+  store double %v152, ptr %v144, align 8
+  %v153 = add <8 x i64> %place.now, %v127
+  %v154 = select <8 x i1> %due.good, <8 x i64> %v153, <8 x i64> %v95
+  %v155 = extractelement <8 x i64> %v154, i64 0
+  %v156 = extractelement <8 x i64> %v154, i64 1
+  %v157 = extractelement <8 x i64> %v154, i64 2
+  %v158 = extractelement <8 x i64> %v154, i64 3
+  %v159 = extractelement <8 x i64> %v154, i64 4
+  %v160 = extractelement <8 x i64> %v154, i64 5
+  %v161 = extractelement <8 x i64> %v154, i64 6
+  %v162 = extractelement <8 x i64> %v154, i64 7
+  %v163 = inttoptr i64 %v155 to ptr
+  %v164 = inttoptr i64 %v156 to ptr
+  %v165 = inttoptr i64 %v157 to ptr
+  %v166 = inttoptr i64 %v158 to ptr
+  %v167 = inttoptr i64 %v159 to ptr
+  %v168 = inttoptr i64 %v160 to ptr
+  %v169 = inttoptr i64 %v161 to ptr
+  %v170 = inttoptr i64 %v162 to ptr
+  %v171 = extractelement <8 x double> %v91, i64 0
+  store double %v171, ptr %v163, align 8
+  %v172 = extractelement <8 x double> %v91, i64 1
+  store double %v172, ptr %v164, align 8
+  %v173 = extractelement <8 x double> %v91, i64 2
+  store double %v173, ptr %v165, align 8
+  %v174 = extractelement <8 x double> %v91, i64 3
+  store double %v174, ptr %v166, align 8
+  %v175 = extractelement <8 x double> %v91, i64 4
+  store double %v175, ptr %v167, align 8
+  %v176 = extractelement <8 x double> %v91, i64 5
+  store double %v176, ptr %v168, align 8
+  %v177 = extractelement <8 x double> %v91, i64 6
+  store double %v177, ptr %v169, align 8
+  %v178 = extractelement <8 x double> %v91, i64 7
+  store double %v178, ptr %v170, align 8
+  %v179 = add <8 x i64> %v153, %v127
+  %v180 = select <8 x i1> %due.good, <8 x i64> splat (i64 8), <8 x i64> zeroinitializer
+  %clock.then = add <8 x i64> %clock.now, %v180
+  %place.then = add <8 x i64> %place.now, %v180
+  %v181 = select <8 x i1> %due.good, <8 x i64> splat (i64 1), <8 x i64> zeroinitializer
+  %truth_place.then = add <8 x i64> %truth_place.now, %v181
+  %v182 = extractelement <8 x i64> %clock.then, i64 0
+  %v183 = extractelement <8 x i64> %clock.then, i64 1
+  %v184 = extractelement <8 x i64> %clock.then, i64 2
+  %v185 = extractelement <8 x i64> %clock.then, i64 3
+  %v186 = extractelement <8 x i64> %clock.then, i64 4
+  %v187 = extractelement <8 x i64> %clock.then, i64 5
+  %v188 = extractelement <8 x i64> %clock.then, i64 6
+  %v189 = extractelement <8 x i64> %clock.then, i64 7
+  %v190 = inttoptr i64 %v182 to ptr
+  %v191 = inttoptr i64 %v183 to ptr
+  %v192 = inttoptr i64 %v184 to ptr
+  %v193 = inttoptr i64 %v185 to ptr
+  %v194 = inttoptr i64 %v186 to ptr
+  %v195 = inttoptr i64 %v187 to ptr
+  %v196 = inttoptr i64 %v188 to ptr
+  %v197 = inttoptr i64 %v189 to ptr
+  %v198 = load double, ptr %v190, align 8
+  %v199 = insertelement <8 x double> poison, double %v198, i64 0
+  %v200 = load double, ptr %v191, align 8
+  %v201 = insertelement <8 x double> %v199, double %v200, i64 1
+  %v202 = load double, ptr %v192, align 8
+  %v203 = insertelement <8 x double> %v201, double %v202, i64 2
+  %v204 = load double, ptr %v193, align 8
+  %v205 = insertelement <8 x double> %v203, double %v204, i64 3
+  %v206 = load double, ptr %v194, align 8
+  %v207 = insertelement <8 x double> %v205, double %v206, i64 4
+  %v208 = load double, ptr %v195, align 8
+  %v209 = insertelement <8 x double> %v207, double %v208, i64 5
+  %v210 = load double, ptr %v196, align 8
+  %v211 = insertelement <8 x double> %v209, double %v210, i64 6
+  %v212 = load double, ptr %v197, align 8
+  %v213 = insertelement <8 x double> %v211, double %v212, i64 7
+  %at.then = select <8 x i1> %due.good, <8 x double> %v213, <8 x double> %at.now
+  %v214 = fcmp olt <8 x double> %at.then, %v2
+  %v215 = fcmp ole <8 x double> %at.then, %v2
+  %v216 = select <8 x i1> %v6, <8 x i1> %v214, <8 x i1> %v215
+  %due.then = and <8 x i1> %due.good, %v216
+  %v217 = bitcast <8 x i1> %due.then to i8
+  %v218 = icmp ne i8 %v217, 0
+  br i1 %v218, label %next, label %done
 done:
-  %v175 = getelementptr inbounds <8 x double>, ptr %lanes, i64 3
-  store <8 x double> %at.then, ptr %v175, align 64
-  %v176 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 15
-  store <8 x i64> %clock.then, ptr %v176, align 64
-  %v177 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 16
-  store <8 x i64> %place.then, ptr %v177, align 64
-  %v178 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 17
-  store <8 x i64> %truth_place.then, ptr %v178, align 64
-  ret void
+  %v219 = getelementptr inbounds <8 x double>, ptr %lanes, i64 3
+  store <8 x double> %at.then, ptr %v219, align 64
+  %v220 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 15
+  store <8 x i64> %clock.then, ptr %v220, align 64
+  %v221 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 16
+  store <8 x i64> %place.then, ptr %v221, align 64
+  %v222 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 17
+  store <8 x i64> %truth_place.then, ptr %v222, align 64
+  %v223 = select <8 x i1> %strayed.then, <8 x double> %at.then, <8 x double> %v2
+  %v224 = getelementptr inbounds <8 x double>, ptr %lanes, i64 0
+  store <8 x double> %v223, ptr %v224, align 64
+  %v225 = bitcast <8 x i1> %strayed.then to i8
+  %v226 = zext i8 %v225 to i64
+  ret i64 %v226
 }
 
 define void @uq_outcomes(ptr noalias readonly %given, ptr noalias %taken, i64 %groups) #0 {
@@ -872,3 +945,4 @@ declare <8 x double> @llvm.fma.v8f64(<8 x double>, <8 x double>, <8 x double>)
 declare <8 x double> @llvm.sqrt.v8f64(<8 x double>)
 
 attributes #0 = { nounwind }
+attributes #1 = { nounwind alignstack=64 }

@@ -46,13 +46,13 @@ entry:
   %v35 = getelementptr inbounds <8 x double>, ptr %settings, i64 0
   %v36 = load <8 x double>, ptr %v35, align 64
   %v37 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v4)
-  %v38 = getelementptr inbounds <8 x double>, ptr %settings, i64 7
+  %v38 = getelementptr inbounds <8 x double>, ptr %settings, i64 9
   %v39 = load <8 x double>, ptr %v38, align 64
   %v40 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v37, <8 x double> %v39)
   %v41 = fdiv <8 x double> %v4, %v40
   %v42 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v41, <8 x double> %v41, <8 x double> splat (double 0x0000000000000000))
   %v43 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v6)
-  %v44 = getelementptr inbounds <8 x double>, ptr %settings, i64 8
+  %v44 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
   %v45 = load <8 x double>, ptr %v44, align 64
   %v46 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v43, <8 x double> %v45)
   %v47 = fdiv <8 x double> %v6, %v46
@@ -76,129 +76,139 @@ entry:
   %v65 = fmul <8 x double> splat (double 0x3F847AE147AE147B), %v50
   %v66 = fdiv <8 x double> %v65, %v60
   %v67 = select <8 x i1> %v63, <8 x double> %v64, <8 x double> %v66
-  %v68 = fcmp olt <8 x double> %v67, %v34
-  %v69 = select <8 x i1> %v68, <8 x double> %v67, <8 x double> %v34
-  %v70 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v69, <8 x double> %v26, <8 x double> %v4)
-  %v71 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v69, <8 x double> %v29, <8 x double> %v6)
-  %v72 = fmul <8 x double> %v18, %v70
-  %v73 = fmul <8 x double> %v20, %v70
-  %v74 = fneg <8 x double> %v73
-  %v75 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v74, <8 x double> %v71, <8 x double> %v72)
-  %v76 = fmul <8 x double> %v7, %v71
-  %v77 = fmul <8 x double> %v22, %v70
-  %v78 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v77, <8 x double> %v71, <8 x double> %v76)
-  %v79 = fsub <8 x double> %v75, %v26
-  %v80 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v4)
-  %v81 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v80, <8 x double> %v39)
-  %v82 = fdiv <8 x double> %v79, %v81
-  %v83 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v82, <8 x double> %v82, <8 x double> splat (double 0x0000000000000000))
-  %v84 = fsub <8 x double> %v78, %v29
-  %v85 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v6)
-  %v86 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v85, <8 x double> %v45)
-  %v87 = fdiv <8 x double> %v84, %v86
-  %v88 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v87, <8 x double> %v87, <8 x double> %v83)
-  %v89 = fmul <8 x double> %v88, splat (double 0x3FE0000000000000)
-  %v90 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v89)
-  %v91 = fdiv <8 x double> %v90, %v69
-  %v92 = fcmp ogt <8 x double> %v60, %v91
-  %v93 = select <8 x i1> %v92, <8 x double> %v60, <8 x double> %v91
-  %v94 = fcmp olt <8 x double> %v93, splat (double 0x73D658E3AB795204)
-  %v95 = select <8 x i1> %v94, <8 x double> %v93, <8 x double> splat (double 0x73D658E3AB795204)
-  %v96 = fcmp ogt <8 x double> %v95, splat (double 0x0C06E93F5DA2824C)
-  %v97 = select <8 x i1> %v96, <8 x double> %v95, <8 x double> splat (double 0x0C06E93F5DA2824C)
-  %v98 = bitcast <8 x double> %v97 to <8 x i64>
-  %v99 = lshr <8 x i64> %v98, splat (i64 52)
-  %v100 = or <8 x i64> %v99, splat (i64 4841369599423283200)
-  %v101 = bitcast <8 x i64> %v100 to <8 x double>
-  %v102 = fsub <8 x double> %v101, splat (double 0x43300000000003FF)
-  %v103 = and <8 x i64> %v98, splat (i64 4503599627370495)
-  %v104 = or <8 x i64> %v103, splat (i64 4607182418800017408)
-  %v105 = bitcast <8 x i64> %v104 to <8 x double>
-  %v106 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v105, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
-  %v107 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v106, <8 x double> %v105, <8 x double> splat (double 0x3FF96E7C9A8551E4))
-  %v108 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v107, <8 x double> %v105, <8 x double> splat (double 0xC00BEB4578B01506))
-  %v109 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v108, <8 x double> %v105, <8 x double> splat (double 0x401431010187BF7D))
-  %v110 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v109, <8 x double> %v105, <8 x double> splat (double 0xC0064DAC40654ADD))
-  %v111 = fadd <8 x double> %v102, %v110
-  %v112 = fmul <8 x double> %v111, splat (double 0xBFC999999999999A)
-  %v113 = fadd <8 x double> %v112, splat (double 0xBFF542A5A12E1C5A)
-  %v114 = fadd <8 x double> %v113, splat (double 0x4338000000000000)
-  %v115 = fsub <8 x double> %v114, splat (double 0x4338000000000000)
-  %v116 = fsub <8 x double> %v113, %v115
-  %v117 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v116, <8 x double> splat (double 0x3FACA1CEF240FA9C))
-  %v118 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v117, <8 x double> %v116, <8 x double> splat (double 0x3FCEBFA4C61D8623))
-  %v119 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v118, <8 x double> %v116, <8 x double> splat (double 0x3FE62E0C17657753))
-  %v120 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v119, <8 x double> %v116, <8 x double> splat (double 0x3FF0000000000000))
-  %v121 = bitcast <8 x double> %v114 to <8 x i64>
-  %v122 = shl <8 x i64> %v121, splat (i64 52)
-  %v123 = bitcast <8 x double> %v120 to <8 x i64>
-  %v124 = add <8 x i64> %v123, %v122
-  %v125 = bitcast <8 x i64> %v124 to <8 x double>
-  %v126 = fmul <8 x double> %v34, splat (double 0x3EB0C6F7A0B5ED8D)
-  %v127 = fmul <8 x double> %v69, splat (double 0x3F50624DD2F1A9FC)
-  %v128 = fcmp ogt <8 x double> %v126, %v127
-  %v129 = select <8 x i1> %v128, <8 x double> %v126, <8 x double> %v127
-  %v130 = fcmp ole <8 x double> %v93, splat (double 0x3CD203AF9EE75616)
-  %v131 = select <8 x i1> %v130, <8 x double> %v129, <8 x double> %v125
-  %v132 = fmul <8 x double> splat (double 0x4059000000000000), %v69
-  %v133 = fcmp olt <8 x double> %v132, %v131
-  %v134 = select <8 x i1> %v133, <8 x double> %v132, <8 x double> %v131
-  %v135 = fcmp olt <8 x double> %v134, %v34
-  %v136 = select <8 x i1> %v135, <8 x double> %v134, <8 x double> %v34
-  %v137 = fcmp ord <8 x double> %v91, %v91
-  %v138 = select <8 x i1> %v137, <8 x double> %v136, <8 x double> %v69
-  %v139 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
-  store <8 x double> %v138, ptr %v139, align 64
-  %v140 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
-  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v140, align 64
-  %v141 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
-  store <8 x double> splat (double 0x0000000000000000), ptr %v141, align 64
-  %v142 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
-  store <8 x double> splat (double 0x0000000000000000), ptr %v142, align 64
-  %v143 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
-  store <8 x double> splat (double 0x0000000000000000), ptr %v143, align 64
-  %v144 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
-  store <8 x double> splat (double 0x0000000000000000), ptr %v144, align 64
-  %v145 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
-  store <8 x double> splat (double 0x0000000000000000), ptr %v145, align 64
-  %v146 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v146, align 64
-  %v147 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
-  store <8 x double> %v16, ptr %v147, align 64
-  %v148 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v148, align 64
-  %v149 = getelementptr inbounds <8 x double>, ptr %settings, i64 9
-  %v150 = load <8 x double>, ptr %v149, align 64
-  %v151 = fcmp olt <8 x double> %v4, %v150
-  %v152 = or <8 x i1> zeroinitializer, %v151
-  %v153 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
-  %v154 = load <8 x double>, ptr %v153, align 64
-  %v155 = fcmp ogt <8 x double> %v4, %v154
-  %v156 = or <8 x i1> %v152, %v155
-  %v157 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
-  %v158 = load <8 x double>, ptr %v157, align 64
-  %v159 = fcmp olt <8 x double> %v6, %v158
-  %v160 = or <8 x i1> %v156, %v159
-  %v161 = getelementptr inbounds <8 x double>, ptr %settings, i64 12
-  %v162 = load <8 x double>, ptr %v161, align 64
-  %v163 = fcmp ogt <8 x double> %v6, %v162
-  %v164 = or <8 x i1> %v160, %v163
-  %v165 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v4, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
-  %v166 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> splat (double 0x0000000000000000), <8 x double> %v165)
-  %v167 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v6, <8 x double> splat (double 0x0000000000000000), <8 x double> %v166)
-  %v168 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v29, <8 x double> splat (double 0x0000000000000000), <8 x double> %v167)
-  %v169 = fcmp uno <8 x double> %v168, %v168
-  %v170 = select <8 x i1> %v164, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
-  %v171 = select <8 x i1> %v169, <8 x double> splat (double 0x4008000000000000), <8 x double> %v170
-  %v172 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
-  store <8 x double> %v171, ptr %v172, align 64
-  %v173 = or <8 x i1> %v164, %v169
-  %v174 = bitcast <8 x i1> %v173 to i8
-  %v175 = zext i8 %v174 to i64
-  ret i64 %v175
+  %v68 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v16)
+  %v69 = getelementptr inbounds <8 x double>, ptr %settings, i64 2
+  %v70 = load <8 x double>, ptr %v69, align 64
+  %v71 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v68, <8 x double> %v70)
+  %v72 = fcmp ogt <8 x double> %v67, %v71
+  %v73 = select <8 x i1> %v72, <8 x double> %v67, <8 x double> %v71
+  %v74 = fcmp olt <8 x double> %v73, %v34
+  %v75 = select <8 x i1> %v74, <8 x double> %v73, <8 x double> %v34
+  %v76 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v75, <8 x double> %v26, <8 x double> %v4)
+  %v77 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v75, <8 x double> %v29, <8 x double> %v6)
+  %v78 = fmul <8 x double> %v18, %v76
+  %v79 = fmul <8 x double> %v20, %v76
+  %v80 = fneg <8 x double> %v79
+  %v81 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v80, <8 x double> %v77, <8 x double> %v78)
+  %v82 = fmul <8 x double> %v7, %v77
+  %v83 = fmul <8 x double> %v22, %v76
+  %v84 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v83, <8 x double> %v77, <8 x double> %v82)
+  %v85 = fsub <8 x double> %v81, %v26
+  %v86 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v4)
+  %v87 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v86, <8 x double> %v39)
+  %v88 = fdiv <8 x double> %v85, %v87
+  %v89 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v88, <8 x double> %v88, <8 x double> splat (double 0x0000000000000000))
+  %v90 = fsub <8 x double> %v84, %v29
+  %v91 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v6)
+  %v92 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v91, <8 x double> %v45)
+  %v93 = fdiv <8 x double> %v90, %v92
+  %v94 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v93, <8 x double> %v93, <8 x double> %v89)
+  %v95 = fmul <8 x double> %v94, splat (double 0x3FE0000000000000)
+  %v96 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v95)
+  %v97 = fdiv <8 x double> %v96, %v75
+  %v98 = fcmp ogt <8 x double> %v60, %v97
+  %v99 = select <8 x i1> %v98, <8 x double> %v60, <8 x double> %v97
+  %v100 = fcmp olt <8 x double> %v99, splat (double 0x73D658E3AB795204)
+  %v101 = select <8 x i1> %v100, <8 x double> %v99, <8 x double> splat (double 0x73D658E3AB795204)
+  %v102 = fcmp ogt <8 x double> %v101, splat (double 0x0C06E93F5DA2824C)
+  %v103 = select <8 x i1> %v102, <8 x double> %v101, <8 x double> splat (double 0x0C06E93F5DA2824C)
+  %v104 = bitcast <8 x double> %v103 to <8 x i64>
+  %v105 = lshr <8 x i64> %v104, splat (i64 52)
+  %v106 = or <8 x i64> %v105, splat (i64 4841369599423283200)
+  %v107 = bitcast <8 x i64> %v106 to <8 x double>
+  %v108 = fsub <8 x double> %v107, splat (double 0x43300000000003FF)
+  %v109 = and <8 x i64> %v104, splat (i64 4503599627370495)
+  %v110 = or <8 x i64> %v109, splat (i64 4607182418800017408)
+  %v111 = bitcast <8 x i64> %v110 to <8 x double>
+  %v112 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v111, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
+  %v113 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v112, <8 x double> %v111, <8 x double> splat (double 0x3FF96E7C9A8551E4))
+  %v114 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v113, <8 x double> %v111, <8 x double> splat (double 0xC00BEB4578B01506))
+  %v115 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v114, <8 x double> %v111, <8 x double> splat (double 0x401431010187BF7D))
+  %v116 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v115, <8 x double> %v111, <8 x double> splat (double 0xC0064DAC40654ADD))
+  %v117 = fadd <8 x double> %v108, %v116
+  %v118 = fmul <8 x double> %v117, splat (double 0xBFC999999999999A)
+  %v119 = fadd <8 x double> %v118, splat (double 0xBFF542A5A12E1C5A)
+  %v120 = fadd <8 x double> %v119, splat (double 0x4338000000000000)
+  %v121 = fsub <8 x double> %v120, splat (double 0x4338000000000000)
+  %v122 = fsub <8 x double> %v119, %v121
+  %v123 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v122, <8 x double> splat (double 0x3FACA1CEF240FA9C))
+  %v124 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v123, <8 x double> %v122, <8 x double> splat (double 0x3FCEBFA4C61D8623))
+  %v125 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v124, <8 x double> %v122, <8 x double> splat (double 0x3FE62E0C17657753))
+  %v126 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v125, <8 x double> %v122, <8 x double> splat (double 0x3FF0000000000000))
+  %v127 = bitcast <8 x double> %v120 to <8 x i64>
+  %v128 = shl <8 x i64> %v127, splat (i64 52)
+  %v129 = bitcast <8 x double> %v126 to <8 x i64>
+  %v130 = add <8 x i64> %v129, %v128
+  %v131 = bitcast <8 x i64> %v130 to <8 x double>
+  %v132 = fmul <8 x double> %v34, splat (double 0x3EB0C6F7A0B5ED8D)
+  %v133 = fmul <8 x double> %v75, splat (double 0x3F50624DD2F1A9FC)
+  %v134 = fcmp ogt <8 x double> %v132, %v133
+  %v135 = select <8 x i1> %v134, <8 x double> %v132, <8 x double> %v133
+  %v136 = fcmp ole <8 x double> %v99, splat (double 0x3CD203AF9EE75616)
+  %v137 = select <8 x i1> %v136, <8 x double> %v135, <8 x double> %v131
+  %v138 = fmul <8 x double> splat (double 0x4059000000000000), %v75
+  %v139 = fcmp olt <8 x double> %v138, %v137
+  %v140 = select <8 x i1> %v139, <8 x double> %v138, <8 x double> %v137
+  %v141 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v16)
+  %v142 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v141, <8 x double> %v70)
+  %v143 = fcmp ogt <8 x double> %v140, %v142
+  %v144 = select <8 x i1> %v143, <8 x double> %v140, <8 x double> %v142
+  %v145 = fcmp olt <8 x double> %v144, %v34
+  %v146 = select <8 x i1> %v145, <8 x double> %v144, <8 x double> %v34
+  %v147 = fcmp ord <8 x double> %v97, %v97
+  %v148 = select <8 x i1> %v147, <8 x double> %v146, <8 x double> %v75
+  %v149 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
+  store <8 x double> %v148, ptr %v149, align 64
+  %v150 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
+  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v150, align 64
+  %v151 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
+  store <8 x double> splat (double 0x0000000000000000), ptr %v151, align 64
+  %v152 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
+  store <8 x double> splat (double 0x0000000000000000), ptr %v152, align 64
+  %v153 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
+  store <8 x double> splat (double 0x0000000000000000), ptr %v153, align 64
+  %v154 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
+  store <8 x double> splat (double 0x0000000000000000), ptr %v154, align 64
+  %v155 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
+  store <8 x double> splat (double 0x0000000000000000), ptr %v155, align 64
+  %v156 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v156, align 64
+  %v157 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  store <8 x double> %v16, ptr %v157, align 64
+  %v158 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v158, align 64
+  %v159 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
+  %v160 = load <8 x double>, ptr %v159, align 64
+  %v161 = fcmp olt <8 x double> %v4, %v160
+  %v162 = or <8 x i1> zeroinitializer, %v161
+  %v163 = getelementptr inbounds <8 x double>, ptr %settings, i64 13
+  %v164 = load <8 x double>, ptr %v163, align 64
+  %v165 = fcmp ogt <8 x double> %v4, %v164
+  %v166 = or <8 x i1> %v162, %v165
+  %v167 = getelementptr inbounds <8 x double>, ptr %settings, i64 12
+  %v168 = load <8 x double>, ptr %v167, align 64
+  %v169 = fcmp olt <8 x double> %v6, %v168
+  %v170 = or <8 x i1> %v166, %v169
+  %v171 = getelementptr inbounds <8 x double>, ptr %settings, i64 14
+  %v172 = load <8 x double>, ptr %v171, align 64
+  %v173 = fcmp ogt <8 x double> %v6, %v172
+  %v174 = or <8 x i1> %v170, %v173
+  %v175 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v4, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
+  %v176 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> splat (double 0x0000000000000000), <8 x double> %v175)
+  %v177 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v6, <8 x double> splat (double 0x0000000000000000), <8 x double> %v176)
+  %v178 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v29, <8 x double> splat (double 0x0000000000000000), <8 x double> %v177)
+  %v179 = fcmp uno <8 x double> %v178, %v178
+  %v180 = select <8 x i1> %v174, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
+  %v181 = select <8 x i1> %v179, <8 x double> splat (double 0x4008000000000000), <8 x double> %v180
+  %v182 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
+  store <8 x double> %v181, ptr %v182, align 64
+  %v183 = or <8 x i1> %v174, %v179
+  %v184 = bitcast <8 x i1> %v183 to i8
+  %v185 = zext i8 %v184 to i64
+  ret i64 %v185
 }
 
-define i64 @uq_step(ptr noalias %lanes, ptr noalias readonly %settings) #0 {
+define i64 @uq_step(ptr noalias %lanes, ptr noalias readonly %settings) #1 {
 entry:
   ; length of the attempt: proposed, stretched or halved towards the end of the segment
   %v1 = getelementptr inbounds <8 x double>, ptr %lanes, i64 0
@@ -214,22 +224,22 @@ entry:
   %v11 = fcmp oge <8 x double> %v10, %v7
   %v12 = fmul <8 x double> %v7, splat (double 0x3FE0000000000000)
   %v13 = select <8 x i1> %v11, <8 x double> %v12, <8 x double> %v4
-  %v14 = select <8 x i1> %v9, <8 x double> %v7, <8 x double> %v13
-  %v15 = fadd <8 x double> %v2, %v14
-  %v16 = select <8 x i1> %v9, <8 x double> %v6, <8 x double> %v15
+  %v14 = fadd <8 x double> %v2, %v13
+  %v15 = select <8 x i1> %v9, <8 x double> %v6, <8 x double> %v14
+  %v16 = fsub <8 x double> %v15, %v2
   ; stages
   %v17 = getelementptr inbounds <8 x double>, ptr %lanes, i64 27
   %v18 = load <8 x double>, ptr %v17, align 64
   %v19 = fmul <8 x double> splat (double 0x3FC999999999999A), %v18
   %v20 = getelementptr inbounds <8 x double>, ptr %lanes, i64 25
   %v21 = load <8 x double>, ptr %v20, align 64
-  %v22 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v19, <8 x double> %v21)
+  %v22 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v19, <8 x double> %v21)
   %v23 = getelementptr inbounds <8 x double>, ptr %lanes, i64 28
   %v24 = load <8 x double>, ptr %v23, align 64
   %v25 = fmul <8 x double> splat (double 0x3FC999999999999A), %v24
   %v26 = getelementptr inbounds <8 x double>, ptr %lanes, i64 26
   %v27 = load <8 x double>, ptr %v26, align 64
-  %v28 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v25, <8 x double> %v27)
+  %v28 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v25, <8 x double> %v27)
   %v29 = getelementptr inbounds <8 x double>, ptr %lanes, i64 18
   %v30 = load <8 x double>, ptr %v29, align 64
   %v31 = getelementptr inbounds <8 x double>, ptr %lanes, i64 19
@@ -247,10 +257,10 @@ entry:
   %v43 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v42, <8 x double> %v28, <8 x double> %v41)
   %v44 = fmul <8 x double> splat (double 0x3FB3333333333333), %v18
   %v45 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FCCCCCCCCCCCCCD), <8 x double> %v38, <8 x double> %v44)
-  %v46 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v45, <8 x double> %v21)
+  %v46 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v45, <8 x double> %v21)
   %v47 = fmul <8 x double> splat (double 0x3FB3333333333333), %v24
   %v48 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FCCCCCCCCCCCCCD), <8 x double> %v43, <8 x double> %v47)
-  %v49 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v48, <8 x double> %v27)
+  %v49 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v48, <8 x double> %v27)
   %v50 = fmul <8 x double> %v30, %v46
   %v51 = fmul <8 x double> %v32, %v46
   %v52 = fneg <8 x double> %v51
@@ -261,11 +271,11 @@ entry:
   %v57 = fmul <8 x double> splat (double 0x3FEF49F49F49F49F), %v18
   %v58 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xC00DDDDDDDDDDDDE), <8 x double> %v38, <8 x double> %v57)
   %v59 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x400C71C71C71C71C), <8 x double> %v53, <8 x double> %v58)
-  %v60 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v59, <8 x double> %v21)
+  %v60 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v59, <8 x double> %v21)
   %v61 = fmul <8 x double> splat (double 0x3FEF49F49F49F49F), %v24
   %v62 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xC00DDDDDDDDDDDDE), <8 x double> %v43, <8 x double> %v61)
   %v63 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x400C71C71C71C71C), <8 x double> %v56, <8 x double> %v62)
-  %v64 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v63, <8 x double> %v27)
+  %v64 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v63, <8 x double> %v27)
   %v65 = fmul <8 x double> %v30, %v60
   %v66 = fmul <8 x double> %v32, %v60
   %v67 = fneg <8 x double> %v66
@@ -277,12 +287,12 @@ entry:
   %v73 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xC027310BD29520E4), <8 x double> %v38, <8 x double> %v72)
   %v74 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x4023A552363C5290), <8 x double> %v53, <8 x double> %v73)
   %v75 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFD29C9EBA1E3345), <8 x double> %v68, <8 x double> %v74)
-  %v76 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v75, <8 x double> %v21)
+  %v76 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v75, <8 x double> %v21)
   %v77 = fmul <8 x double> splat (double 0x40079EEC0FC37181), %v24
   %v78 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xC027310BD29520E4), <8 x double> %v43, <8 x double> %v77)
   %v79 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x4023A552363C5290), <8 x double> %v56, <8 x double> %v78)
   %v80 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFD29C9EBA1E3345), <8 x double> %v71, <8 x double> %v79)
-  %v81 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v80, <8 x double> %v27)
+  %v81 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v80, <8 x double> %v27)
   %v82 = fmul <8 x double> %v30, %v76
   %v83 = fmul <8 x double> %v32, %v76
   %v84 = fneg <8 x double> %v83
@@ -295,13 +305,13 @@ entry:
   %v91 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x4021D016A3721E8B), <8 x double> %v53, <8 x double> %v90)
   %v92 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FD1D1745D1745D1), <8 x double> %v68, <8 x double> %v91)
   %v93 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFD1818970D9CC2F), <8 x double> %v85, <8 x double> %v92)
-  %v94 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v93, <8 x double> %v21)
+  %v94 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v93, <8 x double> %v21)
   %v95 = fmul <8 x double> splat (double 0x4006C52BF5A814B0), %v24
   %v96 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xC02583E0F83E0F84), <8 x double> %v43, <8 x double> %v95)
   %v97 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x4021D016A3721E8B), <8 x double> %v56, <8 x double> %v96)
   %v98 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FD1D1745D1745D1), <8 x double> %v71, <8 x double> %v97)
   %v99 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFD1818970D9CC2F), <8 x double> %v88, <8 x double> %v98)
-  %v100 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v99, <8 x double> %v27)
+  %v100 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v99, <8 x double> %v27)
   %v101 = fmul <8 x double> %v30, %v94
   %v102 = fmul <8 x double> %v32, %v94
   %v103 = fneg <8 x double> %v102
@@ -314,13 +324,13 @@ entry:
   %v110 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FE4D55555555555), <8 x double> %v68, <8 x double> %v109)
   %v111 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFD4A1CFB2B78C13), <8 x double> %v85, <8 x double> %v110)
   %v112 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FC0C30C30C30C31), <8 x double> %v104, <8 x double> %v111)
-  %v113 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v112, <8 x double> %v21)
+  %v113 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v112, <8 x double> %v21)
   %v114 = fmul <8 x double> splat (double 0x3FB7555555555555), %v24
   %v115 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FDCC0499A5605FB), <8 x double> %v56, <8 x double> %v114)
   %v116 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FE4D55555555555), <8 x double> %v71, <8 x double> %v115)
   %v117 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFD4A1CFB2B78C13), <8 x double> %v88, <8 x double> %v116)
   %v118 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FC0C30C30C30C31), <8 x double> %v107, <8 x double> %v117)
-  %v119 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v118, <8 x double> %v27)
+  %v119 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v118, <8 x double> %v27)
   %v120 = fmul <8 x double> %v30, %v113
   %v121 = fmul <8 x double> %v32, %v113
   %v122 = fneg <8 x double> %v121
@@ -335,7 +345,7 @@ entry:
   %v130 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v113)
   %v131 = fcmp ogt <8 x double> %v129, %v130
   %v132 = select <8 x i1> %v131, <8 x double> %v129, <8 x double> %v130
-  %v133 = getelementptr inbounds <8 x double>, ptr %settings, i64 7
+  %v133 = getelementptr inbounds <8 x double>, ptr %settings, i64 9
   %v134 = load <8 x double>, ptr %v133, align 64
   %v135 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v128, <8 x double> %v132, <8 x double> %v134)
   %v136 = fmul <8 x double> splat (double 0x3F54320FEDCBA987), %v18
@@ -344,14 +354,14 @@ entry:
   %v139 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFAA0AD1D2CA1858), <8 x double> %v85, <8 x double> %v138)
   %v140 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA5748A7BDAF0E2), <8 x double> %v104, <8 x double> %v139)
   %v141 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBF9999999999999A), <8 x double> %v123, <8 x double> %v140)
-  %v142 = fmul <8 x double> %v14, %v141
+  %v142 = fmul <8 x double> %v16, %v141
   %v143 = fdiv <8 x double> %v142, %v135
   %v144 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v143, <8 x double> %v143, <8 x double> splat (double 0x0000000000000000))
   %v145 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v27)
   %v146 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v119)
   %v147 = fcmp ogt <8 x double> %v145, %v146
   %v148 = select <8 x i1> %v147, <8 x double> %v145, <8 x double> %v146
-  %v149 = getelementptr inbounds <8 x double>, ptr %settings, i64 8
+  %v149 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
   %v150 = load <8 x double>, ptr %v149, align 64
   %v151 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v128, <8 x double> %v148, <8 x double> %v150)
   %v152 = fmul <8 x double> splat (double 0x3F54320FEDCBA987), %v24
@@ -360,7 +370,7 @@ entry:
   %v155 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFAA0AD1D2CA1858), <8 x double> %v88, <8 x double> %v154)
   %v156 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA5748A7BDAF0E2), <8 x double> %v107, <8 x double> %v155)
   %v157 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBF9999999999999A), <8 x double> %v126, <8 x double> %v156)
-  %v158 = fmul <8 x double> %v14, %v157
+  %v158 = fmul <8 x double> %v16, %v157
   %v159 = fdiv <8 x double> %v158, %v151
   %v160 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v159, <8 x double> %v159, <8 x double> %v144)
   %v161 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v113, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
@@ -419,7 +429,7 @@ entry:
   %v213 = bitcast <8 x double> %v210 to <8 x i64>
   %v214 = add <8 x i64> %v213, %v212
   %v215 = bitcast <8 x i64> %v214 to <8 x double>
-  %v216 = fmul <8 x double> %v14, %v215
+  %v216 = fmul <8 x double> %v16, %v215
   %v217 = fcmp oge <8 x double> %v215, splat (double 0x3FF0000000000000)
   %v218 = fcmp ogt <8 x double> %v4, %v216
   %v219 = and <8 x i1> %v217, %v218
@@ -431,7 +441,7 @@ entry:
   %v224 = fcmp ogt <8 x double> %v167, splat (double 0x0000000000000000)
   %v225 = xor <8 x i1> %v170, splat (i1 true)
   %v226 = and <8 x i1> %v224, %v225
-  %v227 = select <8 x i1> %v170, <8 x double> %v16, <8 x double> %v2
+  %v227 = select <8 x i1> %v170, <8 x double> %v15, <8 x double> %v2
   %v228 = getelementptr inbounds <8 x double>, ptr %lanes, i64 0
   store <8 x double> %v227, ptr %v228, align 64
   %v229 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
@@ -441,7 +451,7 @@ entry:
   store <8 x double> %v231, ptr %v232, align 64
   %v233 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
   %v234 = load <8 x double>, ptr %v233, align 64
-  %v235 = select <8 x i1> %v170, <8 x double> %v14, <8 x double> %v234
+  %v235 = select <8 x i1> %v170, <8 x double> %v16, <8 x double> %v234
   %v236 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
   store <8 x double> %v235, ptr %v236, align 64
   %v237 = select <8 x i1> %v170, <8 x double> %v223, <8 x double> %v190
@@ -488,19 +498,19 @@ entry:
   %v271 = and <8 x i1> %v269, %v270
   %v272 = or <8 x i1> %v264, %v268
   %v273 = and <8 x i1> %v271, %v272
-  %v274 = getelementptr inbounds <8 x double>, ptr %settings, i64 9
+  %v274 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
   %v275 = load <8 x double>, ptr %v274, align 64
   %v276 = fcmp olt <8 x double> %v113, %v275
   %v277 = or <8 x i1> zeroinitializer, %v276
-  %v278 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
+  %v278 = getelementptr inbounds <8 x double>, ptr %settings, i64 13
   %v279 = load <8 x double>, ptr %v278, align 64
   %v280 = fcmp ogt <8 x double> %v113, %v279
   %v281 = or <8 x i1> %v277, %v280
-  %v282 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
+  %v282 = getelementptr inbounds <8 x double>, ptr %settings, i64 12
   %v283 = load <8 x double>, ptr %v282, align 64
   %v284 = fcmp olt <8 x double> %v119, %v283
   %v285 = or <8 x i1> %v281, %v284
-  %v286 = getelementptr inbounds <8 x double>, ptr %settings, i64 12
+  %v286 = getelementptr inbounds <8 x double>, ptr %settings, i64 14
   %v287 = load <8 x double>, ptr %v286, align 64
   %v288 = fcmp ogt <8 x double> %v119, %v287
   %v289 = or <8 x i1> %v285, %v288
@@ -508,8 +518,8 @@ entry:
   %v291 = or <8 x i1> %v273, %v290
   %v292 = getelementptr inbounds <8 x double>, ptr %lanes, i64 3
   %v293 = load <8 x double>, ptr %v292, align 64
-  %v294 = fcmp olt <8 x double> %v293, %v16
-  %v295 = fcmp ole <8 x double> %v293, %v16
+  %v294 = fcmp olt <8 x double> %v293, %v15
+  %v295 = fcmp ole <8 x double> %v293, %v15
   %v296 = or <8 x i1> %v259, %v291
   %v297 = select <8 x i1> %v296, <8 x i1> %v294, <8 x i1> %v295
   %v298 = and <8 x i1> %v170, %v297
@@ -523,8 +533,8 @@ entry:
 curve:
   %v305 = fsub <8 x double> %v113, %v21
   %v306 = fneg <8 x double> %v305
-  %v307 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v18, <8 x double> %v306)
-  %v308 = fneg <8 x double> %v14
+  %v307 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v18, <8 x double> %v306)
+  %v308 = fneg <8 x double> %v16
   %v309 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v308, <8 x double> %v123, <8 x double> %v305)
   %v310 = fsub <8 x double> %v309, %v307
   %v311 = fmul <8 x double> splat (double 0xBFF208439215A046), %v18
@@ -533,7 +543,7 @@ curve:
   %v314 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x400C2CEAE0978C92), <8 x double> %v85, <8 x double> %v313)
   %v315 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFFC46C8B61F95E5), <8 x double> %v104, <8 x double> %v314)
   %v316 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x40030F4BDF0DC914), <8 x double> %v123, <8 x double> %v315)
-  %v317 = fmul <8 x double> %v14, %v316
+  %v317 = fmul <8 x double> %v16, %v316
   %v318 = getelementptr inbounds <8 x double>, ptr %lanes, i64 31
   store <8 x double> %v21, ptr %v318, align 64
   %v319 = getelementptr inbounds <8 x double>, ptr %lanes, i64 33
@@ -546,8 +556,8 @@ curve:
   store <8 x double> %v317, ptr %v322, align 64
   %v323 = fsub <8 x double> %v119, %v27
   %v324 = fneg <8 x double> %v323
-  %v325 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v14, <8 x double> %v24, <8 x double> %v324)
-  %v326 = fneg <8 x double> %v14
+  %v325 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v24, <8 x double> %v324)
+  %v326 = fneg <8 x double> %v16
   %v327 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v326, <8 x double> %v126, <8 x double> %v323)
   %v328 = fsub <8 x double> %v327, %v325
   %v329 = fmul <8 x double> splat (double 0xBFF208439215A046), %v24
@@ -556,7 +566,7 @@ curve:
   %v332 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x400C2CEAE0978C92), <8 x double> %v88, <8 x double> %v331)
   %v333 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0xBFFC46C8B61F95E5), <8 x double> %v107, <8 x double> %v332)
   %v334 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x40030F4BDF0DC914), <8 x double> %v126, <8 x double> %v333)
-  %v335 = fmul <8 x double> %v14, %v334
+  %v335 = fmul <8 x double> %v16, %v334
   %v336 = getelementptr inbounds <8 x double>, ptr %lanes, i64 32
   store <8 x double> %v27, ptr %v336, align 64
   %v337 = getelementptr inbounds <8 x double>, ptr %lanes, i64 34
@@ -595,78 +605,85 @@ move:
   %v359 = select <8 x i1> %v358, <8 x double> %v356, <8 x double> %v357
   %v360 = getelementptr inbounds <8 x double>, ptr %lanes, i64 30
   store <8 x double> %v359, ptr %v360, align 64
+  %v361 = or i64 %v300, %v302
   br i1 %v304, label %observe, label %judge
 observe:
-  %v361 = or i64 %v300, %v302
   %v362 = bitcast <8 x i1> %v298 to i8
   %v363 = zext i8 %v362 to i64
-  call void @uq_observe(ptr %lanes, ptr %settings, i64 %v363, i64 %v361)
+  %v364 = call i64 @uq_observe(ptr %lanes, ptr %settings, i64 %v363, i64 %v361)
   br label %judge
 judge:
-  %v364 = bitcast <8 x i1> %v291 to i8
-  %v365 = icmp ne i8 %v364, 0
-  br i1 %v365, label %failure, label %done
+  %v365 = phi i64 [ 0, %move ], [ %v364, %observe ]
+  %v366 = trunc i64 %v365 to i8
+  %v367 = bitcast i8 %v366 to <8 x i1>
+  %v368 = or <8 x i1> %v290, %v367
+  %v369 = or <8 x i1> %v273, %v368
+  %v370 = bitcast <8 x i1> %v369 to i8
+  %v371 = zext i8 %v370 to i64
+  %v372 = bitcast <8 x i1> %v369 to i8
+  %v373 = icmp ne i8 %v372, 0
+  br i1 %v373, label %failure, label %done
 failure:
-  %v366 = fcmp ogt <8 x double> %v247, splat (double 0x3F50000000000000)
-  %v367 = select <8 x i1> %v366, <8 x double> splat (double 0x4008000000000000), <8 x double> splat (double 0x401C000000000000)
-  %v368 = fmul <8 x double> %v263, splat (double 0x40C3880000000000)
-  %v369 = getelementptr inbounds <8 x double>, ptr %settings, i64 3
-  %v370 = load <8 x double>, ptr %v369, align 64
-  %v371 = fmul <8 x double> %v341, %v342
-  %v372 = fcmp ogt <8 x double> %v371, splat (double 0x0000000000000000)
-  %v373 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v341)
-  %v374 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v342)
-  %v375 = fmul <8 x double> %v368, %v374
-  %v376 = fcmp ole <8 x double> %v373, %v375
-  %v377 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v341)
-  %v378 = fcmp ogt <8 x double> %v377, splat (double 0x5F138D352E5096AF)
-  %v379 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v341)
-  %v380 = fmul <8 x double> %v128, %v379
-  %v381 = fmul <8 x double> %v134, splat (double 0x412E848000000000)
-  %v382 = fcmp ogt <8 x double> %v380, %v381
-  %v383 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v341)
-  %v384 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v342)
-  %v385 = fmul <8 x double> %v370, %v384
-  %v386 = fcmp ole <8 x double> %v383, %v385
-  %v387 = and <8 x i1> %v382, %v386
-  %v388 = or <8 x i1> %v376, %v378
-  %v389 = or <8 x i1> %v388, %v387
-  %v390 = and <8 x i1> %v372, %v389
-  %v391 = or <8 x i1> zeroinitializer, %v390
-  %v392 = fmul <8 x double> %v351, %v352
-  %v393 = fcmp ogt <8 x double> %v392, splat (double 0x0000000000000000)
-  %v394 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v351)
-  %v395 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v352)
-  %v396 = fmul <8 x double> %v368, %v395
-  %v397 = fcmp ole <8 x double> %v394, %v396
-  %v398 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v351)
-  %v399 = fcmp ogt <8 x double> %v398, splat (double 0x5F138D352E5096AF)
-  %v400 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v351)
-  %v401 = fmul <8 x double> %v128, %v400
-  %v402 = fmul <8 x double> %v150, splat (double 0x412E848000000000)
-  %v403 = fcmp ogt <8 x double> %v401, %v402
-  %v404 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v351)
-  %v405 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v352)
-  %v406 = fmul <8 x double> %v370, %v405
-  %v407 = fcmp ole <8 x double> %v404, %v406
-  %v408 = and <8 x i1> %v403, %v407
-  %v409 = or <8 x i1> %v397, %v399
-  %v410 = or <8 x i1> %v409, %v408
-  %v411 = and <8 x i1> %v393, %v410
-  %v412 = or <8 x i1> %v391, %v411
-  %v413 = select <8 x i1> %v412, <8 x double> splat (double 0x4010000000000000), <8 x double> %v367
-  %v414 = select <8 x i1> %v264, <8 x double> %v413, <8 x double> splat (double 0x4014000000000000)
-  %v415 = select <8 x i1> %v290, <8 x double> splat (double 0x4000000000000000), <8 x double> %v414
-  %v416 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
-  store <8 x double> %v415, ptr %v416, align 64
+  %v374 = fcmp ogt <8 x double> %v247, splat (double 0x3F50000000000000)
+  %v375 = select <8 x i1> %v374, <8 x double> splat (double 0x4008000000000000), <8 x double> splat (double 0x401C000000000000)
+  %v376 = fmul <8 x double> %v263, splat (double 0x40C3880000000000)
+  %v377 = getelementptr inbounds <8 x double>, ptr %settings, i64 3
+  %v378 = load <8 x double>, ptr %v377, align 64
+  %v379 = fmul <8 x double> %v341, %v342
+  %v380 = fcmp ogt <8 x double> %v379, splat (double 0x0000000000000000)
+  %v381 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v341)
+  %v382 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v342)
+  %v383 = fmul <8 x double> %v376, %v382
+  %v384 = fcmp ole <8 x double> %v381, %v383
+  %v385 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v341)
+  %v386 = fcmp ogt <8 x double> %v385, splat (double 0x5F138D352E5096AF)
+  %v387 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v341)
+  %v388 = fmul <8 x double> %v128, %v387
+  %v389 = fmul <8 x double> %v134, splat (double 0x412E848000000000)
+  %v390 = fcmp ogt <8 x double> %v388, %v389
+  %v391 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v341)
+  %v392 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v342)
+  %v393 = fmul <8 x double> %v378, %v392
+  %v394 = fcmp ole <8 x double> %v391, %v393
+  %v395 = and <8 x i1> %v390, %v394
+  %v396 = or <8 x i1> %v384, %v386
+  %v397 = or <8 x i1> %v396, %v395
+  %v398 = and <8 x i1> %v380, %v397
+  %v399 = or <8 x i1> zeroinitializer, %v398
+  %v400 = fmul <8 x double> %v351, %v352
+  %v401 = fcmp ogt <8 x double> %v400, splat (double 0x0000000000000000)
+  %v402 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v351)
+  %v403 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v352)
+  %v404 = fmul <8 x double> %v376, %v403
+  %v405 = fcmp ole <8 x double> %v402, %v404
+  %v406 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v351)
+  %v407 = fcmp ogt <8 x double> %v406, splat (double 0x5F138D352E5096AF)
+  %v408 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v351)
+  %v409 = fmul <8 x double> %v128, %v408
+  %v410 = fmul <8 x double> %v150, splat (double 0x412E848000000000)
+  %v411 = fcmp ogt <8 x double> %v409, %v410
+  %v412 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v351)
+  %v413 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v352)
+  %v414 = fmul <8 x double> %v378, %v413
+  %v415 = fcmp ole <8 x double> %v412, %v414
+  %v416 = and <8 x i1> %v411, %v415
+  %v417 = or <8 x i1> %v405, %v407
+  %v418 = or <8 x i1> %v417, %v416
+  %v419 = and <8 x i1> %v401, %v418
+  %v420 = or <8 x i1> %v399, %v419
+  %v421 = select <8 x i1> %v420, <8 x double> splat (double 0x4010000000000000), <8 x double> %v375
+  %v422 = select <8 x i1> %v264, <8 x double> %v421, <8 x double> splat (double 0x4014000000000000)
+  %v423 = select <8 x i1> %v368, <8 x double> splat (double 0x4000000000000000), <8 x double> %v422
+  %v424 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
+  store <8 x double> %v423, ptr %v424, align 64
   br label %done
 done:
-  %v417 = shl i64 %v302, 8
-  %v418 = or i64 %v300, %v417
-  ret i64 %v418
+  %v425 = shl i64 %v371, 8
+  %v426 = or i64 %v300, %v425
+  ret i64 %v426
 }
 
-define void @uq_observe(ptr noalias %lanes, ptr noalias readonly %settings, i64 %due, i64 %strict) #0 {
+define i64 @uq_observe(ptr noalias %lanes, ptr noalias readonly %settings, i64 %due, i64 %strict) #0 {
 entry:
   %v1 = getelementptr inbounds <8 x double>, ptr %lanes, i64 0
   %v2 = load <8 x double>, ptr %v1, align 64
@@ -684,182 +701,261 @@ entry:
   %v14 = load <8 x i64>, ptr %v13, align 64
   br label %next
 next:
-  %due.now = phi <8 x i1> [ %v4, %entry ], [ %due.then, %next ]
-  %at.now = phi <8 x double> [ %v8, %entry ], [ %at.then, %next ]
-  %clock.now = phi <8 x i64> [ %v10, %entry ], [ %clock.then, %next ]
-  %place.now = phi <8 x i64> [ %v12, %entry ], [ %place.then, %next ]
-  %truth_place.now = phi <8 x i64> [ %v14, %entry ], [ %truth_place.then, %next ]
-  %v15 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  %due.now = phi <8 x i1> [ %v4, %entry ], [ %due.then, %values ]
+  %at.now = phi <8 x double> [ %v8, %entry ], [ %at.then, %values ]
+  %clock.now = phi <8 x i64> [ %v10, %entry ], [ %clock.then, %values ]
+  %place.now = phi <8 x i64> [ %v12, %entry ], [ %place.then, %values ]
+  %truth_place.now = phi <8 x i64> [ %v14, %entry ], [ %truth_place.then, %values ]
+  %strayed.now = phi <8 x i1> [ zeroinitializer, %entry ], [ %strayed.then, %values ]
+  %v15 = getelementptr inbounds <8 x double>, ptr %settings, i64 5
   %v16 = load <8 x double>, ptr %v15, align 64
-  %v17 = fsub <8 x double> %at.now, %v16
-  %v18 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
-  %v19 = load <8 x double>, ptr %v18, align 64
-  %v20 = fdiv <8 x double> %v17, %v19
-  %v21 = fsub <8 x double> splat (double 0x3FF0000000000000), %v20
-  %v22 = fcmp oge <8 x double> %at.now, %v2
-  %v23 = getelementptr inbounds <8 x double>, ptr %lanes, i64 31
+  %v17 = fcmp ogt <8 x double> %v16, splat (double 0x0000000000000000)
+  %v18 = bitcast <8 x i1> %v17 to i8
+  %v19 = icmp ne i8 %v18, 0
+  br i1 %v19, label %judge, label %values
+judge:
+  %v20 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  %v21 = load <8 x double>, ptr %v20, align 64
+  %v22 = fsub <8 x double> %at.now, %v21
+  %v23 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
   %v24 = load <8 x double>, ptr %v23, align 64
-  %v25 = getelementptr inbounds <8 x double>, ptr %lanes, i64 33
-  %v26 = load <8 x double>, ptr %v25, align 64
-  %v27 = getelementptr inbounds <8 x double>, ptr %lanes, i64 35
-  %v28 = load <8 x double>, ptr %v27, align 64
-  %v29 = getelementptr inbounds <8 x double>, ptr %lanes, i64 37
-  %v30 = load <8 x double>, ptr %v29, align 64
-  %v31 = getelementptr inbounds <8 x double>, ptr %lanes, i64 39
-  %v32 = load <8 x double>, ptr %v31, align 64
-  %v33 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v21, <8 x double> %v32, <8 x double> %v30)
-  %v34 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v20, <8 x double> %v33, <8 x double> %v28)
-  %v35 = getelementptr inbounds <8 x double>, ptr %lanes, i64 25
-  %v36 = load <8 x double>, ptr %v35, align 64
-  %v37 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v21, <8 x double> %v34, <8 x double> %v26)
-  %v38 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v20, <8 x double> %v37, <8 x double> %v24)
-  %v39 = select <8 x i1> %v22, <8 x double> %v36, <8 x double> %v38
-  %v40 = getelementptr inbounds <8 x double>, ptr %lanes, i64 32
-  %v41 = load <8 x double>, ptr %v40, align 64
-  %v42 = getelementptr inbounds <8 x double>, ptr %lanes, i64 34
+  %v25 = fdiv <8 x double> %v22, %v24
+  %v26 = fsub <8 x double> splat (double 0x3FF0000000000000), %v25
+  %v27 = fcmp oge <8 x double> %at.now, %v2
+  %v28 = getelementptr inbounds <8 x double>, ptr %lanes, i64 39
+  %v29 = load <8 x double>, ptr %v28, align 64
+  %v30 = getelementptr inbounds <8 x double>, ptr %lanes, i64 37
+  %v31 = load <8 x double>, ptr %v30, align 64
+  %v32 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> %v29, <8 x double> %v31)
+  %v33 = getelementptr inbounds <8 x double>, ptr %lanes, i64 35
+  %v34 = load <8 x double>, ptr %v33, align 64
+  %v35 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v25, <8 x double> %v32, <8 x double> %v34)
+  %v36 = getelementptr inbounds <8 x double>, ptr %lanes, i64 33
+  %v37 = load <8 x double>, ptr %v36, align 64
+  %v38 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> %v35, <8 x double> %v37)
+  %v39 = getelementptr inbounds <8 x double>, ptr %lanes, i64 31
+  %v40 = load <8 x double>, ptr %v39, align 64
+  %v41 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v25, <8 x double> %v38, <8 x double> %v40)
+  %v42 = getelementptr inbounds <8 x double>, ptr %lanes, i64 25
   %v43 = load <8 x double>, ptr %v42, align 64
-  %v44 = getelementptr inbounds <8 x double>, ptr %lanes, i64 36
-  %v45 = load <8 x double>, ptr %v44, align 64
-  %v46 = getelementptr inbounds <8 x double>, ptr %lanes, i64 38
-  %v47 = load <8 x double>, ptr %v46, align 64
-  %v48 = getelementptr inbounds <8 x double>, ptr %lanes, i64 40
-  %v49 = load <8 x double>, ptr %v48, align 64
-  %v50 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v21, <8 x double> %v49, <8 x double> %v47)
-  %v51 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v20, <8 x double> %v50, <8 x double> %v45)
-  %v52 = getelementptr inbounds <8 x double>, ptr %lanes, i64 26
-  %v53 = load <8 x double>, ptr %v52, align 64
-  %v54 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v21, <8 x double> %v51, <8 x double> %v43)
-  %v55 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v20, <8 x double> %v54, <8 x double> %v41)
-  %v56 = select <8 x i1> %v22, <8 x double> %v53, <8 x double> %v55
-  %v57 = getelementptr inbounds <8 x i64>, ptr %settings, i64 6
-  %v58 = load <8 x i64>, ptr %v57, align 64
-  %v59 = getelementptr inbounds <8 x i64>, ptr %settings, i64 5
-  %v60 = load <8 x i64>, ptr %v59, align 64
-  %v61 = getelementptr inbounds <8 x i64>, ptr %settings, i64 4
-  %v62 = load <8 x i64>, ptr %v61, align 64
-  %v63 = select <8 x i1> %due.now, <8 x i64> %place.now, <8 x i64> %v58
-  %v64 = extractelement <8 x i64> %v63, i64 0
-  %v65 = extractelement <8 x i64> %v63, i64 1
-  %v66 = extractelement <8 x i64> %v63, i64 2
-  %v67 = extractelement <8 x i64> %v63, i64 3
-  %v68 = extractelement <8 x i64> %v63, i64 4
-  %v69 = extractelement <8 x i64> %v63, i64 5
-  %v70 = extractelement <8 x i64> %v63, i64 6
-  %v71 = extractelement <8 x i64> %v63, i64 7
-  %v72 = inttoptr i64 %v64 to ptr
-  %v73 = inttoptr i64 %v65 to ptr
-  %v74 = inttoptr i64 %v66 to ptr
-  %v75 = inttoptr i64 %v67 to ptr
-  %v76 = inttoptr i64 %v68 to ptr
-  %v77 = inttoptr i64 %v69 to ptr
-  %v78 = inttoptr i64 %v70 to ptr
-  %v79 = inttoptr i64 %v71 to ptr
-  %v80 = extractelement <8 x double> %v39, i64 0
-  store double %v80, ptr %v72, align 8
-  %v81 = extractelement <8 x double> %v39, i64 1
-  store double %v81, ptr %v73, align 8
-  %v82 = extractelement <8 x double> %v39, i64 2
-  store double %v82, ptr %v74, align 8
-  %v83 = extractelement <8 x double> %v39, i64 3
-  store double %v83, ptr %v75, align 8
-  %v84 = extractelement <8 x double> %v39, i64 4
-  store double %v84, ptr %v76, align 8
-  %v85 = extractelement <8 x double> %v39, i64 5
-  store double %v85, ptr %v77, align 8
-  %v86 = extractelement <8 x double> %v39, i64 6
-  store double %v86, ptr %v78, align 8
-  %v87 = extractelement <8 x double> %v39, i64 7
-  store double %v87, ptr %v79, align 8
-  %v88 = add <8 x i64> %place.now, %v62
-  %v89 = select <8 x i1> %due.now, <8 x i64> %v88, <8 x i64> %v58
-  %v90 = extractelement <8 x i64> %v89, i64 0
-  %v91 = extractelement <8 x i64> %v89, i64 1
-  %v92 = extractelement <8 x i64> %v89, i64 2
-  %v93 = extractelement <8 x i64> %v89, i64 3
-  %v94 = extractelement <8 x i64> %v89, i64 4
-  %v95 = extractelement <8 x i64> %v89, i64 5
-  %v96 = extractelement <8 x i64> %v89, i64 6
-  %v97 = extractelement <8 x i64> %v89, i64 7
-  %v98 = inttoptr i64 %v90 to ptr
-  %v99 = inttoptr i64 %v91 to ptr
-  %v100 = inttoptr i64 %v92 to ptr
-  %v101 = inttoptr i64 %v93 to ptr
-  %v102 = inttoptr i64 %v94 to ptr
-  %v103 = inttoptr i64 %v95 to ptr
-  %v104 = inttoptr i64 %v96 to ptr
-  %v105 = inttoptr i64 %v97 to ptr
-  %v106 = extractelement <8 x double> %v56, i64 0
-  store double %v106, ptr %v98, align 8
-  %v107 = extractelement <8 x double> %v56, i64 1
-  store double %v107, ptr %v99, align 8
-  %v108 = extractelement <8 x double> %v56, i64 2
-  store double %v108, ptr %v100, align 8
-  %v109 = extractelement <8 x double> %v56, i64 3
-  store double %v109, ptr %v101, align 8
-  %v110 = extractelement <8 x double> %v56, i64 4
-  store double %v110, ptr %v102, align 8
-  %v111 = extractelement <8 x double> %v56, i64 5
-  store double %v111, ptr %v103, align 8
-  %v112 = extractelement <8 x double> %v56, i64 6
-  store double %v112, ptr %v104, align 8
-  %v113 = extractelement <8 x double> %v56, i64 7
-  store double %v113, ptr %v105, align 8
-  %v114 = add <8 x i64> %v88, %v62
-  %v115 = select <8 x i1> %due.now, <8 x i64> splat (i64 8), <8 x i64> zeroinitializer
-  %clock.then = add <8 x i64> %clock.now, %v115
-  %place.then = add <8 x i64> %place.now, %v115
-  %v116 = select <8 x i1> %due.now, <8 x i64> splat (i64 1), <8 x i64> zeroinitializer
-  %truth_place.then = add <8 x i64> %truth_place.now, %v116
-  %v117 = extractelement <8 x i64> %clock.then, i64 0
-  %v118 = extractelement <8 x i64> %clock.then, i64 1
-  %v119 = extractelement <8 x i64> %clock.then, i64 2
-  %v120 = extractelement <8 x i64> %clock.then, i64 3
-  %v121 = extractelement <8 x i64> %clock.then, i64 4
-  %v122 = extractelement <8 x i64> %clock.then, i64 5
-  %v123 = extractelement <8 x i64> %clock.then, i64 6
-  %v124 = extractelement <8 x i64> %clock.then, i64 7
-  %v125 = inttoptr i64 %v117 to ptr
-  %v126 = inttoptr i64 %v118 to ptr
-  %v127 = inttoptr i64 %v119 to ptr
-  %v128 = inttoptr i64 %v120 to ptr
-  %v129 = inttoptr i64 %v121 to ptr
-  %v130 = inttoptr i64 %v122 to ptr
-  %v131 = inttoptr i64 %v123 to ptr
-  %v132 = inttoptr i64 %v124 to ptr
-  %v133 = load double, ptr %v125, align 8
-  %v134 = insertelement <8 x double> poison, double %v133, i64 0
-  %v135 = load double, ptr %v126, align 8
-  %v136 = insertelement <8 x double> %v134, double %v135, i64 1
-  %v137 = load double, ptr %v127, align 8
-  %v138 = insertelement <8 x double> %v136, double %v137, i64 2
-  %v139 = load double, ptr %v128, align 8
-  %v140 = insertelement <8 x double> %v138, double %v139, i64 3
-  %v141 = load double, ptr %v129, align 8
-  %v142 = insertelement <8 x double> %v140, double %v141, i64 4
-  %v143 = load double, ptr %v130, align 8
-  %v144 = insertelement <8 x double> %v142, double %v143, i64 5
-  %v145 = load double, ptr %v131, align 8
-  %v146 = insertelement <8 x double> %v144, double %v145, i64 6
-  %v147 = load double, ptr %v132, align 8
-  %v148 = insertelement <8 x double> %v146, double %v147, i64 7
-  %at.then = select <8 x i1> %due.now, <8 x double> %v148, <8 x double> %at.now
-  %v149 = fcmp olt <8 x double> %at.then, %v2
-  %v150 = fcmp ole <8 x double> %at.then, %v2
-  %v151 = select <8 x i1> %v6, <8 x i1> %v149, <8 x i1> %v150
-  %due.then = and <8 x i1> %due.now, %v151
-  %v152 = bitcast <8 x i1> %due.then to i8
-  %v153 = icmp ne i8 %v152, 0
-  br i1 %v153, label %next, label %done
+  %v44 = select <8 x i1> %v27, <8 x double> %v43, <8 x double> %v41
+  %v45 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
+  %v46 = load <8 x double>, ptr %v45, align 64
+  %v47 = fcmp olt <8 x double> %v44, %v46
+  %v48 = or <8 x i1> zeroinitializer, %v47
+  %v49 = getelementptr inbounds <8 x double>, ptr %settings, i64 13
+  %v50 = load <8 x double>, ptr %v49, align 64
+  %v51 = fcmp ogt <8 x double> %v44, %v50
+  %v52 = or <8 x i1> %v48, %v51
+  %v53 = getelementptr inbounds <8 x double>, ptr %lanes, i64 40
+  %v54 = load <8 x double>, ptr %v53, align 64
+  %v55 = getelementptr inbounds <8 x double>, ptr %lanes, i64 38
+  %v56 = load <8 x double>, ptr %v55, align 64
+  %v57 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> %v54, <8 x double> %v56)
+  %v58 = getelementptr inbounds <8 x double>, ptr %lanes, i64 36
+  %v59 = load <8 x double>, ptr %v58, align 64
+  %v60 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v25, <8 x double> %v57, <8 x double> %v59)
+  %v61 = getelementptr inbounds <8 x double>, ptr %lanes, i64 34
+  %v62 = load <8 x double>, ptr %v61, align 64
+  %v63 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> %v60, <8 x double> %v62)
+  %v64 = getelementptr inbounds <8 x double>, ptr %lanes, i64 32
+  %v65 = load <8 x double>, ptr %v64, align 64
+  %v66 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v25, <8 x double> %v63, <8 x double> %v65)
+  %v67 = getelementptr inbounds <8 x double>, ptr %lanes, i64 26
+  %v68 = load <8 x double>, ptr %v67, align 64
+  %v69 = select <8 x i1> %v27, <8 x double> %v68, <8 x double> %v66
+  %v70 = getelementptr inbounds <8 x double>, ptr %settings, i64 12
+  %v71 = load <8 x double>, ptr %v70, align 64
+  %v72 = fcmp olt <8 x double> %v69, %v71
+  %v73 = or <8 x i1> %v52, %v72
+  %v74 = getelementptr inbounds <8 x double>, ptr %settings, i64 14
+  %v75 = load <8 x double>, ptr %v74, align 64
+  %v76 = fcmp ogt <8 x double> %v69, %v75
+  %v77 = or <8 x i1> %v73, %v76
+  %v78 = and <8 x i1> %due.now, %v77
+  %v79 = xor <8 x i1> %v78, splat (i1 true)
+  %v80 = and <8 x i1> %due.now, %v79
+  %v81 = or <8 x i1> %strayed.now, %v78
+  br label %values
+values:
+  %due.good = phi <8 x i1> [ %due.now, %next ], [ %v80, %judge ]
+  %strayed.then = phi <8 x i1> [ %strayed.now, %next ], [ %v81, %judge ]
+  %v82 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  %v83 = load <8 x double>, ptr %v82, align 64
+  %v84 = fsub <8 x double> %at.now, %v83
+  %v85 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
+  %v86 = load <8 x double>, ptr %v85, align 64
+  %v87 = fdiv <8 x double> %v84, %v86
+  %v88 = fsub <8 x double> splat (double 0x3FF0000000000000), %v87
+  %v89 = fcmp oge <8 x double> %at.now, %v2
+  %v90 = getelementptr inbounds <8 x double>, ptr %lanes, i64 39
+  %v91 = load <8 x double>, ptr %v90, align 64
+  %v92 = getelementptr inbounds <8 x double>, ptr %lanes, i64 37
+  %v93 = load <8 x double>, ptr %v92, align 64
+  %v94 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v88, <8 x double> %v91, <8 x double> %v93)
+  %v95 = getelementptr inbounds <8 x double>, ptr %lanes, i64 35
+  %v96 = load <8 x double>, ptr %v95, align 64
+  %v97 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v87, <8 x double> %v94, <8 x double> %v96)
+  %v98 = getelementptr inbounds <8 x double>, ptr %lanes, i64 33
+  %v99 = load <8 x double>, ptr %v98, align 64
+  %v100 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v88, <8 x double> %v97, <8 x double> %v99)
+  %v101 = getelementptr inbounds <8 x double>, ptr %lanes, i64 31
+  %v102 = load <8 x double>, ptr %v101, align 64
+  %v103 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v87, <8 x double> %v100, <8 x double> %v102)
+  %v104 = getelementptr inbounds <8 x double>, ptr %lanes, i64 25
+  %v105 = load <8 x double>, ptr %v104, align 64
+  %v106 = select <8 x i1> %v89, <8 x double> %v105, <8 x double> %v103
+  %v107 = getelementptr inbounds <8 x double>, ptr %lanes, i64 40
+  %v108 = load <8 x double>, ptr %v107, align 64
+  %v109 = getelementptr inbounds <8 x double>, ptr %lanes, i64 38
+  %v110 = load <8 x double>, ptr %v109, align 64
+  %v111 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v88, <8 x double> %v108, <8 x double> %v110)
+  %v112 = getelementptr inbounds <8 x double>, ptr %lanes, i64 36
+  %v113 = load <8 x double>, ptr %v112, align 64
+  %v114 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v87, <8 x double> %v111, <8 x double> %v113)
+  %v115 = getelementptr inbounds <8 x double>, ptr %lanes, i64 34
+  %v116 = load <8 x double>, ptr %v115, align 64
+  %v117 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v88, <8 x double> %v114, <8 x double> %v116)
+  %v118 = getelementptr inbounds <8 x double>, ptr %lanes, i64 32
+  %v119 = load <8 x double>, ptr %v118, align 64
+  %v120 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v87, <8 x double> %v117, <8 x double> %v119)
+  %v121 = getelementptr inbounds <8 x double>, ptr %lanes, i64 26
+  %v122 = load <8 x double>, ptr %v121, align 64
+  %v123 = select <8 x i1> %v89, <8 x double> %v122, <8 x double> %v120
+  %v124 = getelementptr inbounds <8 x i64>, ptr %settings, i64 8
+  %v125 = load <8 x i64>, ptr %v124, align 64
+  %v126 = getelementptr inbounds <8 x i64>, ptr %settings, i64 7
+  %v127 = load <8 x i64>, ptr %v126, align 64
+  %v128 = getelementptr inbounds <8 x i64>, ptr %settings, i64 6
+  %v129 = load <8 x i64>, ptr %v128, align 64
+  %v130 = select <8 x i1> %due.good, <8 x i64> %place.now, <8 x i64> %v125
+  %v131 = extractelement <8 x i64> %v130, i64 0
+  %v132 = extractelement <8 x i64> %v130, i64 1
+  %v133 = extractelement <8 x i64> %v130, i64 2
+  %v134 = extractelement <8 x i64> %v130, i64 3
+  %v135 = extractelement <8 x i64> %v130, i64 4
+  %v136 = extractelement <8 x i64> %v130, i64 5
+  %v137 = extractelement <8 x i64> %v130, i64 6
+  %v138 = extractelement <8 x i64> %v130, i64 7
+  %v139 = inttoptr i64 %v131 to ptr
+  %v140 = inttoptr i64 %v132 to ptr
+  %v141 = inttoptr i64 %v133 to ptr
+  %v142 = inttoptr i64 %v134 to ptr
+  %v143 = inttoptr i64 %v135 to ptr
+  %v144 = inttoptr i64 %v136 to ptr
+  %v145 = inttoptr i64 %v137 to ptr
+  %v146 = inttoptr i64 %v138 to ptr
+  %v147 = extractelement <8 x double> %v106, i64 0
+  store double %v147, ptr %v139, align 8
+  %v148 = extractelement <8 x double> %v106, i64 1
+  store double %v148, ptr %v140, align 8
+  %v149 = extractelement <8 x double> %v106, i64 2
+  store double %v149, ptr %v141, align 8
+  %v150 = extractelement <8 x double> %v106, i64 3
+  store double %v150, ptr %v142, align 8
+  %v151 = extractelement <8 x double> %v106, i64 4
+  store double %v151, ptr %v143, align 8
+  %v152 = extractelement <8 x double> %v106, i64 5
+  store double %v152, ptr %v144, align 8
+  %v153 = extractelement <8 x double> %v106, i64 6
+  store double %v153, ptr %v145, align 8
+  %v154 = extractelement <8 x double> %v106, i64 7
+  store double %v154, ptr %v146, align 8
+  %v155 = add <8 x i64> %place.now, %v129
+  %v156 = select <8 x i1> %due.good, <8 x i64> %v155, <8 x i64> %v125
+  %v157 = extractelement <8 x i64> %v156, i64 0
+  %v158 = extractelement <8 x i64> %v156, i64 1
+  %v159 = extractelement <8 x i64> %v156, i64 2
+  %v160 = extractelement <8 x i64> %v156, i64 3
+  %v161 = extractelement <8 x i64> %v156, i64 4
+  %v162 = extractelement <8 x i64> %v156, i64 5
+  %v163 = extractelement <8 x i64> %v156, i64 6
+  %v164 = extractelement <8 x i64> %v156, i64 7
+  %v165 = inttoptr i64 %v157 to ptr
+  %v166 = inttoptr i64 %v158 to ptr
+  %v167 = inttoptr i64 %v159 to ptr
+  %v168 = inttoptr i64 %v160 to ptr
+  %v169 = inttoptr i64 %v161 to ptr
+  %v170 = inttoptr i64 %v162 to ptr
+  %v171 = inttoptr i64 %v163 to ptr
+  %v172 = inttoptr i64 %v164 to ptr
+  %v173 = extractelement <8 x double> %v123, i64 0
+  store double %v173, ptr %v165, align 8
+  %v174 = extractelement <8 x double> %v123, i64 1
+  store double %v174, ptr %v166, align 8
+  %v175 = extractelement <8 x double> %v123, i64 2
+  store double %v175, ptr %v167, align 8
+  %v176 = extractelement <8 x double> %v123, i64 3
+  store double %v176, ptr %v168, align 8
+  %v177 = extractelement <8 x double> %v123, i64 4
+  store double %v177, ptr %v169, align 8
+  %v178 = extractelement <8 x double> %v123, i64 5
+  store double %v178, ptr %v170, align 8
+  %v179 = extractelement <8 x double> %v123, i64 6
+  store double %v179, ptr %v171, align 8
+  %v180 = extractelement <8 x double> %v123, i64 7
+  store double %v180, ptr %v172, align 8
+  %v181 = add <8 x i64> %v155, %v129
+  %v182 = select <8 x i1> %due.good, <8 x i64> splat (i64 8), <8 x i64> zeroinitializer
+  %clock.then = add <8 x i64> %clock.now, %v182
+  %place.then = add <8 x i64> %place.now, %v182
+  %v183 = select <8 x i1> %due.good, <8 x i64> splat (i64 1), <8 x i64> zeroinitializer
+  %truth_place.then = add <8 x i64> %truth_place.now, %v183
+  %v184 = extractelement <8 x i64> %clock.then, i64 0
+  %v185 = extractelement <8 x i64> %clock.then, i64 1
+  %v186 = extractelement <8 x i64> %clock.then, i64 2
+  %v187 = extractelement <8 x i64> %clock.then, i64 3
+  %v188 = extractelement <8 x i64> %clock.then, i64 4
+  %v189 = extractelement <8 x i64> %clock.then, i64 5
+  %v190 = extractelement <8 x i64> %clock.then, i64 6
+  %v191 = extractelement <8 x i64> %clock.then, i64 7
+  %v192 = inttoptr i64 %v184 to ptr
+  %v193 = inttoptr i64 %v185 to ptr
+  %v194 = inttoptr i64 %v186 to ptr
+  %v195 = inttoptr i64 %v187 to ptr
+  %v196 = inttoptr i64 %v188 to ptr
+  %v197 = inttoptr i64 %v189 to ptr
+  %v198 = inttoptr i64 %v190 to ptr
+  %v199 = inttoptr i64 %v191 to ptr
+  %v200 = load double, ptr %v192, align 8
+  %v201 = insertelement <8 x double> poison, double %v200, i64 0
+  %v202 = load double, ptr %v193, align 8
+  %v203 = insertelement <8 x double> %v201, double %v202, i64 1
+  %v204 = load double, ptr %v194, align 8
+  %v205 = insertelement <8 x double> %v203, double %v204, i64 2
+  %v206 = load double, ptr %v195, align 8
+  %v207 = insertelement <8 x double> %v205, double %v206, i64 3
+  %v208 = load double, ptr %v196, align 8
+  %v209 = insertelement <8 x double> %v207, double %v208, i64 4
+  %v210 = load double, ptr %v197, align 8
+  %v211 = insertelement <8 x double> %v209, double %v210, i64 5
+  %v212 = load double, ptr %v198, align 8
+  %v213 = insertelement <8 x double> %v211, double %v212, i64 6
+  %v214 = load double, ptr %v199, align 8
+  %v215 = insertelement <8 x double> %v213, double %v214, i64 7
+  %at.then = select <8 x i1> %due.good, <8 x double> %v215, <8 x double> %at.now
+  %v216 = fcmp olt <8 x double> %at.then, %v2
+  %v217 = fcmp ole <8 x double> %at.then, %v2
+  %v218 = select <8 x i1> %v6, <8 x i1> %v216, <8 x i1> %v217
+  %due.then = and <8 x i1> %due.good, %v218
+  %v219 = bitcast <8 x i1> %due.then to i8
+  %v220 = icmp ne i8 %v219, 0
+  br i1 %v220, label %next, label %done
 done:
-  %v154 = getelementptr inbounds <8 x double>, ptr %lanes, i64 3
-  store <8 x double> %at.then, ptr %v154, align 64
-  %v155 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 15
-  store <8 x i64> %clock.then, ptr %v155, align 64
-  %v156 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 16
-  store <8 x i64> %place.then, ptr %v156, align 64
-  %v157 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 17
-  store <8 x i64> %truth_place.then, ptr %v157, align 64
-  ret void
+  %v221 = getelementptr inbounds <8 x double>, ptr %lanes, i64 3
+  store <8 x double> %at.then, ptr %v221, align 64
+  %v222 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 15
+  store <8 x i64> %clock.then, ptr %v222, align 64
+  %v223 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 16
+  store <8 x i64> %place.then, ptr %v223, align 64
+  %v224 = getelementptr inbounds <8 x i64>, ptr %lanes, i64 17
+  store <8 x i64> %truth_place.then, ptr %v224, align 64
+  %v225 = select <8 x i1> %strayed.then, <8 x double> %at.then, <8 x double> %v2
+  %v226 = getelementptr inbounds <8 x double>, ptr %lanes, i64 0
+  store <8 x double> %v225, ptr %v226, align 64
+  %v227 = bitcast <8 x i1> %strayed.then to i8
+  %v228 = zext i8 %v227 to i64
+  ret i64 %v228
 }
 
 define void @uq_outcomes(ptr noalias readonly %given, ptr noalias %taken, i64 %groups) #0 {
@@ -910,3 +1006,4 @@ declare <8 x double> @llvm.fma.v8f64(<8 x double>, <8 x double>, <8 x double>)
 declare <8 x double> @llvm.sqrt.v8f64(<8 x double>)
 
 attributes #0 = { nounwind }
+attributes #1 = { nounwind alignstack=64 }

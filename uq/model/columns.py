@@ -9,17 +9,22 @@ from __future__ import annotations
 from collections.abc import Callable
 from typing import Protocol
 
+from uq.model.pair import Pair
 from uq.model.writer import V, Writer
 
 Index = int | str
 Rates = Callable[[Callable[[], str], Callable[[int], str]], list[str]]
 
 
-class Column(Protocol):
-    """One value per state."""
+class Readable(Protocol):
+    """One value per state, to read."""
 
     def get(self, i: Index) -> str:
         """The value of state i."""
+
+
+class Column(Readable, Protocol):
+    """One value per state."""
 
     def put(self, i: Index, value: str) -> None:
         """Set the value of state i."""
@@ -147,7 +152,8 @@ Form = type[WrittenOut] | type[Looped]
 LARGEST_WRITTEN_OUT = 1500
 
 
-def form_for(states: int, operations: int) -> Form:
+def form_for(states: int, operations: int, pair: Pair) -> Form:
     """Written out or looped, by the number of states and of operations in all their rates."""
-    in_a_step = 6 * operations + 60 * states
+    combinations = sum(1 for row in (*pair.a, *pair.extra, *pair.e, *pair.d) for weight in row if weight)
+    in_a_step = (pair.all_stages - 1) * operations + (combinations + 28) * states
     return WrittenOut if in_a_step <= LARGEST_WRITTEN_OUT else Looped

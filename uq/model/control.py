@@ -1,8 +1,9 @@
 """Step size control as vector instructions: powers of the error by own means, so that no library function is called.
 
-The controller is the proportional-integral one of DOPRI5 (Hairer, Norsett, Wanner, Solving ODEs I, 2nd ed., II.4 and its appendix):
-h_new = h * 0.9 * err^-0.17 * err_old^0.04 within [0.2, 10], err_old at least 1e-4; after a refusal h * 0.9 * err^-0.17, and no growth
-in the next accepted step. It is worked out in logarithms of the squared error, which spares roots and powers.
+The controller is the proportional-integral one of DOPRI5 and DOP853 (Hairer, Norsett, Wanner, Solving ODEs I, 2nd ed., II.4 and its
+appendix): h_new = h * 0.9 * err^-alpha * err_old^beta within [least, most] * h, err_old at least 1e-4; after a refusal
+h * 0.9 * err^-alpha, and no growth in the next accepted step. The four numbers belong to the pair. It is worked out in logarithms of the
+squared error, which spares roots and powers.
 """
 
 from __future__ import annotations
@@ -11,13 +12,10 @@ from math import log2
 
 from uq.model.writer import I, V, Writer, constant
 
-BETA = 0.04
-ALPHA = 0.2 - 0.75 * BETA
 SAFETY = 0.9
-LEAST, MOST = 0.2, 10.0
 LEAST_OLD_ERROR = 1e-4
 START_LOG_ERROR = 2 * log2(LEAST_OLD_ERROR)
-LOG_LEAST, LOG_MOST, LOG_SAFETY = log2(LEAST), log2(MOST), log2(SAFETY)
+LOG_SAFETY = log2(SAFETY)
 # Chebyshev interpolants on [1, 2] and [-1/2, 1/2], worked out with numpy and rounded to seven digits: errors below 2e-5 and 3e-6. More is
 # not needed: a step factor is no part of the solution, it must only be the same on every processor.
 LOG2 = (-2.7879262, 5.0478554, -3.4898786, 1.5894743, -0.4025134, 0.043005)

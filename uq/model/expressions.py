@@ -1,7 +1,11 @@
 """Writes nodes of the expression graph as vector instructions.
 
 The order of operations is the user's; a sum with a product that nothing else needs becomes one fma. Small whole powers are written as
-multiplications, powers of one half as square roots. Truths are vectors of i1, numbers vectors of doubles.
+multiplications, powers of one half as square roots. Numbers are vectors of doubles, truths are vectors of i1.
+
+Truths have three values (Kleene, Introduction to Metamathematics, 1952, section 64): true, false, and unknown where a number that is
+compared is not one. `not unknown` is unknown; `and` is false where either side is false, `or` is true where either side is true, else
+unknown where either side is unknown. `where` of an unknown condition is not a number. So what is not known never counts as false.
 """
 
 from __future__ import annotations
@@ -10,10 +14,13 @@ from collections import Counter
 from collections.abc import Callable, Iterable, Mapping
 
 from uq.lang.graph import Node
-from uq.model.writer import ONE, ZERO, M, Writer, constant
+from uq.model.tables import KINDS as TABLE_KINDS
+from uq.model.tables import function_name
+from uq.model.writer import ONE, ZERO, Writer, constant
 
 TRUTHS = {"<": "olt", "<=": "ole", ">": "ogt", ">=": "oge"}
 LOGIC = ("and", "or", "not")
+NAN = constant(float("nan"))
 PLAIN = {"+": "fadd", "-": "fsub", "*": "fmul", "/": "fdiv"}
 # Up to here multiplications stay within 2 ulp (x*x*x*x as (x*x)*(x*x): 1.5 ulp); beyond, they are less exact than the general power.
 LARGEST_WRITTEN_POWER = 4
@@ -41,10 +48,11 @@ class Expressions:
     def __init__(self, writer: Writer, leaf: Callable[[str], str], known: Mapping[int, Callable[[], str]]) -> None:
         self.w, self._leaf, self._known = writer, leaf, known
         self._values: dict[int, str] = {}
+        self._unknown: dict[int, str] = {}  # of truths that can be unknown, where they are
         self._uses: Counter[int] = Counter()
 
     def values(self, roots: Iterable[Node]) -> list[str]:
-        """The values of the roots, in their order; what they share is written once."""
+        """The values of the roots, in their order; what they share is written once. Of a truth where it is true."""
         roots = list(roots)
         nodes = needed(roots, self._known)
         self._uses.update(root.id for root in roots)
@@ -54,6 +62,19 @@ class Expressions:
             if node.id not in self._values and node.id not in pending:
                 self._values[node.id] = self._write(node)
         return [self._values[root.id] for root in roots]
+
+    def number(self, node: Node) -> str:
+        """A node whose value is written, as a number: a truth is 1 or 0, not a number where it is unknown."""
+        value, unknown = self._values[node.id], self._unknown.get(node.id)
+        number = self.w.select(value, ONE, ZERO) if is_truth(node) else value
+        return number if unknown is None else self.w.select(unknown, NAN, number)
+
+    def truth(self, node: Node) -> tuple[str, str | None]:
+        """Where a node whose value is written is true and where it is unknown (None: nowhere); a number is true where it is not 0."""
+        value = self._values[node.id]
+        if is_truth(node):
+            return value, self._unknown.get(node.id)
+        return self.w.compare("one", value, ZERO), self.w.compare("uno", value, value)
 
     def _fused(self, nodes: list[Node]) -> set[int]:
         """Products that are written within the one sum that needs them."""
@@ -80,12 +101,50 @@ class Expressions:
             return constant(node.value if isinstance(node.value, float) else 0.0)
         if node.op == "name":
             return self._leaf(str(node.value))
+        if node.op in TABLE_KINDS:
+            return self.w.call(function_name(node.op, str(node.value)), self._values[node.args[0].id])
         product = self._product(node)
         if product is not None:
             return self._sum(node, product)
         if node.op == "**":
             return self._power(node)
+        if is_truth(node):
+            return self._truth(node)
+        if node.op == "where":
+            return self._where(node)
         return self._operation(node.op, [self._values[arg.id] for arg in node.args])
+
+    def _truth(self, node: Node) -> str:
+        """Where a truth is true; notes where it is unknown."""
+        w, args = self.w, [self._values[arg.id] for arg in node.args]
+        if node.op in TRUTHS:
+            doubtful = [value for arg, value in zip(node.args, args, strict=True) if not surely_number(arg)]
+            if doubtful:
+                self._unknown[node.id] = w.compare("uno", doubtful[0], doubtful[-1])
+            return w.compare(TRUTHS[node.op], *args)
+        unknowns = [self._unknown[arg.id] for arg in node.args if arg.id in self._unknown]
+        unknown = w.either(*unknowns) if len(unknowns) == 2 else unknowns[0] if unknowns else None
+        if node.op == "not":
+            if unknown is not None:
+                self._unknown[node.id] = unknown
+            return w.opposite(args[0] if unknown is None else w.either(args[0], unknown))
+        value = w.logic(node.op, *args)
+        if unknown is not None:
+            self._unknown[node.id] = self._undecided(node, args, unknown, value)
+        return value
+
+    def _undecided(self, node: Node, args: list[str], unknown: str, value: str) -> str:
+        """Where an `and` or `or` with an unknown side is not decided by the other one."""
+        w = self.w
+        if node.op == "or":
+            return w.both(unknown, w.opposite(value))
+        possible = [w.either(v, self._unknown[arg.id]) if arg.id in self._unknown else v for arg, v in zip(node.args, args, strict=True)]
+        return w.both(unknown, w.both(*possible))
+
+    def _where(self, node: Node) -> str:
+        value = self.w.select(*(self._values[arg.id] for arg in node.args))
+        unknown = self._unknown.get(node.args[0].id)
+        return value if unknown is None else self.w.select(unknown, NAN, value)
 
     def _sum(self, node: Node, product: Node) -> str:
         w = self.w
@@ -100,16 +159,10 @@ class Expressions:
         w = self.w
         if op in PLAIN:
             return w.binary(PLAIN[op], *args)
-        if op in TRUTHS:
-            return w.compare(TRUTHS[op], *args)
-        if op in ("and", "or"):
-            return w.logic(op, *args)
         if op in ("min", "max"):
             return self._extreme("olt" if op == "min" else "ogt", *args)
-        one = {"neg": w.negative, "abs": w.size, "sqrt": w.root, "not": w.opposite}
-        if op in one:
-            return one[op](*args)
-        return w.select(*args) if op == "where" else w.call(f"uq_{op}", *args)
+        one = {"neg": w.negative, "abs": w.size, "sqrt": w.root}
+        return one[op](*args) if op in one else w.call(f"uq_{op}", *args)
 
     def _extreme(self, how: str, a: str, b: str) -> str:
         """min or max; not a number where either is not."""
@@ -142,14 +195,14 @@ def whole_power(w: Writer, base: str, exponent: int) -> str:
     return {2: lambda: square, 3: lambda: w.times(square, base), 4: lambda: w.times(square, square)}[exponent]()
 
 
-def as_number(w: Writer, truth: str) -> str:
-    """1 where it is true, else 0."""
-    return w.select(truth, ONE, ZERO)
-
-
 def is_truth(node: Node) -> bool:
     """Whether a node's value is a truth rather than a number."""
     return node.op in TRUTHS or node.op in LOGIC
 
 
-__all__ = ["Expressions", "M", "as_number", "is_truth", "needed", "whole_power"]
+def surely_number(node: Node) -> bool:
+    """Whether a node is never anything but a number, whatever happens: the time, or a number that stands there."""
+    return node.op == "number" or (node.op == "name" and node.value == "time")
+
+
+__all__ = ["Expressions", "is_truth", "needed", "surely_number", "whole_power"]

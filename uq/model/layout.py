@@ -45,10 +45,12 @@ class Setting(IntEnum):
     attempts = 1  # most steps and rejections of one member
     shortest = 2  # shortest step at time 0
     moment = 3  # a time that is nothing beside the whole
+    longest = 4  # longest step of a model whose rates depend on time otherwise than by forcings and moments that are landed on
+    ranged = 5  # 1 where any state has a lowest or highest valid value
     # 64-bit integers
-    stride = 4  # bytes from one observed value to the next, in the table of values
-    truth_stride = 5  # the same in the table of conditions
-    scrap = 6  # an address where lanes without an output may write
+    stride = 6  # bytes from one observed value to the next, in the table of values
+    truth_stride = 7  # the same in the table of conditions
+    scrap = 8  # an address where lanes without an output may write
 
 
 @dataclass(frozen=True)
@@ -61,6 +63,10 @@ class Layout:
     forcings: int
     observed: int
     conditions: int
+    smooth: int = 0  # forcings that are cubics within a segment
+    inner: int = 0  # 2 where rates turn at moments of time: first and last time within the segment that they are asked for
+    curve_parts: int = 5  # coefficients of the continuous extension for every state
+    spare_columns: int = 7  # new states and stages for every state
 
     @property
     def first_input(self) -> int:
@@ -83,9 +89,24 @@ class Layout:
         return self.first_base + self.forcings
 
     @property
+    def first_second(self) -> int:
+        """Second coefficients of the smooth forcings."""
+        return self.first_slope + self.forcings
+
+    @property
+    def first_third(self) -> int:
+        """Third coefficients of the smooth forcings."""
+        return self.first_second + self.smooth
+
+    @property
+    def first_inner(self) -> int:
+        """The earliest and the latest time within the segment at which rates are asked for."""
+        return self.first_third + self.smooth
+
+    @property
     def first_state(self) -> int:
         """States where the lane stands."""
-        return self.first_slope + self.forcings
+        return self.first_inner + self.inner
 
     @property
     def first_rate(self) -> int:
@@ -104,18 +125,18 @@ class Layout:
 
     @property
     def first_curve(self) -> int:
-        """Five blocks [state] of the continuous extension of the last accepted step; only valid where an output was due."""
+        """Blocks [state] of the continuous extension of the last accepted step; only valid where an output was due."""
         return self.moved
 
     @property
     def first_spare(self) -> int:
-        """Room for seven columns [state] within a looped step: the new states and the stages after the first."""
-        return self.first_curve + 5 * self.states
+        """Room for columns [state] within a looped step: the new states, the stages after the first, a place for extra stages."""
+        return self.first_curve + self.curve_parts * self.states
 
     @property
     def first_observed(self) -> int:
         """Observed values at an output time, on their way to the table where there are many of them."""
-        return self.first_spare + 7 * self.states
+        return self.first_spare + self.spare_columns * self.states
 
     @property
     def slots(self) -> int:

@@ -6,12 +6,12 @@ from collections.abc import Callable
 from functools import cache
 
 from uq.lang.graph import Node
-from uq.model.columns import Memory
-from uq.model.expressions import Expressions, as_number, is_truth
+from uq.model.columns import Index, Memory, Readable, Slots
+from uq.model.expressions import Expressions
 from uq.model.layout import Head, Setting
 from uq.model.points import LANES_POINTER as L
 from uq.model.points import SETTINGS_POINTER as S
-from uq.model.points import Plan, Point, head
+from uq.model.points import Plan, Point, head, outside_range
 from uq.model.writer import ONE, ZERO, I, M, V, Writer
 
 # An observed value takes over thirty instructions to put; beyond this many they go through a loop (1000 of them would compile in 12 s).
@@ -23,6 +23,8 @@ def write_observe(plan: Plan) -> tuple[str, set[str]]:
 
     Observed values and conditions are taken from the continuous extension. Where the output time is the lane's own time (the start, a
     break, the end) the state itself is taken, with the forcings of the present segment. Lanes that have less to write write scrap.
+    Returns the lanes in which a state is outside of its valid range at an output time: nothing is written of them from there on, and the
+    lane's time is that time. (What a state does between two output times within a step is not looked at yet.)
     """
     w = Writer()
     time = head(w, Head.time)
@@ -30,17 +32,18 @@ def write_observe(plan: Plan) -> tuple[str, set[str]]:
     first = [head(w, Head.due), *(w.load_words(L, slot) for slot in (Head.clock, Head.place, Head.truth_place))]
     w.plain("br label %next")
     w.plain("next:")
-    kinds = ((M, "due", due), (V, "at", first[0]), (I, "clock", first[1]), (I, "place", first[2]), (I, "truth_place", first[3]))
+    places = ((I, "clock", first[1]), (I, "place", first[2]), (I, "truth_place", first[3]))
+    kinds = ((M, "due", due), (V, "at", first[0]), *places, (M, "strayed", "zeroinitializer"))
     place = len(w.lines)
-    point = Point(plan, w, lambda: "%at.now", interpolated(plan, w, "%at.now"))
-    put(plan, w, point.values((*plan.equations.observed, *plan.equations.conditions)))
-    step = w.select_words("%due.now", "splat (i64 8)", "zeroinitializer")
+    stray(plan, w)
+    put(plan, w, Point(plan, w, lambda: "%at.now", Interpolated(plan, w, "%at.now", lambda slot: Slots(w, L, slot)).get))
+    step = w.select_words("%due.good", "splat (i64 8)", "zeroinitializer")
     w.plain(f"%clock.then = add {I} %clock.now, {step}")
     w.plain(f"%place.then = add {I} %place.now, {step}")
-    w.plain(f"%truth_place.then = add {I} %truth_place.now, {w.select_words('%due.now', 'splat (i64 1)', 'zeroinitializer')}")
-    w.plain(f"%at.then = select {M} %due.now, {V} {w.gather('%clock.then')}, {V} %at.now")
+    w.plain(f"%truth_place.then = add {I} %truth_place.now, {w.select_words('%due.good', 'splat (i64 1)', 'zeroinitializer')}")
+    w.plain(f"%at.then = select {M} %due.good, {V} {w.gather('%clock.then')}, {V} %at.now")
     reached = w.select_truth(strict, w.compare("olt", "%at.then", time), w.compare("ole", "%at.then", time))
-    w.plain(f"%due.then = and {M} %due.now, {reached}")
+    w.plain(f"%due.then = and {M} %due.good, {reached}")
     w.plain(f"br i1 {w.any('%due.then')}, label %next, label %done")
     phis = [f"  %{name}.now = phi {kind} [ {value}, %entry ], [ %{name}.then, %{w.block} ]" for kind, name, value in kinds]
     w.lines[place:place] = phis
@@ -48,36 +51,57 @@ def write_observe(plan: Plan) -> tuple[str, set[str]]:
     w.store(L, Head.due, "%at.then")
     for slot in (Head.clock, Head.place, Head.truth_place):
         w.store_words(L, slot, f"%{slot.name}.then")
-    w.plain("ret void")
-    head_line = "define void @uq_observe(ptr noalias %lanes, ptr noalias readonly %settings, i64 %due, i64 %strict) #0 {"
+    w.store(L, Head.time, w.select("%strayed.then", "%at.then", time))
+    w.plain(f"ret i64 {w.mask('%strayed.then')}")
+    head_line = "define i64 @uq_observe(ptr noalias %lanes, ptr noalias readonly %settings, i64 %due, i64 %strict) #0 {"
     return "\n".join([head_line, "entry:", *w.lines, "}", ""]), w.called
 
 
-def interpolated(plan: Plan, w: Writer, at: str) -> Callable[[int], str]:
-    """The states at the times `at` (see `Pair`), each written when it is asked for."""
-    layout = plan.layout
-    theta = w.over(w.minus(at, head(w, Head.step_from)), head(w, Head.step_taken))
-    rest = w.minus(ONE, theta)
-    here = w.compare("oge", at, head(w, Head.time))
+def stray(plan: Plan, w: Writer) -> None:
+    """Leave in %due.good the lanes in %due.now whose states are valid at the output time, in %strayed.then those that are not by now."""
+    begin = w.block
+    w.branch(w.any(w.compare("ogt", w.load(S, Setting.ranged), ZERO)), "judge", "values")
+    over = plan.over(w)
+    outside = w.both("%due.now", outside_range(plan, w, Interpolated(plan, w, "%at.now", lambda slot: over.stored(L, slot))))
+    good = w.both("%due.now", w.opposite(outside))
+    strayed = w.either("%strayed.now", outside)
+    judged = w.block
+    w.join("values")
+    w.plain(f"%due.good = phi {M} [ %due.now, %{begin} ], [ {good}, %{judged} ]")
+    w.plain(f"%strayed.then = phi {M} [ %strayed.now, %{begin} ], [ {strayed}, %{judged} ]")
 
-    def state(i: int) -> str:
-        y, difference, third, fourth, fifth = (w.load(L, layout.first_curve + part * layout.states + i) for part in range(5))
-        inner = w.fma(theta, w.fma(rest, fifth, fourth), third)
-        return w.select(here, w.load(L, layout.first_state + i), w.fma(theta, w.fma(rest, inner, difference), y))
 
-    return state
+class Interpolated:
+    """The states at the times `at` as a column to read (see `Pair`), each written when it is asked for."""
+
+    def __init__(self, plan: Plan, w: Writer, at: str, columns: Callable[[int], Readable]) -> None:
+        layout = plan.layout
+        self._w = w
+        self._parts = [columns(layout.first_curve + part * layout.states) for part in range(layout.curve_parts)]
+        self._state = columns(layout.first_state)
+        self._theta = w.over(w.minus(at, head(w, Head.step_from)), head(w, Head.step_taken))
+        self._rest = w.minus(ONE, self._theta)
+        self._here = w.compare("oge", at, head(w, Head.time))
+
+    def get(self, i: Index) -> str:
+        """The value of state i."""
+        w, parts = self._w, self._parts
+        value = parts[-1].get(i)
+        for place in range(len(parts) - 2, -1, -1):
+            value = w.fma(self._rest if place % 2 else self._theta, value, parts[place].get(i))
+        return w.select(self._here, self._state.get(i), value)
 
 
-def put(plan: Plan, w: Writer, values: list[str]) -> None:
+def put(plan: Plan, w: Writer, point: Point) -> None:
     """Write observed values and conditions of the lanes that are due into the tables, the rest into scrap."""
     equations, observed = plan.equations, plan.layout.observed
+    point.values((*equations.observed, *equations.conditions))  # together, so that what they share is written once
     scrap, truth_stride = w.load_words(S, Setting.scrap), w.load_words(S, Setting.truth_stride)
-    numbers = [as_number(w, v) if is_truth(node) else v for node, v in zip(equations.observed, values[:observed], strict=True)]
     address = "%truth_place.now"
-    for node, value in zip(equations.conditions, values[observed:], strict=True):
-        truth = value if is_truth(node) else w.compare("une", value, ZERO)
-        w.scatter_truth(w.select_words("%due.now", address, scrap), truth)
+    for node in equations.conditions:
+        w.scatter_truth(w.select_words("%due.good", address, scrap), *point.truth(node))
         address = w.add_words(address, truth_stride)
+    numbers = [point.number(node) for node in equations.observed]
     (put_each if observed <= MOST_PUT_ONE_BY_ONE else put_looped)(plan, w, numbers, scrap)
 
 
@@ -85,7 +109,7 @@ def put_each(plan: Plan, w: Writer, numbers: list[str], scrap: str) -> None:
     """Write observed values into the table by an instruction each."""
     stride, address = w.load_words(S, Setting.stride), "%place.now"
     for number in numbers:
-        w.scatter(w.select_words("%due.now", address, scrap), number)
+        w.scatter(w.select_words("%due.good", address, scrap), number)
         address = w.add_words(address, stride)
 
 
@@ -96,7 +120,7 @@ def put_looped(plan: Plan, w: Writer, numbers: list[str], scrap: str) -> None:
         column.put(k, number)
 
     def move(k: str, address: str) -> str:
-        w.scatter(w.select_words("%due.now", address, scrap), column.get(k))
+        w.scatter(w.select_words("%due.good", address, scrap), column.get(k))
         return w.add_words(address, stride)
 
     w.loop_carrying(len(numbers), I, "%place.now", move)
@@ -124,9 +148,10 @@ def write_table(name: str, nodes: tuple[Node, ...], width: int, place: Callable[
     """A function that goes through %groups groups of `width` slots at %given and leaves the values of `nodes` in groups at %taken."""
     w = Writer()
     load = cache(lambda slot: w.load("%from", slot))
-    values = Expressions(w, lambda leaf: load(place(leaf)), {}).values(nodes)
-    for k, (node, value) in enumerate(zip(nodes, values, strict=True)):
-        w.store("%to", k, as_number(w, value) if is_truth(node) else value)
+    expressions = Expressions(w, lambda leaf: load(place(leaf)), {})
+    expressions.values(nodes)
+    for k, node in enumerate(nodes):
+        w.store("%to", k, expressions.number(node))
     text = f"""define void @{name}(ptr noalias readonly %given, ptr noalias %taken, i64 %groups) #0 {{
 entry:
   %some = icmp sgt i64 %groups, 0

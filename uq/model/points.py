@@ -7,32 +7,40 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterable
 from dataclasses import dataclass
+from functools import cache
 
 from uq.lang.graph import Node
-from uq.model.code import Equations
-from uq.model.columns import Column, Form, Looped, WrittenOut, form_for
+from uq.model.code import Equations, Moments
+from uq.model.columns import Column, Form, Looped, Readable, WrittenOut, form_for
 from uq.model.expressions import Expressions, is_truth, needed
-from uq.model.layout import Head, Layout
-from uq.model.tableau import Pair
-from uq.model.writer import ZERO, M, V, Writer
+from uq.model.layout import Head, Layout, Setting
+from uq.model.moments import driven_by_time, moments_of
+from uq.model.pair import Pair
+from uq.model.writer import ZERO, M, V, Writer, constant
 
 LANES_POINTER, SETTINGS_POINTER = "%lanes", "%settings"
+# Step lengths below this many rounding units of the time cannot be told from nothing.
+SHORTEST_IN_ULPS = 16 * 2.0**-52
 
 
 @dataclass(frozen=True)
 class Plan:
-    """What is to be written: equations, pair, slots, the hoisted nodes in the order of their slots, and how to go over the states."""
+    """What is to be written: equations, pair, slots, the hoisted nodes in the order of their slots, how to go over the states, at which
+    moments rates turn, and whether steps are bounded by a part of the whole time.
+    """
 
     equations: Equations
     pair: Pair
     layout: Layout
     hoisted: tuple[Node, ...]
     form: Form
+    moments: Moments
+    bounded: bool
 
     @classmethod
     def of(cls, equations: Equations, pair: Pair) -> Plan:
         """Find what depends on inputs alone, number all slots, choose the form."""
-        hoisted = hoistable(equations)
+        hoisted, moments = hoistable(equations), moments_of(equations)
         layout = Layout(
             len(equations.inputs),
             len(hoisted),
@@ -40,13 +48,18 @@ class Plan:
             len(equations.forcings),
             len(equations.observed),
             len(equations.conditions),
+            smooth=sum(forcing.interpolation == "smooth" for forcing in equations.forcings),
+            inner=2 if moments.turns else 0,
+            curve_parts=4 + len(pair.d),
+            spare_columns=pair.all_stages + (1 if pair.extra else 0),
         )
         operations = [node for node in needed(equations.rates, {node.id: node for node in hoisted}) if node.args]
-        return cls(equations, pair, layout, hoisted, form_for(layout.states, len(operations)))
+        form = form_for(layout.states, len(operations), pair)
+        return cls(equations, pair, layout, hoisted, form, moments, driven_by_time(equations))
 
     def over(self, w: Writer) -> WrittenOut | Looped:
         """The way over the states in a function."""
-        return self.form(w, self.layout.states, lambda time, state: Point(self, w, time, state).values(self.equations.rates))
+        return self.form(w, self.layout.states, lambda time, state: rates_at(self, w, time, state))
 
 
 def hoistable(equations: Equations) -> tuple[Node, ...]:
@@ -76,6 +89,14 @@ class Point:
         """The values of nodes here; what they share is written once."""
         return self._expressions.values(nodes)
 
+    def number(self, node: Node) -> str:
+        """A node whose value is written, as a number; not a number where a truth is unknown."""
+        return self._expressions.number(node)
+
+    def truth(self, node: Node) -> tuple[str, str | None]:
+        """Where a node whose value is written is true, and where it is unknown (None: nowhere)."""
+        return self._expressions.truth(node)
+
     def _leaf(self, name: str) -> str:
         layout, w = self._plan.layout, self._w
         if name in self._states:
@@ -84,14 +105,42 @@ class Point:
             return w.load(LANES_POINTER, layout.first_input + self._places[name])
         if name == "time":
             return self._time()
-        k = [forcing.name for forcing in self._plan.equations.forcings].index(name)
+        return self._forcing([forcing.name for forcing in self._plan.equations.forcings].index(name))
+
+    def _forcing(self, k: int) -> str:
+        """The value of a forcing, from its coefficients within the segment."""
+        layout, w, forcings = self._plan.layout, self._w, self._plan.equations.forcings
         since = w.minus(self._time(), head(w, Head.segment_from))
-        return w.fma(w.load(LANES_POINTER, layout.first_slope + k), since, w.load(LANES_POINTER, layout.first_base + k))
+        slope = w.load(LANES_POINTER, layout.first_slope + k)
+        if forcings[k].interpolation == "smooth":
+            place = sum(forcing.interpolation == "smooth" for forcing in forcings[:k])
+            second, third = (w.load(LANES_POINTER, first + place) for first in (layout.first_second, layout.first_third))
+            slope = w.fma(w.fma(third, since, second), since, slope)
+        return w.fma(slope, since, w.load(LANES_POINTER, layout.first_base + k))
+
+
+def rates_at(plan: Plan, w: Writer, time: Callable[[], str], state: Callable[[int], str]) -> list[str]:
+    """The rates of all states at a time; where they turn at moments of time, at a time strictly inside the segment.
+
+    Then a rate that jumps at an end of the segment has the values of this segment, at its ends too.
+    """
+
+    @cache
+    def inside() -> str:
+        first = plan.layout.first_inner
+        return w.smaller(w.larger(time(), w.load(LANES_POINTER, first)), w.load(LANES_POINTER, first + 1))
+
+    return Point(plan, w, inside if plan.layout.inner else time, state).values(plan.equations.rates)
 
 
 def head(w: Writer, slot: Head) -> str:
     """A head slot as it was when the function began."""
     return w.load(LANES_POINTER, slot)
+
+
+def shortest_step(w: Writer, time: str) -> str:
+    """The shortest step that can be told from nothing at a time."""
+    return w.fma(constant(SHORTEST_IN_ULPS), w.size(time), w.load(SETTINGS_POINTER, Setting.shortest))
 
 
 def alive(w: Writer) -> str:
@@ -111,7 +160,7 @@ def finite_part(over: WrittenOut | Looped, w: Writer, columns: Iterable[Column])
     return over.fold(V, ZERO, add)
 
 
-def outside_range(plan: Plan, w: Writer, states: Column) -> str:
+def outside_range(plan: Plan, w: Writer, states: Readable) -> str:
     """The lanes in which any state is below its lowest or above its highest valid value."""
     over, layout = plan.over(w), plan.layout
     lowest, highest = over.stored(SETTINGS_POINTER, layout.first_lowest), over.stored(SETTINGS_POINTER, layout.first_highest)
@@ -124,16 +173,17 @@ def outside_range(plan: Plan, w: Writer, states: Column) -> str:
     return over.fold(M, "zeroinitializer", check)
 
 
-def function(w: Writer, name: str) -> str:
+def function(w: Writer, name: str, attributes: str = "#0") -> str:
     """The whole text of a function over a lane group whose body, return included, is in `w`."""
-    return "\n".join([f"define i64 @{name}(ptr noalias %lanes, ptr noalias readonly %settings) #0 {{", "entry:", *w.lines, "}", ""])
+    return "\n".join(
+        [f"define i64 @{name}(ptr noalias %lanes, ptr noalias readonly %settings) {attributes} {{", "entry:", *w.lines, "}", ""]
+    )
 
 
 def write_system(plan: Plan) -> tuple[str, set[str]]:
     """The text of `@uq_system`, which looped functions call: the rates at %time and %states, left at %rates."""
     w = Writer()
-    rates = Point(plan, w, lambda: "%time", lambda i: w.load("%states", i)).values(plan.equations.rates)
-    for i, rate in enumerate(rates):
+    for i, rate in enumerate(rates_at(plan, w, lambda: "%time", lambda i: w.load("%states", i))):
         w.store("%rates", i, rate)
     w.plain("ret void")
     pointers = f"ptr readonly %lanes, {V} %time, ptr readonly %states, ptr %rates"

@@ -15,7 +15,7 @@ from uq.model.expressions import Expressions
 from uq.model.layout import FAILURES, Head, Setting
 from uq.model.points import LANES_POINTER as L
 from uq.model.points import SETTINGS_POINTER as S
-from uq.model.points import Plan, finite_part, function, head, outside_range
+from uq.model.points import Plan, finite_part, function, head, outside_range, shortest_step
 from uq.model.writer import ONE, ZERO, V, Writer, constant
 
 # Where sizes are too small to say anything, the first step is this part of the first segment. (The published algorithm says 1e-6 in the
@@ -50,14 +50,15 @@ def write_start(plan: Plan) -> tuple[str, set[str]]:
 
 
 def first_step(plan: Plan, w: Writer, x: Column, rates: Column) -> str:
-    """The first step length (Hairer, Norsett, Wanner, Solving ODEs I, 2nd ed., II.4, p. 169), at most the first segment."""
+    """The first step length (Hairer, Norsett, Wanner, Solving ODEs I, 2nd ed., II.4, p. 169), at most the first segment, never 0."""
     layout, over = plan.layout, plan.over(w)
     time, until = head(w, Head.time), head(w, Head.until)
     left = w.minus(until, time)
+    most_of_it = w.smaller(left, w.load(S, Setting.longest)) if plan.bounded else left
     d0, d1 = norm(plan, w, x.get, x), norm(plan, w, rates.get, x)
     little = w.either(w.compare("olt", d0, constant(1e-5)), w.compare("olt", d1, constant(1e-5)))
     h0 = w.select(little, w.times(left, constant(SMALLEST_PART)), w.over(w.times(constant(0.01), d0), d1))
-    h0 = w.smaller(h0, left)
+    h0 = w.smaller(w.larger(h0, shortest_step(w, time)), most_of_it)
     euler = over.temporary(L, layout.first_spare)
     over.each(lambda i: euler.put(i, w.fma(h0, rates.get(i), x.get(i))))
     later = over.rates(lambda: w.plus(time, h0), euler, over.temporary(L, layout.first_spare + layout.states))
@@ -68,7 +69,7 @@ def first_step(plan: Plan, w: Writer, x: Column, rates: Column) -> str:
     h1 = control.write_exp2(w, w.plus(power, constant(log2(0.01) / plan.pair.order)))
     still = w.larger(w.times(left, constant(SMALLEST_PART)), w.times(h0, constant(1e-3)))
     h1 = w.select(w.compare("ole", most, constant(1e-15)), still, h1)
-    step = w.smaller(w.smaller(w.times(constant(100.0), h0), h1), left)
+    step = w.smaller(w.larger(w.smaller(w.times(constant(100.0), h0), h1), shortest_step(w, time)), most_of_it)
     known = w.compare("ord", d2, d2)  # not a number: the trial step left the region where the rates are defined
     return w.select(known, step, h0)
 

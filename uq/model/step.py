@@ -5,19 +5,18 @@ Outputs that are due are written at once. Returns two bytes of lanes: arrived at
 
 from __future__ import annotations
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
+from math import log2
 
 from uq.model import control
 from uq.model.columns import Column, Index
 from uq.model.layout import FAILURES, Head, Setting
+from uq.model.pair import Weights
 from uq.model.points import LANES_POINTER as L
 from uq.model.points import SETTINGS_POINTER as S
-from uq.model.points import Plan, alive, finite_part, function, head, outside_range
-from uq.model.tableau import Weights
+from uq.model.points import Plan, alive, finite_part, function, head, outside_range, shortest_step
 from uq.model.writer import ONE, ZERO, M, V, Writer, constant
 
-# Step lengths below this many rounding units of the time cannot be told from nothing.
-SHORTEST_IN_ULPS = 16 * 2.0**-52
 # The last step may be this much longer than proposed, so that no tiny one is left (DOPRI5 does the same).
 STRETCH = 1.01
 # A state runs away if it would double within this many shortest steps: at an accuracy of 1e-14 a step is 1/600 of the distance to a pole.
@@ -45,7 +44,7 @@ def write_step(plan: Plan) -> tuple[str, set[str]]:
     step.commit()
     w.say("who needs attention")
     step.attention()
-    return function(w, "uq_step"), w.called
+    return function(w, "uq_step", "#1"), w.called
 
 
 class Step:
@@ -59,18 +58,19 @@ class Step:
         self.new = self.over.temporary(L, layout.first_spare)
 
     def length(self) -> None:
-        """h, whether it reaches the end of the segment, and the time after it."""
+        """h, whether it reaches the end of the segment, and the time after it; h is the difference of both times, as they are rounded."""
         w = self.w
         self.time, self.proposed, until = head(w, Head.time), head(w, Head.step), head(w, Head.until)
         left = w.minus(until, self.time)
         self.last = w.compare("oge", w.times(self.proposed, constant(STRETCH)), left)
         close = w.compare("oge", w.plus(self.proposed, self.proposed), left)
-        self.h = w.select(self.last, left, w.select(close, w.times(left, constant(0.5)), self.proposed))
-        self.time_new = w.select(self.last, until, w.plus(self.time, self.h))
+        wanted = w.select(close, w.times(left, constant(0.5)), self.proposed)
+        self.time_new = w.select(self.last, until, w.plus(self.time, wanted))
+        self.h = w.minus(self.time_new, self.time)
 
-    def combination(self, weights: Weights, i: Index) -> str:
+    def combination(self, weights: Weights, i: Index, stages: Sequence[Column]) -> str:
         """Sum of weights times stages of one state, in the order of the stages."""
-        terms = [(float(b), self.k[j].get(i)) for j, b in enumerate(weights) if b]
+        terms = [(float(b), stages[j].get(i)) for j, b in enumerate(weights) if b]
         total = self.w.times(constant(terms[0][0]), terms[0][1])
         for factor, stage in terms[1:]:
             total = self.w.fma(constant(factor), stage, total)
@@ -78,19 +78,37 @@ class Step:
 
     def stages(self) -> None:
         """All stages after the first; the last one is the new state's rate."""
-        layout, pair = self.plan.layout, self.plan.pair
-        for s in range(1, pair.stages):
-            weights = pair.a[s]
-            self.over.each(lambda i, a=weights: self.new.put(i, self.w.fma(self.h, self.combination(a, i), self.x.get(i))))  # type: ignore[misc]
-            stage = self.over.temporary(L, layout.first_spare + s * layout.states)
-            self.k.append(self.over.rates(self.time_at(float(pair.c[s])), self.new, stage))
+        pair = self.plan.pair
+        for weights, node in zip(pair.a[1:], pair.c[1:], strict=True):
+            self.k.append(self.stage(weights, float(node), self.new, self.k))
+
+    def stage(self, weights: Weights, node: float, place: Column, before: Sequence[Column]) -> Column:
+        """The stage after those `before`; its states are left in `place`."""
+        layout = self.plan.layout
+        self.over.each(lambda i: place.put(i, self.w.fma(self.h, self.combination(weights, i, before), self.x.get(i))))
+        return self.over.rates(self.time_at(node), place, self.over.temporary(L, layout.first_spare + len(before) * layout.states))
 
     def time_at(self, node: float) -> Callable[[], str]:
         """The time of a stage, written when it is asked for."""
         return lambda: self.time_new if node == 1.0 else self.w.fma(constant(node), self.h, self.time)
 
     def error(self) -> None:
-        """Mean over the states of (error / (absolute + relative tolerance))^2; not a number if anything new is not finite."""
+        """Mean over the states of (error / (absolute + relative tolerance))^2; not a number if anything new is not finite.
+
+        Of two estimates s0, s1 (sums over n states) the squared error is s0^2 / (s0 + 0.01 s1) / n (Hairer, Norsett, Wanner I, II.10).
+        """
+        w = self.w
+        first, *others = [self.sum_of_squares(e) for e in self.plan.pair.e]
+        for second in others:
+            both = w.fma(constant(0.01), second, first)
+            ratio = w.select(w.compare("oeq", both, ZERO), ZERO, w.over(first, both))
+            first = w.times(first, ratio)
+        # an infinite state has an infinite tolerance: the error alone would not show it
+        poison = finite_part(self.over, w, (self.new, self.k[-1]))
+        self.squared = w.fma(first, constant(1.0 / self.plan.layout.states), poison)
+
+    def sum_of_squares(self, weights: Weights) -> str:
+        """Sum over the states of (error / tolerance)^2 for one estimate."""
         w, layout = self.w, self.plan.layout
         accuracy = w.load(S, Setting.accuracy)
         absolute = self.over.stored(S, layout.first_tolerance)
@@ -98,29 +116,28 @@ class Step:
         def add(i: Index, total: str) -> str:
             size = w.larger(w.size(self.x.get(i)), w.size(self.new.get(i)))
             tolerance = w.fma(accuracy, size, absolute.get(i))
-            ratio = w.over(w.times(self.h, self.combination(self.plan.pair.e, i)), tolerance)
+            ratio = w.over(w.times(self.h, self.combination(weights, i, self.k)), tolerance)
             return w.fma(ratio, ratio, total)
 
-        total = self.over.fold(V, ZERO, add)
-        # an infinite state has an infinite tolerance: the error alone would not show it
-        poison = finite_part(self.over, w, (self.new, self.k[-1]))
-        self.squared = w.fma(total, constant(1.0 / layout.states), poison)
+        return self.over.fold(V, ZERO, add)
 
     def decide(self) -> None:
         """Acceptance and the next proposal (see `control`)."""
-        w = self.w
+        w, given = self.w, self.plan.pair.control
         self.accepted = w.both(alive(w), w.compare("ole", self.squared, ONE))
         log_error = control.write_log2(w, control.within(w, self.squared, 1e-30, 1e30))
-        old = w.fma(head(w, Head.log_error), constant(control.BETA / 2), constant(control.LOG_SAFETY))
+        old = w.fma(head(w, Head.log_error), constant(given.beta / 2), constant(control.LOG_SAFETY))
         rest = w.select(self.accepted, old, constant(control.LOG_SAFETY))
-        wanted = w.fma(log_error, constant(-control.ALPHA / 2), rest)
+        wanted = w.fma(log_error, constant(-given.alpha / 2), rest)
         was_rejected = w.compare("ogt", head(w, Head.rejected), ZERO)
-        most = w.select(w.either(was_rejected, w.opposite(self.accepted)), ZERO, constant(control.LOG_MOST))
-        factor = control.write_exp2(w, w.larger(w.smaller(wanted, most), constant(control.LOG_LEAST)))
+        most = w.select(w.either(was_rejected, w.opposite(self.accepted)), ZERO, constant(log2(given.most)))
+        factor = control.write_exp2(w, w.larger(w.smaller(wanted, most), constant(log2(given.least))))
         next_step = w.times(self.h, factor)
         # a step cut short by the end of the segment says nothing against the length proposed before
         longer = w.both(self.accepted, w.both(w.compare("oge", factor, ONE), w.compare("ogt", self.proposed, next_step)))
         self.next = w.select(longer, self.proposed, next_step)
+        if self.plan.bounded:
+            self.next = w.smaller(self.next, w.load(S, Setting.longest))
         self.log_error = w.larger(log_error, constant(control.START_LOG_ERROR))
 
     def commit(self) -> None:
@@ -163,7 +180,7 @@ class Step:
         """Outputs due, lanes arrived, lanes failed; the curve and the status are only written where some lane needs them."""
         w = self.w
         arrived = w.both(self.accepted, self.last)
-        shortest = w.fma(constant(SHORTEST_IN_ULPS), w.size(self.time), w.load(S, Setting.shortest))
+        shortest = shortest_step(w, self.time)
         tiny = w.compare("olt", self.next, shortest)
         many = w.compare("oge", w.plus(self.count, self.refusals), w.load(S, Setting.attempts))
         stuck = w.both(w.both(alive(w), w.opposite(arrived)), w.either(tiny, many))
@@ -172,34 +189,46 @@ class Step:
         at = head(w, Head.due)
         before, reached = w.compare("olt", at, self.time_new), w.compare("ole", at, self.time_new)
         due = w.both(self.accepted, w.select_truth(w.either(arrived, failed), before, reached))
-        late, ended = w.mask(arrived), w.mask(failed)
+        late, judged = w.mask(arrived), w.mask(failed)
         any_due = w.any(due)
         w.branch(any_due, "curve", "move")
         self.curve()
         w.join("move")
         self.commit_states()
-        w.branch(any_due, "observe", "judge")
-        strict = w.add(f"or i64 {late}, {ended}")
-        w.plain(f"call void @uq_observe(ptr {L}, ptr {S}, i64 {w.mask(due)}, i64 {strict})")
-        w.join("judge")
+        outside = w.either(outside, self.observe(any_due, due, w.add(f"or i64 {late}, {judged}")))
+        failed = w.either(stuck, outside)
+        ended = w.mask(failed)
         w.branch(w.any(failed), "failure", "done")
         self.failure(outside, tiny, shortest)
         w.join("done")
         shifted = w.add(f"shl i64 {ended}, 8")
         w.plain(f"ret i64 {w.add(f'or i64 {late}, {shifted}')}")
 
+    def observe(self, any_due: str, due: str, strict: str) -> str:
+        """Write the outputs that are due; the lanes in which a state was outside of its valid range at one of them."""
+        w, before = self.w, self.w.block
+        w.branch(any_due, "observe", "judge")
+        strayed = w.add(f"call i64 @uq_observe(ptr {L}, ptr {S}, i64 {w.mask(due)}, i64 {strict})")
+        inside = w.block
+        w.join("judge")
+        return w.lanes_of(w.add(f"phi i64 [ 0, %{before} ], [ {strayed}, %{inside} ]"))
+
     def curve(self) -> None:
         """The coefficients of the continuous extension of this step (see `Pair`)."""
-        w, n, first = self.w, self.plan.layout.states, self.plan.layout.first_curve
-        parts = [self.over.stored(L, first + part * n) for part in range(5)]
+        w, layout, pair = self.w, self.plan.layout, self.plan.pair
+        place = self.over.temporary(L, layout.first_spare + pair.all_stages * layout.states)
+        k = list(self.k)
+        for weights, node in zip(pair.extra, pair.extra_c, strict=True):
+            k.append(self.stage(weights, float(node), place, k))
+        parts = [self.over.stored(L, layout.first_curve + part * layout.states) for part in range(layout.curve_parts)]
 
         def write(i: Index) -> None:
             x = self.x.get(i)
             difference = w.minus(self.new.get(i), x)
             third = w.fma(self.h, self.k[0].get(i), w.negative(difference))
             fourth = w.minus(w.fma(w.negative(self.h), self.k[-1].get(i), difference), third)
-            fifth = w.times(self.h, self.combination(self.plan.pair.d, i))
-            for part, value in zip(parts, (x, difference, third, fourth, fifth), strict=True):
+            rest = [w.times(self.h, self.combination(d, i, k)) for d in pair.d]
+            for part, value in zip(parts, (x, difference, third, fourth, *rest), strict=True):
                 part.put(i, value)
 
         self.over.each(write)

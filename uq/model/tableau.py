@@ -1,114 +1,25 @@
-"""The Runge-Kutta pair whose step is written out for every model, as exact numbers that check themselves.
-
-A table holds its coefficients and proves, when it is built, that they meet the order conditions which it claims.
-"""
+"""The Runge-Kutta pairs whose steps are written out for every model, as exact numbers and printed decimals that check themselves."""
 
 from __future__ import annotations
 
-from collections.abc import Callable
-from dataclasses import dataclass
 from fractions import Fraction as F
-from itertools import combinations_with_replacement
-from math import prod
 
-Tree = tuple["Tree", ...]
-Weights = tuple[F, ...]
+from uq.model.pair import Control, Pair, Weights
 
 
-def trees(order: int) -> tuple[Tree, ...]:
-    """All rooted trees with `order` nodes; a tree is the tuple of its branches (Butcher; Hairer, Norsett, Wanner I, II.2)."""
-    return tuple(sorted(tuple(sorted(forest)) for forest in _forests(order - 1, order - 1)))
+def printed(*rows: str) -> tuple[Weights, ...]:
+    """Rows of decimals as they are printed, blanks between them."""
+    return tuple(tuple(F(number) for number in row.split()) for row in rows)
 
 
-def _forests(nodes: int, largest: int) -> list[tuple[Tree, ...]]:
-    if nodes == 0:
-        return [()]
-    found: list[tuple[Tree, ...]] = []
-    for size in range(min(nodes, largest), 0, -1):
-        for many in range(1, nodes // size + 1):
-            for same in combinations_with_replacement(trees(size), many):
-                found += [same + rest for rest in _forests(nodes - size * many, size - 1)]
-    return found
-
-
-def size(tree: Tree) -> int:
-    """Number of nodes of a rooted tree."""
-    return 1 + sum(size(branch) for branch in tree)
-
-
-def density(tree: Tree) -> int:
-    """gamma(t): the order of the tree times the densities of its branches (Hairer, Norsett, Wanner I, II.2)."""
-    return size(tree) * prod(density(branch) for branch in tree)
-
-
-@dataclass(frozen=True)
-class Pair:
-    """An explicit pair whose last stage is the first of the next step, with a continuous extension.
-
-    `a` row by row (the last row is the solution's weights), `c` nodes, `e` weights of the error estimate (solution minus embedded
-    solution), `d` weights of the extension's correction, in the form of Hairer's CONTD5:
-    u = y0 + th*(D + (1-th)*(h*k1 - D + th*(D - h*k7 - (h*k1 - D) + (1-th)*h*sum d_i*k_i))), D = y1 - y0, th in [0, 1].
-    """
-
-    name: str
-    source: str
-    a: tuple[Weights, ...]
-    c: Weights
-    e: Weights
-    d: Weights
-    order: int
-    embedded_order: int
-    extension_order: int
-
-    def __post_init__(self) -> None:
-        for row, node in zip(self.a, self.c, strict=True):
-            if sum(row) != node:
-                raise ValueError(f"{self.name}: a row of a does not add up to its node {node}")
-        solution = (*self.a[-1], F(0))
-        embedded = tuple(b - e for b, e in zip(solution, self.e, strict=True))
-        self._check(lambda _: solution, self.order, "solution")
-        self._check(lambda _: embedded, self.embedded_order, "embedded solution")
-        self._check(self.extension, self.extension_order, "continuous extension")
-
-    @property
-    def stages(self) -> int:
-        """Number of stages, the one shared with the next step included."""
-        return len(self.c)
-
-    def extension(self, theta: F) -> Weights:
-        """The weights of k1, k2, ... in (u(theta) - y0) / h."""
-        b = (*self.a[-1], F(0))
-        first = (F(1), *[F(0)] * (self.stages - 1))
-        last = (*[F(0)] * (self.stages - 1), F(1))
-        rest = 1 - theta
-        third = [f - w for f, w in zip(first, b, strict=True)]
-        fourth = [w - k - t for w, k, t in zip(b, last, third, strict=True)]
-        return tuple(theta * (w + rest * (t + theta * (q + rest * z))) for w, t, q, z in zip(b, third, fourth, self.d, strict=True))
-
-    def _check(self, weights: Callable[[F], Weights], order: int, what: str) -> None:
-        for theta in (F(1), F(1, 3), F(4, 5)) if what == "continuous extension" else (F(1),):
-            w = weights(theta)
-            for nodes in range(1, order + 1):
-                for tree in trees(nodes):
-                    phi = self._elementary(tree)
-                    if sum(x * y for x, y in zip(w, phi, strict=True)) != theta**nodes / density(tree):
-                        raise ValueError(f"{self.name}: the {what} misses the order condition of {tree}")
-
-    def _elementary(self, tree: Tree) -> Weights:
-        """Product over the branches of sum_j a_ij phi_j(branch), for every stage i."""
-        inner = [self._elementary(branch) for branch in tree]
-        rows = [sum_of(row, branch) for branch in inner for row in self.a]
-        columns = [rows[k : k + self.stages] for k in range(0, len(rows), self.stages)]
-        return tuple(prod((column[i] for column in columns), start=F(1)) for i in range(self.stages))
-
-
-def sum_of(row: Weights, values: Weights) -> F:
-    """Sum of products of a row with as many leading values."""
-    return sum((x * y for x, y in zip(row, values, strict=False)), F(0))
+def less(weights: Weights, others: Weights) -> Weights:
+    """Weights minus others."""
+    return tuple(a - b for a, b in zip(weights, others, strict=True))
 
 
 # Dormand and Prince, A family of embedded Runge-Kutta formulae, J. Comp. Appl. Math. 6 (1980) 19-26, table 2, RK5(4)7M; the extension (d)
-# is that of DOPRI5 in Hairer, Norsett, Wanner, Solving ODEs I, 2nd ed., II.6. Both written from memory; the order conditions prove them.
+# is that of DOPRI5 in Hairer, Norsett, Wanner, Solving ODEs I, 2nd ed., II.6, and so is the control (beta = 0.04, expo1 = 0.2 - 0.75 beta,
+# factors 0.2 to 10). All written from memory; the order conditions prove the coefficients.
 DORMAND_PRINCE_54 = Pair(
     name="explicit54",
     source="Dormand, Prince 1980; Hairer, Norsett, Wanner I, II.6",
@@ -122,19 +33,115 @@ DORMAND_PRINCE_54 = Pair(
         (F(35, 384), F(0), F(500, 1113), F(125, 192), F(-2187, 6784), F(11, 84)),
     ),
     c=(F(0), F(1, 5), F(3, 10), F(4, 5), F(8, 9), F(1), F(1)),
-    e=(F(71, 57600), F(0), F(-71, 16695), F(71, 1920), F(-17253, 339200), F(22, 525), F(-1, 40)),
+    e=((F(71, 57600), F(0), F(-71, 16695), F(71, 1920), F(-17253, 339200), F(22, 525), F(-1, 40)),),
     d=(
-        F(-12715105075, 11282082432),
-        F(0),
-        F(87487479700, 32700410799),
-        F(-10690763975, 1880347072),
-        F(701980252875, 199316789632),
-        F(-1453857185, 822651844),
-        F(69997945, 29380423),
+        (
+            F(-12715105075, 11282082432),
+            F(0),
+            F(87487479700, 32700410799),
+            F(-10690763975, 1880347072),
+            F(701980252875, 199316789632),
+            F(-1453857185, 822651844),
+            F(69997945, 29380423),
+        ),
     ),
     order=5,
-    embedded_order=4,
+    embedded_orders=(4,),
     extension_order=4,
+    control=Control(alpha=0.2 - 0.75 * 0.04, beta=0.04, least=0.2, most=10.0),
+    # 400 states that decay to 0, alone and in chains, at accuracies from 1e-2 to 1e-8: at most 2.1 tolerances below 0
+    undershoot=3.0,
 )
 
-PAIRS = (DORMAND_PRINCE_54,)
+# The 8th order formula of Dormand and Prince with the two error estimates, of orders 5 and 3, and the extension of order 7 of Hairer,
+# Norsett, Wanner, Solving ODEs I, 2nd ed., II.5, II.6 and II.10; decimals as printed in their published code DOP853 (E. Hairer,
+# http://www.unige.ch/~hairer/prog/nonstiff/dop853.f). The control is that of the code, expo1 = 1/8 - 0.2 beta, factors 1/3 to 6,
+# but beta is 0.04 and not 0: on 800 predator-prey members it takes 4 to 7 % fewer attempts from 1e-6 to 1e-12 and has smaller errors.
+_SOLUTION = (
+    "0.0542937341165687622380535766363 0 0 0 0 4.45031289275240888144113950566 1.89151789931450038304281599044 "
+    "-5.8012039600105847814672114227 0.31116436695781989440891606237 -0.152160949662516078556178806805 "
+    "0.201365400804030348374776537501 0.0447106157277725905176885569043"
+)
+_THIRD_ORDER = "0.244094488188976377952755905512 0 0 0 0 0 0 0 0.733846688281611857341361741547 0 0 0.0220588235294117647058823529412"
+DORMAND_PRINCE_853 = Pair(
+    name="explicit853",
+    source="Hairer, Norsett, Wanner I, II.5, II.6, II.10; code DOP853",
+    a=(
+        (),
+        *printed(
+            "0.0526001519587677318785587544488",
+            "0.0197250569845378994544595329183 0.0591751709536136983633785987549",
+            "0.0295875854768068491816892993775 0 0.0887627564304205475450678981324",
+            "0.241365134159266685502369798665 0 -0.884549479328286085344864962717 0.924834003261792003115737966543",
+            "0.037037037037037037037037037037 0 0 0.170828608729473871279604482173 0.125467687566822425016691814123",
+            "0.037109375 0 0 0.170252211019544039314978060272 0.0602165389804559606850219397283 -0.017578125",
+            "0.0370920001185047927108779319836 0 0 0.170383925712239993810214054705 0.107262030446373284651809199168 "
+            "-0.0153194377486244017527936158236 0.00827378916381402288758473766002",
+            "0.624110958716075717114429577812 0 0 -3.36089262944694129406857109825 -0.868219346841726006818189891453 "
+            "27.5920996994467083049415600797 20.1540675504778934086186788979 -43.4898841810699588477366255144",
+            "0.477662536438264365890433908527 0 0 -2.48811461997166764192642586468 -0.590290826836842996371446475743 "
+            "21.2300514481811942347288949897 15.2792336328824235832596922938 -33.2882109689848629194453265587 "
+            "-0.0203312017085086261358222928593",
+            "-0.93714243008598732571704021658 0 0 5.18637242884406370830023853209 1.09143734899672957818500254654 "
+            "-8.14978701074692612513997267357 -18.5200656599969598641566180701 22.7394870993505042818970056734 "
+            "2.49360555267965238987089396762 -3.0467644718982195003823669022",
+            "2.27331014751653820792359768449 0 0 -10.5344954667372501984066689879 -2.00087205822486249909675718444 "
+            "-17.9589318631187989172765950534 27.9488845294199600508499808837 -2.85899827713502369474065508674 "
+            "-8.87285693353062954433549289258 12.3605671757943030647266201528 0.643392746015763530355970484046",
+            _SOLUTION,
+        ),
+    ),
+    c=printed(
+        "0 0.0526001519587677318785587544488 0.0789002279381515978178381316732 0.11835034190722739672675719751 "
+        "0.28164965809277260327324280249 0.333333333333333333333333333333 0.25 0.307692307692307692307692307692 "
+        "0.651282051282051282051282051282 0.6 0.857142857142857142857142857142 1 1",
+    )[0],
+    e=(
+        *printed(
+            "0.01312004499419488073250102996 0 0 0 0 -1.225156446376204440720569753 -0.4957589496572501915214079952 "
+            "1.664377182454986536961530415 -0.350328848749973681688648729 0.3341791187130174790297318841 "
+            "0.08192320648511571246570742613 -0.02235530786388629525884427845",
+        ),
+        less(printed(_SOLUTION)[0], printed(_THIRD_ORDER)[0]),
+    ),
+    d=printed(
+        "-8.4289382761090128651353491142 0 0 0 0 0.5667149535193777696253178359 -3.0689499459498916912797304727 "
+        "2.384667656512069828772814968 2.1170345824450282767155149946 -0.8713915837779729920678990749 "
+        "2.240437430260788275854177165 0.6315787787694688181557024929 -0.0889903364513333108206981174 "
+        "18.148505520854727256656404962 -9.1946323924783554000451984436 -4.4360363875948939664310572",
+        "10.427508642579134603413151009 0 0 0 0 242.28349177525818288430175319 165.20045171727028198505394887 "
+        "-374.54675472269020279518312152 -22.113666853125306036270938578 7.7334326684722638389603898808 "
+        "-30.674084731089398182061213626 -9.3321305264302278729567221706 15.697238121770843886131091075 "
+        "-31.139403219565177677282850411 -9.3529243588444783865713862664 35.81684148639408375246589854",
+        "19.985053242002433820987653617 0 0 0 0 -387.03730874935176555105901742 -189.17813819516756882830838328 "
+        "527.80815920542364900561016686 -11.573902539959630126141871134 6.8812326946963000169666922661 "
+        "-1.000605096691083840318386098 0.7777137798053443209286926574 -2.7782057523535084065932004339 "
+        "-60.196695231264120758267380846 84.320405506677161018159903784 11.99229113618278932803513003",
+        "-25.693933462703749003312586129 0 0 0 0 -154.18974869023643374053993627 -231.52937917604549567536039109 "
+        "357.6391179106141237828534991 93.405324183624310003907691704 -37.458323136451633156875139351 "
+        "104.09964950896230045147246184 29.840293426660503123344363579 -43.533456590011143754432175058 "
+        "96.3245539591882829483949506 -39.177261675615439165231486172 -149.72683625798562581422125276",
+    ),
+    order=8,
+    embedded_orders=(5, 3),
+    extension_order=7,
+    control=Control(alpha=1 / 8 - 0.2 * 0.04, beta=0.04, least=0.333, most=6.0),
+    # the same states at 1e-8, 1e-10, 1e-12: 600 alone; in chains up to 8500, 18000, 160000 (the worst of 400 members), where stability sets
+    # the steps and the extension is the weaker part. (At 1e-8 this is 1e-4 of a state's scale.)
+    undershoot=1e4,
+    extra=printed(
+        "0.0561675022830479523392909219681 0 0 0 0 0 0.253500210216624811088794765333 -0.246239037470802489917441475441 "
+        "-0.124191423263816360469010140626 0.15329179827876569731206322685 0.00820105229563468988491666602057 "
+        "0.00756789766054569976138603589584 -0.008298",
+        "0.0318346481635021405060768473261 0 0 0 0 0.0283009096723667755288322961402 0.0535419883074385676223797384372 "
+        "-0.0549237485713909884646569340306 0 0 -0.000108347328697249322858509316994 0.000382571090835658412954920192323 "
+        "-0.000340465008687404560802977114492 0.141312443674632500278074618366",
+        "-0.428896301583791923408573538692 0 0 0 0 -4.69762141536116384314449447206 7.68342119606259904184240953878 "
+        "4.06898981839711007970213554331 0.356727187455281109270669543021 0 0 0 -0.00139902416515901462129418009734 "
+        "2.9475147891527723389556272149 -9.15095847217987001081870187138",
+    ),
+    extra_c=printed("0.1 0.2 0.777777777777777777777777777778")[0],
+    digits=29,
+)
+
+PAIRS = (DORMAND_PRINCE_54, DORMAND_PRINCE_853)

@@ -93,9 +93,11 @@ class Writer:
             one = self.add(f"extractelement {V} {value}, i64 {lane}")
             self.plain(f"store double {one}, ptr {pointer}, align 8")
 
-    def scatter_truth(self, addresses: str, truth: str) -> None:
-        """Put the eight truths to eight addresses, as bytes."""
+    def scatter_truth(self, addresses: str, truth: str, unknown: str | None) -> None:
+        """Put the eight truths to eight addresses, as bytes: 1 true, 0 false, 2 unknown."""
         bytes_ = self.add(f"zext {M} {truth} to <8 x i8>")
+        if unknown is not None:
+            bytes_ = self.add(f"select {M} {unknown}, <8 x i8> splat (i8 2), <8 x i8> {bytes_}")
         for lane, pointer in enumerate(self.pointers(addresses)):
             one = self.add(f"extractelement <8 x i8> {bytes_}, i64 {lane}")
             self.plain(f"store i8 {one}, ptr {pointer}, align 1")

@@ -25,30 +25,46 @@ class Status(IntEnum):
     out_of_time = 8
 
 
+class Truth(IntEnum):
+    """The values of a condition: unknown where a number that it compares is not one, unless `and` or `or` decides all the same."""
+
+    false = 0
+    true = 1
+    unknown = 2
+
+
 @dataclass(frozen=True)
 class Settings:
-    """How members are solved: relative tolerance `accuracy`, `scales` [state] in state units (absolute tolerance = accuracy x scale),
-    `lowest` and `highest` [state] valid values (-inf, inf where none), `max_steps` per member."""
+    """How members are solved: relative tolerance `accuracy`, `scales` [state] in state units, `lowest` and `highest` [state] valid values
+    (-inf, inf where none; a state is outside where it is beyond them by more than the solver's own error), `max_steps` per member,
+    `negligible` [state] changes in state units that do not matter (nan, or None for all, where nothing is said)."""
 
     accuracy: float
     scales: Floats
     lowest: Floats
     highest: Floats
     max_steps: int = 100_000
+    negligible: Floats | None = None
+
+    @property
+    def absolute(self) -> Floats:
+        """Absolute tolerances [state], in state units: `negligible` where it is said, else accuracy x scale."""
+        usual = self.accuracy * self.scales
+        return usual if self.negligible is None else np.where(np.isnan(self.negligible), usual, self.negligible)
 
 
 @dataclass(frozen=True)
 class Batch:
     """Solved members, in the order of the rows of x.
 
-    values [member, observed, time] (float64, C order; nan from the time of failure on), conditions [member, condition, time] (bool; false
-    from failure on), outcomes [member, outcome] (nan where a course has no value or the member failed), status [member] (int8),
-    end_time [member] (time of failure, else the last time), steps and rejections [member] (int32), largest [member, state]
+    values [member, observed, time] (float64, C order; nan from the time of failure on), conditions [member, condition, time] (int8, see
+    `Truth`; unknown from failure on), outcomes [member, outcome] (nan where a course has no value or the member failed), status [member]
+    (int8), end_time [member] (time of failure, else the last time), steps and rejections [member] (int32), largest [member, state]
     (largest |x| over start and accepted steps).
     """
 
     values: Floats
-    conditions: NDArray[np.bool_]
+    conditions: NDArray[np.int8]
     outcomes: Floats
     status: NDArray[np.int8]
     end_time: Floats

@@ -6,6 +6,7 @@ This is the only door to llvmlite. Nothing here sets a fast-math flag or lets mu
 
 from __future__ import annotations
 
+import platform
 import threading
 from dataclasses import dataclass
 from functools import cache, lru_cache
@@ -16,6 +17,8 @@ from uq.model.code import Code
 from uq.model.layout import Layout
 
 FUNCTIONS = ("uq_start", "uq_rates", "uq_step", "uq_observe", "uq_outcomes", "uq_starts")
+# The widest vectors of a processor, by the feature that LLVM knows them by.
+WIDTHS = (("avx512f", "avx512"), ("avx2", "avx2"), ("sve", "sve"), ("neon", "neon"))
 NO_FMA = (
     "this processor has no fused multiply-add (FMA) instruction, which uq needs: "
     "x86 processors since about 2013 and all 64-bit ARM processors have it"
@@ -48,6 +51,13 @@ class Processor:
 
     name: str
     features: str
+
+    @property
+    def words(self) -> str:
+        """What a reader of a result needs to know of it, such as "x86_64, znver4, avx512"."""
+        machine = platform.machine() or "unknown"
+        width = next((said for feature, said in WIDTHS if f"+{feature}" in self.features.split(",")), "")
+        return ", ".join(part for part in (machine, self.name, width) if part)
 
     @classmethod
     def here(cls) -> Processor:
@@ -83,8 +93,7 @@ def compile_for(code: Code, processor: Processor) -> Compiled:
     engine = llvm.create_mcjit_compiler(module, machine)
     engine.finalize_object()
     addresses = {name: engine.get_function_address(name) if f"@{name}(" in code.text else 0 for name in FUNCTIONS}
-    sizes = (len(code.inputs), code.hoisted, len(code.states), len(code.forcings), code.observed, code.conditions)
-    return Compiled(code, Layout(*sizes), addresses, engine)
+    return Compiled(code, code.layout, addresses, engine)
 
 
 def machine_text(code: Code, processor: Processor) -> str:

@@ -3,7 +3,7 @@
 
 In: addresses of a model's compiled functions, slots, tables. Out: filled tables. Must not know: what the functions compute.
 This is the only door to numba. Kernel, what it calls and the intrinsics are in this one file, because numba's cache does not see edits
-elsewhere: raise the number in `run_members_1` whenever anything here or in the tuples' meaning changes.
+elsewhere: raise the number in `run_members_3` whenever anything here or in the tuples' meaning changes.
 
 A lane that finishes takes the next member from the nursery, a second group of eight lanes in which members are started together; nothing
 that a member is made of ever depends on its neighbours.
@@ -11,7 +11,6 @@ that a member is made of ever depends on its neighbours.
 
 from __future__ import annotations
 
-from pathlib import Path
 from typing import Any, NamedTuple
 
 import numpy as np
@@ -19,8 +18,11 @@ from llvmlite import ir
 from numba import njit, types
 from numba.extending import intrinsic
 
+from uq.solve.cached import at_hand, kernel
+
 LANES = 8
 OK = 0
+UNKNOWN = 2
 
 
 class Calls(NamedTuple):
@@ -55,7 +57,6 @@ class Slots(NamedTuple):
     truth_place: int
     first_input: int
     first_base: int
-    first_slope: int
     first_largest: int
     moved: int
 
@@ -68,15 +69,14 @@ class Group(NamedTuple):
 
 
 class Tables(NamedTuple):
-    """What is given: x [member, input], times [time + 1] (the last is inf), segments (bounds [segment + 1], jumps [segment], base and slope
-    [segment, forcing]), and a flag that stops all."""
+    """What is given: x [member, input], times [time + 1] (the last is inf), segments (bounds [segment + 1], jumps [segment], coefficients
+    of the forcings [segment, slot]), and a flag that stops all."""
 
     x: np.ndarray
     times: np.ndarray
     bounds: np.ndarray
     jumps: np.ndarray
-    base: np.ndarray
-    slope: np.ndarray
+    coefficients: np.ndarray
     stop: np.ndarray
 
 
@@ -114,11 +114,11 @@ class Job(NamedTuple):
 
 @intrinsic
 def _write_outputs(typingctx: Any, address: Any, lanes: Any, settings: Any, due: Any, strict: Any) -> Any:
-    """Call `@uq_observe` at an address."""
+    """Call `@uq_observe` at an address, where every lane is at its output time and its state is known to be valid."""
     signature = types.void(types.int64, types.int64, types.int64, types.int64, types.int64)
 
     def generate(context: Any, builder: Any, signature: Any, args: Any) -> Any:
-        kind = ir.FunctionType(ir.VoidType(), [ir.IntType(64)] * 4)
+        kind = ir.FunctionType(ir.IntType(64), [ir.IntType(64)] * 4)
         builder.call(builder.inttoptr(args[0], kind.as_pointer()), args[1:])
         return context.get_dummy_value()
 
@@ -164,7 +164,7 @@ def _close(job: Job, group: Group, lane: int, member: int, status: int) -> None:
     for k in range(results.values.shape[1]):
         results.values[member, k, output:] = np.nan
     for k in range(results.conditions.shape[1]):
-        results.conditions[member, k, output:] = False
+        results.conditions[member, k, output:] = UNKNOWN
 
 
 @njit(forceinline=True)
@@ -173,9 +173,8 @@ def _load_segment(job: Job, group: Group, lane: int, segment: int) -> None:
     slots, tables = job.slots, job.tables
     group.numbers[slots.until, lane] = tables.bounds[segment + 1]
     group.numbers[slots.segment_from, lane] = tables.bounds[segment]
-    for k in range(tables.base.shape[1]):
-        group.numbers[slots.first_base + k, lane] = tables.base[segment, k]
-        group.numbers[slots.first_slope + k, lane] = tables.slope[segment, k]
+    for k in range(tables.coefficients.shape[1]):
+        group.numbers[slots.first_base + k, lane] = tables.coefficients[segment, k]
 
 
 @njit(forceinline=True)
@@ -261,8 +260,8 @@ def _end(job: Job, ended: int, failed: int) -> int:
     return free
 
 
-@njit(nogil=True, cache=True, error_model="numpy")
-def run_members_1(job: Job) -> int:
+@kernel
+def run_members_3(job: Job) -> int:
     """Solve all members; returns 0, or 1 if the flag in `stop` was seen."""
     members, waiting, stop = job.tables.x.shape[0], job.places.waiting, job.tables.stop
     taken, place, free = 0, LANES, 0xFF
@@ -292,9 +291,5 @@ def run_members_1(job: Job) -> int:
 
 
 def is_compiled() -> bool:
-    """Whether the kernel's machine code is at hand: made in this process, or in numba's cache on disk (newer than this file)."""
-    if run_members_1.signatures:
-        return True
-    written = Path(__file__).stat().st_mtime
-    found = Path(run_members_1.stats.cache_path).glob(f"kernel.{run_members_1.__name__}-*.nbi")
-    return any(index.stat().st_mtime >= written for index in found)
+    """Whether the kernel's machine code is at hand."""
+    return at_hand(run_members_3)

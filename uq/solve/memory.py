@@ -7,13 +7,19 @@ import ctypes
 import numpy as np
 from numpy.typing import NDArray
 
-from uq.model.layout import LANES, Layout, Setting
+from uq.model.code import Code
+from uq.model.layout import LANES, Setting
 from uq.solve.batch import Settings
 
 Floats = NDArray[np.float64]
 ALIGNMENT = 64
 # Steps shorter than this part of the whole time are refused even where the time itself is 0.
 SHORTEST_PART = 1e-24
+# But never shorter than the smallest number that is not rounded to nothing.
+SHORTEST = 2.0**-1022
+# Where a rate depends on time by more than forcings and landed moments, no step is longer than this part of the whole time: then what lasts
+# a two-hundredth of it cannot lie between two stages unseen.
+LONGEST_PART = 1e-2
 # A state that is far above its scale and would double within this part of the whole time is running away.
 MOMENT_PART = 1e-6
 
@@ -25,20 +31,23 @@ def aligned(slots: int) -> Floats:
     return room[first : first + slots * LANES].reshape(slots, LANES)
 
 
-def settings_block(layout: Layout, settings: Settings, length: float, times: int) -> Floats:
+def settings_block(code: Code, settings: Settings, length: float, times: int) -> Floats:
     """The settings as slots, followed by the place for scrap; `length`: from start to stop; `times`: number of output times."""
-    states = layout.states
+    layout, states = code.layout, code.layout.states
+    beyond = code.undershoot * settings.absolute
     given = aligned(layout.setting_slots + 1)
     words = given.view(np.int64)
     words[Setting.stride], words[Setting.truth_stride] = 8 * times, times
     words[Setting.scrap] = words[layout.setting_slots :].ctypes.data
     given[Setting.accuracy] = settings.accuracy
     given[Setting.attempts] = settings.max_steps
-    given[Setting.shortest] = SHORTEST_PART * length
+    given[Setting.shortest] = max(SHORTEST_PART * length, SHORTEST)
+    given[Setting.longest] = LONGEST_PART * length
+    given[Setting.ranged] = float(np.any(np.isfinite(settings.lowest) | np.isfinite(settings.highest)))
     given[Setting.moment] = MOMENT_PART * length
-    given[layout.first_tolerance : layout.first_tolerance + states] = (settings.accuracy * settings.scales)[:, None]
-    given[layout.first_lowest : layout.first_lowest + states] = settings.lowest[:, None]
-    given[layout.first_highest : layout.first_highest + states] = settings.highest[:, None]
+    given[layout.first_tolerance : layout.first_tolerance + states] = settings.absolute[:, None]
+    given[layout.first_lowest : layout.first_lowest + states] = (settings.lowest - beyond)[:, None]
+    given[layout.first_highest : layout.first_highest + states] = (settings.highest + beyond)[:, None]
     return given
 
 

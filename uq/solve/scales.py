@@ -17,7 +17,8 @@ FALL_BACK = 1.0
 HORIZONS = (1e-6, 1e-4, 1e-2, 1e-1)
 # A scale found to be this much smaller than the one it was solved with may be made of uncontrolled error: it is found again.
 FALLS = 0.5
-MOST_PASSES = 40
+# Such a scale falls by about the accuracy in every pass, at worst from the largest number there is.
+MOST_PASSES = 200
 
 
 def pilot_scales(

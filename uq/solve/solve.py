@@ -20,7 +20,13 @@ def solve(compiled: Compiled, x: Floats, times: Floats, start: float, settings: 
     x [member, input] in the inputs' units; times [solved] rising, none before start (it may be the first), in the time unit. A member's
     bits depend on the code, times, start, settings and its row of x, on nothing else. Releases the GIL.
     Raises Interrupted soon after another thread sets stop[0]; ValueMistake if a forcing does not cover the time.
-    Numerical failures are statuses in the Batch. Method: explicit pair 5(4) of Dormand and Prince with its continuous extension.
+    Numerical failures are statuses in the Batch. Method: that of the code, an explicit pair of Dormand and Prince with its continuous
+    extension (`uq.model.tableau`). Rows of forcings and times that rates are compared with are landed on. What else happens between two
+    stages is not seen: a shallow pole of a rate in time, such as |t - 1|^-0.5, may be stepped over at a loose accuracy without a failure;
+    so may a pulse in time of another form, or at a time that depends on inputs, if it lasts less than about a two-hundredth of the whole
+    time (such models take no step longer than LONGEST_PART of it): make it a forcing, or ask for more accuracy.
+    Valid ranges are judged at the start, at the ends of steps and at `times`; what a state does between them is not looked at yet. A
+    state is outside where it is so by more than the pair's own error (3 absolute tolerances; 10000 of 8(5,3), which is for small ones).
     """
     batch = advance(compiled, x, times, start, settings, stop)
     _fill_outcomes(compiled, np.atleast_2d(np.asarray(x, dtype=np.float64)), np.asarray(times, dtype=np.float64), batch)
@@ -35,8 +41,8 @@ def advance(compiled: Compiled, x: Floats, times: Floats, start: float, settings
     batch = _empty_batch(compiled, len(x), len(times) - 1)
     if len(x):
         end = float(times[-2])
-        given = settings_block(compiled.layout, settings, end - start, len(times) - 1)
-        pieces = segments(compiled.code.forcings, float(start), end)
+        given = settings_block(compiled.code, settings, end - start, len(times) - 1)
+        pieces = segments(compiled.code.forcings, float(start), end, compiled.code.moments, times[:-1].tobytes())
         if _run(compiled, x, times, given, pieces, flag, batch):
             raise Interrupted("solving was stopped")
     return batch
@@ -62,18 +68,19 @@ def _check(compiled: Compiled, x: Floats, times: Floats, start: float, settings:
         raise ValueError(f"x has shape {x.shape}, expected (members, {compiled.layout.inputs})")
     if times.ndim != 1 or not len(times) or np.any(np.diff(times) <= 0) or not np.all(np.isfinite(times)) or times[0] < start:
         raise ValueError("times must be finite, rising and not before the start")
-    for name in ("scales", "lowest", "highest"):
-        if np.shape(getattr(settings, name)) != (states,):
-            raise ValueError(f"{name} has shape {np.shape(getattr(settings, name))}, expected ({states},)")
-    if not settings.accuracy > 0 or not np.all(settings.scales > 0):
-        raise ValueError("accuracy and scales must be above 0")
+    given = {name: getattr(settings, name) for name in ("scales", "lowest", "highest", "negligible")}
+    for name, values in given.items():
+        if values is not None and np.shape(values) != (states,):
+            raise ValueError(f"{name} has shape {np.shape(values)}, expected ({states},)")
+    if not settings.accuracy > 0 or not np.all(settings.scales > 0) or not np.all(settings.absolute > 0):
+        raise ValueError("accuracy, scales and negligible must be above 0")
 
 
 def _empty_batch(compiled: Compiled, members: int, times: int) -> Batch:
     layout = compiled.layout
     return Batch(
         values=np.empty((members, layout.observed, times)),
-        conditions=np.zeros((members, layout.conditions, times), dtype=np.bool_),
+        conditions=np.zeros((members, layout.conditions, times), dtype=np.int8),
         outcomes=np.empty((members, compiled.code.outcomes)),
         status=np.zeros(members, dtype=np.int8),
         end_time=np.empty(members),
@@ -99,12 +106,12 @@ def _run(compiled: Compiled, x: Floats, times: Floats, given: Floats, pieces: Se
         kernel.Slots(*(int(getattr(Head, name, getattr(layout, name, -1))) for name in kernel.Slots._fields)),
         kernel.Group(lanes, lanes.view(np.int64)),
         kernel.Group(nursery, nursery.view(np.int64)),
-        kernel.Tables(x, times, pieces.bounds, pieces.jumps, pieces.base, pieces.slope, flag),
+        kernel.Tables(x, times, pieces.bounds, pieces.jumps, pieces.coefficients, flag),
         kernel.Places(*(np.full(kernel.LANES, -1, dtype=np.int64) for _ in kernel.Places._fields)),
         kernel.Results(*(getattr(batch, name) for name in kernel.Results._fields)),
     )
     with np.errstate(all="ignore"):
-        return bool(kernel.run_members_1(job))
+        return bool(kernel.run_members_3(job))
 
 
 def _fill_outcomes(compiled: Compiled, x: Floats, times: Floats, batch: Batch) -> None:
