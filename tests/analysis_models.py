@@ -16,7 +16,7 @@ from uq.analysis.sample import Sample
 from uq.analysis.tallies import Tallies
 from uq.design.blocks import Block
 from uq.design.design import Design
-from uq.solve.batch import Batch, Status
+from uq.solve.batch import Batch, Status, Truth
 
 Values = Callable[[np.ndarray, np.ndarray], np.ndarray]
 
@@ -25,7 +25,8 @@ Values = Callable[[np.ndarray, np.ndarray], np.ndarray]
 class Model:
     """values(u [member, input], times [time]) -> [member, watched, time]; outcomes likewise [member, outcome]; a limit is T > threshold.
 
-    fails(u) [member]: the time of failure, inf where there is none.
+    fails(u) [member]: the time of failure, inf where there is none. doubts(u) [member]: the time from which on the limit's condition
+    cannot be told, inf where there is none.
     """
 
     inputs: tuple[str, ...]
@@ -38,6 +39,7 @@ class Model:
     by: tuple[float, ...] = ()
     accept: float | None = None
     fails: Callable[[np.ndarray], np.ndarray] | None = None
+    doubts: Callable[[np.ndarray], np.ndarray] | None = None
 
     def ask(self, **changes: Any) -> Ask:
         limits = () if self.threshold is None else (LimitAsked("hot", "", f"T > {self.threshold}", self.by, self.accept),)
@@ -64,7 +66,7 @@ class Model:
         outcomes = self.outcomes(u) if self.outcomes else np.zeros((len(u), 0))
         end = np.full(len(u), times[-1])
         status = np.zeros(len(u), dtype=np.int8)
-        conditions = np.zeros((len(u), 0 if self.threshold is None else 1, len(times)), dtype=np.bool_)
+        conditions = np.zeros((len(u), 0 if self.threshold is None else 1, len(times)), dtype=np.int8)
         if self.fails is not None:
             when = self.fails(u)
             end = np.where(np.isfinite(when), when, end)
@@ -72,7 +74,9 @@ class Model:
             values[np.broadcast_to((times >= when[:, None])[:, None], values.shape)] = np.nan
             outcomes = np.where(np.isfinite(when)[:, None], np.nan, outcomes)
         if self.threshold is not None:
-            conditions[:, 0] = values[:, 0] > self.threshold
+            conditions[:, 0] = np.where(np.isnan(values[:, 0]), Truth.unknown, values[:, 0] > self.threshold)
+        if self.doubts is not None:
+            conditions[:, 0][times >= self.doubts(u)[:, None]] = Truth.unknown
         counts = np.ones(len(u), dtype=np.int32)
         return Batch(values, conditions, outcomes, status, end, 7 * counts, counts, np.zeros((len(u), 1)))
 

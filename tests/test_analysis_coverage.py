@@ -52,7 +52,7 @@ def test_probabilities(shares: dict[tuple[str, str], np.ndarray]) -> None:
     assert LEAST <= shares["limits/hot", "ever_by"][0] <= MOST
 
 
-@pytest.mark.parametrize("probability", [0.03, 3e-3, 3e-4, 3e-5])
+@pytest.mark.parametrize("probability", [3e-3, 3e-5])
 def test_small_probabilities(probability: float) -> None:
     share = covered(range(REPEATS), 64, probability, ("limits",))["limits/hot", "ever_by"][0]
     assert share >= LEAST

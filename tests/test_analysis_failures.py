@@ -12,7 +12,7 @@ from tests.analysis_models import Model, complete, folded, forecast, gaussian, n
 from uq.analysis.finding import Finding
 from uq.analysis.policy import TOO_MANY_LOST, WITHHELD
 from uq.design.design import Design
-from uq.solve.batch import Status
+from uq.solve.batch import Batch, Status, Truth
 
 TIMES = (0.0, 1.0, 2.0, 3.0)
 LEVELS = (0.05, 0.25, 0.5, 0.75, 0.95)
@@ -68,6 +68,42 @@ def test_bounds_hold_what_would_have_been() -> None:
     # Before the failure nothing is lost.
     assert (number(band, "quantiles_if_low")[:, :2] == number(band, "quantiles")[:, :2]).all()
     assert (number(band, "quantiles_if_high")[:, :2] == number(band, "quantiles")[:, :2]).all()
+
+
+def test_a_condition_that_cannot_be_told_counts_both_ways_for_this_limit_only() -> None:
+    # the same members as if they had failed, but they are whole: all else is known
+    doubtful = replace(failing(0.05), fails=None, doubts=lambda u: np.where(u[:, 0] > 0.95, 1.5, np.inf))
+    told, whole = forecast(doubtful, DESIGN), found(0.0, "bound")
+    lost, unsure = found(0.05, "bound")["limits/hot"], told["limits/hot"]
+    for name in ("ever", "now", "ever_by", "first_time"):
+        for which in ("", "_low", "_high", "_if_low", "_if_high"):
+            assert np.array_equal(number(lost, name + which), number(unsure, name + which)), name + which
+    assert unsure.attributes["verdict"] == lost.attributes["verdict"]
+    assert number(unsure, "ever_by_low")[-1] < number(whole["limits/hot"], "ever_by")[-1] < number(unsure, "ever_by_high")[-1]
+    assert np.array_equal(number(told["ranking/hot"], "first"), number(found(0.05, "bound")["ranking/hot"], "first"), equal_nan=True)
+    for group in ("bands/T", "outcomes/o", "ranking/T"):
+        for name, variable in whole[group].variables.items():
+            assert np.array_equal(number(told[group], name), variable.data, equal_nan=True), (group, name)
+    assert number(told["failures"], "count")[1:].sum() == 0
+
+
+class Blinking(Model):
+    """Nobody can tell the condition at time 1."""
+
+    def solve(self, u: np.ndarray) -> Batch:
+        batch = super().solve(u)
+        batch.conditions[:, :, 1] = Truth.unknown
+        return batch
+
+
+@pytest.mark.parametrize(("threshold", "now", "ever"), [(-1e3, 1.0, [1.0, 1.0]), (1e3, 0.0, [0.0, 1.0])])
+def test_a_condition_that_can_be_told_again_is_known_then(threshold: float, now: float, ever: list[float]) -> None:
+    # but whether it ever was true is known only where it was so before
+    limit = forecast(Blinking(("p", "q"), TIMES, gaussian, threshold=threshold, by=(3.0,)), DESIGN)["limits/hot"]
+    assert number(limit, "now_if_low").tolist() == [now, 0.0, now, now]
+    assert number(limit, "now_if_high").tolist() == [now, 1.0, now, now]
+    known = "ever_if_low" not in limit.variables
+    assert [float(number(limit, "ever" if known else name)[-1]) for name in ("ever_if_low", "ever_if_high")] == ever
 
 
 def test_probabilities_count_the_failed_both_ways_and_an_earlier_passing_stands() -> None:
@@ -184,7 +220,9 @@ def test_refuse_withholds_what_failures_touch_and_nothing_else() -> None:
     assert groups["limits/hot"].attributes["reason"] == WITHHELD
     for name in ("quantiles", "mean", "sd", "missing"):
         assert np.isnan(number(groups["outcomes/o"], name)).all()
+        assert groups["outcomes/o"].variables[name].attributes["reason"] == WITHHELD
     assert np.isnan(number(groups["bands/T"], "simultaneous")).all()
+    assert groups["bands/T"].variables["simultaneous"].attributes["reason"] == WITHHELD
 
 
 def test_exclude_says_given_success() -> None:
@@ -225,10 +263,11 @@ def test_failed_members_are_counted_and_shown() -> None:
     assert count[Status.ok] == (~gone).sum()
     assert count.sum() == DESIGN.solves
     assert number(failures, "count_base").sum() == DESIGN.members
+    # A and B members only: the mixed ones repeat their inputs.
+    base = np.concatenate([DESIGN.base(block) for block in blocks])
     shown = number(failures, "inputs")
-    assert shown.shape == (min(1000, gone.sum()), 2)
-    assert (shown[:, 0] > 0.95).all()
-    assert {tuple(row) for row in shown} <= {tuple(row) for row in u[gone]}
+    assert shown.shape == ((base[:, 0] > 0.95).sum(), 2)
+    assert {tuple(row) for row in shown} == {tuple(row) for row in base[base[:, 0] > 0.95]}
     assert (number(failures, "failure_time") == 1.5).all()
     assert (number(failures, "failure_status") == Status.blew_up).all()
     assert "inputs" not in found(0.0, "bound")["failures"].variables
@@ -242,6 +281,10 @@ def test_details_stop_at_a_thousand_whatever_the_blocks() -> None:
         part = folded(tallied(model, DESIGN, ask, DESIGN.blocks(0, 256, rows)))
         shown.append({finding.group: finding for finding in part.findings(ask)}["failures"])
     assert number(shown[0], "inputs").shape == (1000, 2)
+    # Spread over all 16 replicates.
+    of = {tuple(row): block.replicate for block in DESIGN.blocks(0, 256, 256) for row in DESIGN.base(block)}
+    counts = np.bincount([of[tuple(row)] for row in number(shown[0], "inputs")], minlength=16)
+    assert counts.min() > 40
     for name in ("inputs", "failure_time", "failure_status"):
         assert np.array_equal(number(shown[0], name), number(shown[1], name))
 

@@ -107,6 +107,11 @@ def test_limits(linear: dict[str, Finding]) -> None:
     share_by_time = ever / ever[-1]
     expected = [TIMES[int(np.searchsorted(share_by_time, level))] for level in LEVELS]
     assert number(limit, "first_time").tolist() == expected
+    # It came true somewhere in the step that ends there, so the lower ends reach down to the judged time before, where there is one.
+    before = [max([time for time in TIMES if time < each], default=TIMES[0]) for each in expected]
+    assert (number(limit, "first_time_low") <= before).all()
+    assert set(number(limit, "first_time_low")) <= set(TIMES)
+    assert (number(limit, "first_time_high") >= expected).all()
     assert limit.attributes["verdict"] == "not met"
     assert limit.attributes["accept"] == 0.2
 

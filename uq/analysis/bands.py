@@ -11,16 +11,15 @@ from numpy.typing import NDArray
 from uq.analysis.ask import Ask, Counts, Floats, Quantity
 from uq.analysis.estimate import Estimate, ratio, standard_deviation
 from uq.analysis.finding import Finding, Variable
+from uq.analysis.histograms import BinnedCourses, Histograms
 from uq.analysis.kept import Courses, Kept
 from uq.analysis.moments import Moments
 from uq.analysis.policy import LARGEST_LOSS, TOO_MANY_LOST, WITHHELD, Counted, Named, stacked
-from uq.analysis.quantiles import Levels, outermost, quantiles
+from uq.analysis.quantiles import Levels, outermost
 
 # `map`, or something like it that uses several threads.
 Apply = Callable[[Callable[[int], Counted], Iterable[int]], Iterable[Counted]]
-# Values of one tile of cells: so many that numpy's calls do not count, so few that a tile and the places of its bins stay in a cache.
-_TILE = 262144
-# Runs of tiles that may be worked on at once; each has its own memory for a tile.
+# Runs of cells that may be worked on at once; each has memory for the values of one cell.
 _RUNS = 16
 
 
@@ -55,30 +54,17 @@ def mean_and_deviation(moments: Moments, centre: Floats, confidence: float) -> M
     return MeanAndDeviation(shifted.where(~too_many), deviation.where(~too_many), lost > 0, too_many)
 
 
-def all_quantiles(kept: Kept, cells: int, levels: Levels, apply: Apply) -> Counted:
-    """Quantiles of the first `cells` cells of kept values [cell, level], tile by tile; `apply` gets some runs of tiles."""
-    members = kept.members
-    step = max(1, _TILE // members)
-    run = -(-cells // (_RUNS * step)) * step
-
-    def several(first: int) -> Counted:
-        last = min(first + run, cells)
-        shape = (step, kept.replicates, members // kept.replicates)
-        values, spare = np.empty(shape), np.empty(shape, dtype=np.intp)
-        found = []
-        for start in range(first, last, step):
-            many = min(step, last - start)
-            found.append(quantiles(kept.cells(start, start + many, values[:many]), levels, spare=spare[:many]))
-        return stacked(found)
-
-    return stacked(list(apply(several, range(0, cells, run))))
+def all_quantiles(kept: Kept | Histograms, cells: int, levels: Levels, apply: Apply) -> Counted:
+    """Quantiles of the first `cells` cells of kept values [cell, level]; `apply` gets some runs of cells."""
+    run = -(-cells // _RUNS)
+    return stacked(list(apply(lambda first: kept.quantiles(first, min(first + run, cells), levels), range(0, cells, run))))
 
 
 @dataclass(frozen=True, eq=False)
 class Watched:
     """The tallies that bands are made of."""
 
-    courses: Courses
+    courses: Courses | BinnedCourses
     moments: Moments
 
 
@@ -123,9 +109,9 @@ def moment_variables(named: Moment, found: MeanAndDeviation, here: slice | int, 
     return mean.variables(part(found.mean), reason) | deviation.variables(part(found.deviation), reason)
 
 
-def simultaneous_size(ask: Ask, deviations: Kept) -> Counted:
+def simultaneous_size(ask: Ask, deviations: Kept | Histograms) -> Counted:
     """The quantile over members, at the share between the outermost quantiles, of the largest deviation in half-widths: [watched, 1]."""
-    return quantiles(deviations.cells(0, len(ask.watched)), Levels((outermost(ask.quantiles),), ask.confidence))
+    return deviations.quantiles(0, len(ask.watched), Levels((outermost(ask.quantiles),), ask.confidence))
 
 
 def _simultaneous(quantity: Quantity, ask: Ask, place: int, size: Counted) -> dict[str, Variable]:
@@ -144,10 +130,13 @@ def _simultaneous(quantity: Quantity, ask: Ask, place: int, size: Counted) -> di
     if_low = _sides(outward, inward)
     if_high = _sides(inward, outward)
     lost = np.full((2, len(ask.grid)), bool(size.lost[place, 0]))
+    # In half-widths of the pilot.
+    error = None if size.error is None else np.broadcast_to(size.error[place, 0] * half_width, lost.shape)
+    part = None if size.error is None else np.broadcast_to(size.error[place, 0] / 2, lost.shape)
     words = f"range that whole courses of {quantity.label or quantity.name} keep to with probability {share:g}"
     named = Named("simultaneous", ("side", "time"), words, quantity.unit, {"share": float(f"{share:.9g}")})
     reason = "" if share > 0 else "needs two quantile levels"
-    return named.counted(Counted(edges(size.success), if_low, if_high, lost), ask.failures, reason)
+    return named.counted(Counted(edges(size.success), if_low, if_high, lost, error, part), ask.failures, reason)
 
 
 def _sides(lower: Estimate, upper: Estimate) -> Estimate:

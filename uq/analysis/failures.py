@@ -1,4 +1,4 @@
-"""Failed members: how many by status, and where up to 1000 of them failed. And the work that all solves together took."""
+"""Failed members: how many by status, and where up to 1000 members failed. And the work that all solves together took."""
 
 from __future__ import annotations
 
@@ -9,14 +9,16 @@ import numpy as np
 
 from uq.analysis.ask import Ask, Floats
 from uq.analysis.finding import Finding, Variable
-from uq.analysis.pieces import Pieces
+from uq.analysis.pieces import Array, Pieces
 from uq.analysis.sample import Sample, failed
 from uq.solve.batch import Status
 
 DETAILED = 1000
-# Where a member stands: its row, its part of the row (0 A, 1 B, then the mixed ones), its replicate. Details are given in this order.
+# Where a member stands: its row, its part of the row (0 A, 1 B), its replicate. Details are given in this order, so that they are spread
+# over replicates. Mixed members are left out: their coordinates are those of A and B members.
 Place = tuple[int, int, int]
 Detail = tuple[Floats, float, int]
+_PARTS = ("inputs", "time", "status")
 
 
 @dataclass(frozen=True, eq=False)
@@ -33,7 +35,7 @@ class Failures:
         work = np.array([sample.steps.sum(dtype=np.int64), sample.rejections.sum(dtype=np.int64)])
         counts = {"base": status[0] + status[1], "all": status[0] + status[1] + status[2], "work": work}
         held: dict[Place, Detail] = {}
-        if (status[0] + status[1] + status[2])[Status.ended_by_event + 1 :].any():
+        if counts["base"][Status.ended_by_event + 1 :].any():
             held = _details(sample)
         return cls(Pieces.of(sample.block, counts), held)
 
@@ -43,6 +45,23 @@ class Failures:
         if len(both) > DETAILED:
             both = {place: both[place] for place in sorted(both)[:DETAILED]}
         return Failures(self.pieces.merge(other.pieces), both)
+
+    def arrays(self) -> dict[str, Array]:
+        """The counts; place [member, 3]: row, part, replicate; inputs [member, input], time, status [member]."""
+        keys = sorted(self.held)
+        parts = {name: np.array([self.held[key][place] for key in keys]) for place, name in enumerate(_PARTS)} if keys else {}
+        counts = {f"counts/{name}": array for name, array in self.pieces.arrays().items()}
+        return {**counts, "place": np.array(keys, dtype=np.int64).reshape(len(keys), 3), **parts}
+
+    @classmethod
+    def of_arrays(cls, arrays: Mapping[str, Array]) -> Failures:
+        """The failures that `arrays` tells of."""
+        held: dict[Place, Detail] = {}
+        for place, (row, part, replicate) in enumerate(arrays["place"].tolist()):
+            x, time, status = (arrays[name][place] for name in _PARTS)
+            held[row, part, replicate] = (x, float(time), int(status))
+        counts = {path.removeprefix("counts/"): array for path, array in arrays.items() if path.startswith("counts/")}
+        return cls(Pieces.of_arrays(counts), held)
 
     def findings(self, ask: Ask) -> tuple[Finding, ...]:
         """The groups failures and solver."""
@@ -73,10 +92,10 @@ class Failures:
 def _details(sample: Sample) -> dict[Place, Detail]:
     held: dict[Place, Detail] = {}
     block = sample.block
-    status = np.stack([sample.status.a, sample.status.b, *sample.status.mixed])
-    times = np.stack([sample.end_time.a, sample.end_time.b, *sample.end_time.mixed])
+    status = np.stack([sample.status.a, sample.status.b])
+    times = np.stack([sample.end_time.a, sample.end_time.b])
     for row, part in np.argwhere(failed(status).T)[:DETAILED]:
-        x = sample.x.a[row] if part == 0 else sample.x.b[row] if part == 1 else sample.x.mixed[part - 2, row]
+        x = sample.x.a[row] if part == 0 else sample.x.b[row]
         place = (block.first + int(row), int(part), block.replicate)
         held[place] = (x.copy(), float(times[part, row]), int(status[part, row]))
     return held

@@ -1,6 +1,6 @@
 """The values of A and B rows, kept for exact quantiles.
 
-Pieces are stored cell by cell, so that a finding copies one tile of cells at a time and never the whole.
+Pieces are stored cell by cell, so that a finding copies one cell at a time and never the whole.
 """
 
 from __future__ import annotations
@@ -10,11 +10,12 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from uq.analysis.ask import Ask, Floats
+from uq.analysis.ask import Ask, Counts, Floats, kept_bytes
+from uq.analysis.policy import Counted
+from uq.analysis.quantiles import Levels, quantiles_of_pieces
 from uq.analysis.sample import Sample
 
-_ROWS = 128
-_CELLS = 16
+__all__ = ["Courses", "Kept", "kept_bytes", "kept_outcomes"]
 
 
 @dataclass(frozen=True, eq=False)
@@ -29,6 +30,16 @@ class Kept:
             raise ValueError("rows are kept twice")
         return Kept({**self.pieces, **other.pieces})
 
+    def arrays(self) -> dict[str, Floats]:
+        """Each piece as it is, by "replicate-first row"; nothing is copied."""
+        return {f"{replicate}-{first}": piece for (replicate, first), piece in self.pieces.items()}
+
+    @classmethod
+    def of_arrays(cls, arrays: Mapping[str, Floats]) -> Kept:
+        """The pieces that `arrays` tells of."""
+        places = {name: name.split("-") for name in arrays}
+        return cls({(int(place[0]), int(place[1])): np.ascontiguousarray(arrays[name]) for name, place in places.items()})
+
     @property
     def replicates(self) -> int:
         """How many replicates have values."""
@@ -39,11 +50,10 @@ class Kept:
         """How many members have values."""
         return sum(piece.shape[1] for piece in self.pieces.values())
 
-    def cells(self, start: int, stop: int, out: Floats | None = None) -> Floats:
-        """The values of cells `start` to `stop`: [cell, replicate, member], contiguous; into `out` if given."""
-        ordered = [self.pieces[key][start:stop] for key in sorted(self.pieces)]
-        flat = None if out is None else out.reshape(stop - start, -1)
-        return np.concatenate(ordered, axis=1, out=flat).reshape(stop - start, self.replicates, -1)
+    def quantiles(self, first: int, stop: int, levels: Levels, absent: Counts | None = None) -> Counted:
+        """Quantiles of the cells from `first` to `stop` [cell, level]; absent [cell, replicate]: see `quantiles.quantiles`."""
+        absent = np.zeros((stop - first, self.replicates), dtype=np.int64) if absent is None else absent
+        return quantiles_of_pieces([self.pieces[key] for key in sorted(self.pieces)], first, absent, levels)
 
 
 @dataclass(frozen=True, eq=False)
@@ -60,9 +70,15 @@ class Courses:
     @classmethod
     def of(cls, ask: Ask, sample: Sample) -> Courses:
         """Those of one block."""
-        key = (sample.block.replicate, sample.block.first)
-        values = _by_cell(ask, sample)
-        return cls(Kept({key: values}), Kept({key: _deviations(ask, values)}))
+        from uq.analysis.compiled import keep_1
+
+        key, rows = (sample.block.replicate, sample.block.first), sample.rows
+        # Machine code is made for arrays of one kind.
+        centre, inverse = np.require(ask.centre.reshape(-1), np.float64, ["C", "W"]), 1 / ask.half_width.reshape(-1)
+        values, deviations = np.empty((len(centre), 2 * rows)), np.empty((len(ask.watched), 2 * rows))
+        keep_1(sample.courses.a, 0, centre, inverse, values, deviations)
+        keep_1(sample.courses.b, rows, centre, inverse, values, deviations)
+        return cls(Kept({key: values}), Kept({key: deviations}))
 
     def merge(self, other: Courses) -> Courses:
         """Both together."""
@@ -73,35 +89,3 @@ def kept_outcomes(ask: Ask, sample: Sample) -> Kept:
     """The outcomes; a cell is an outcome."""
     found = np.concatenate([sample.outcomes.a, sample.outcomes.b]).T.copy()
     return Kept({(sample.block.replicate, sample.block.first): found})
-
-
-def _by_cell(ask: Ask, sample: Sample) -> Floats:
-    """The watched quantities at the output times [cell, member], A members before B members."""
-    rows = sample.rows
-    found = np.empty((len(ask.watched) * len(ask.grid), 2 * rows))
-    for offset, part in ((0, sample.values.a), (rows, sample.values.b)):
-        for start in range(0, rows, _ROWS):
-            chosen = part[start : start + _ROWS]
-            chosen = chosen if ask.grid_is_all else chosen[..., ask.grid]
-            found[:, offset + start : offset + start + len(chosen)] = chosen.reshape(len(chosen), -1).T
-    return found
-
-
-def _deviations(ask: Ask, values: Floats) -> Floats:
-    times, many = len(ask.grid), len(ask.watched)
-    found = np.zeros((many, values.shape[1]))
-    inverse = 1 / ask.half_width
-    for place in range(many):
-        course = values[place * times : (place + 1) * times]
-        for start in range(0, times, _CELLS):
-            tile = course[start : start + _CELLS] - ask.centre[place, start : start + _CELLS, None]
-            tile *= inverse[place, start : start + _CELLS, None]
-            np.abs(tile, out=tile)
-            np.maximum(found[place], np.maximum.reduce(tile, axis=0), out=found[place])
-    return found
-
-
-def kept_bytes(ask: Ask, members: int) -> int:
-    """Bytes needed to keep the values of so many A and B members."""
-    bands = len(ask.watched) * (len(ask.grid) + 1) if ask.asks("bands") else 0
-    return 8 * members * (bands + (len(ask.outcomes) if ask.asks("outcomes") else 0))

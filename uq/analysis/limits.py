@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import numpy as np
 
-from uq.analysis.ask import Ask, Counts, LimitAsked
+from uq.analysis.ask import Ask, Counts, Floats, LimitAsked
 from uq.analysis.estimate import Estimate
 from uq.analysis.finding import Finding, Variable
 from uq.analysis.passings import Passings
@@ -24,7 +24,7 @@ def findings(ask: Ask, passings: Passings) -> tuple[Finding, ...]:
 
 
 def _of_limit(counts: dict[str, Array], place: int) -> dict[str, Counts]:
-    return {**{name: counts[name][:, place] for name in ("passed", "unknown", "now")}, "failed": counts["failed"]}
+    return {name: counts[name][:, place] for name in ("passed", "unknown", "now", "unsure")}
 
 
 def _limit(ask: Ask, limit: LimitAsked, counts: dict[str, Counts], members: int) -> Finding:
@@ -32,9 +32,8 @@ def _limit(ask: Ask, limit: LimitAsked, counts: dict[str, Counts], members: int)
     places = np.searchsorted(ask.judged, ask.grid)
     by = np.searchsorted(ask.judged, [ask.place(time) for time in limit.by])
     passed, unknown = counts["passed"].cumsum(axis=1), counts["unknown"].cumsum(axis=1)
-    failed = counts["failed"].cumsum(axis=1)
     ever = probability_both_ways(passed[:, places], unknown[:, places], members, ask.confidence)
-    now = probability_both_ways(counts["now"][:, places], failed[:, places], members, ask.confidence)
+    now = probability_both_ways(counts["now"][:, places], counts["unsure"][:, places], members, ask.confidence)
     ever_by = probability_both_ways(passed[:, by], unknown[:, by], members, ask.confidence)
     variables = Named("ever", ("time",), f"probability that it has been true by then: {label}").counted(ever, ask.failures)
     variables |= Named("now", ("time",), f"probability that it is true then: {label}").counted(now, ask.failures)
@@ -45,15 +44,19 @@ def _limit(ask: Ask, limit: LimitAsked, counts: dict[str, Counts], members: int)
 
 
 def _first_time(ask: Ask, limit: LimitAsked, counts: dict[str, Counts]) -> dict[str, Variable]:
-    """Quantiles of the first time among the members where it comes true; members not known come in at once, or at the last time."""
+    """Quantiles of the first time among the members where it comes true; members not known come in at once, or at the last time.
+
+    A first time is the judged time at which it is seen to be true. It came true somewhere in the step that ends there, so that the lower
+    ends reach down to the judged time before.
+    """
     levels = Levels(ask.quantiles, ask.confidence)
     times = ask.solved_times[ask.judged]
     came, unknown = counts["passed"][:, :-1], counts["unknown"][:, :-1]
-    found = Counted.complete(weighted_quantiles(came, times, levels))
+    found = Counted.complete(_one_step_down(weighted_quantiles(came, times, levels), times))
     if unknown.any():
         late = came.copy()
         late[:, -1] += unknown.sum(axis=1)
-        early, last = weighted_quantiles(came + unknown, times, levels), weighted_quantiles(late, times, levels)
+        early, last = (_one_step_down(weighted_quantiles(each, times, levels), times) for each in (came + unknown, late))
         lost = np.ones(len(levels.shares), dtype=np.bool_)
         if_low = Estimate(*(np.fmin(one, other) for one, other in zip(_ends(early), _ends(found.success), strict=True)))
         if_high = Estimate(*(np.fmax(one, other) for one, other in zip(_ends(last), _ends(found.success), strict=True)))
@@ -61,6 +64,12 @@ def _first_time(ask: Ask, limit: LimitAsked, counts: dict[str, Counts]) -> dict[
     words = f"first time at which it is true, among members where it comes true: {limit.label or limit.name}"
     reason = NEVER if np.isnan(found.success.value).any() else ""
     return Named("first_time", ("quantile",), words, ask.time_unit).counted(found, ask.failures, reason)
+
+
+def _one_step_down(estimate: Estimate, times: Floats) -> Estimate:
+    """The same with each lower end at the judged time before it, where there is one; nan stays."""
+    before = times[np.maximum(np.searchsorted(times, estimate.low) - 1, 0)]
+    return Estimate(estimate.value, np.fmin(estimate.low, before) + 0 * estimate.low, estimate.high)
 
 
 def _ends(estimate: Estimate) -> tuple[Array, Array, Array]:

@@ -13,6 +13,7 @@ from uq.analysis.pieces import Array
 from uq.analysis.sample import Sample
 
 SHOWN = 200
+_PARTS = ("watched", "outcomes", "inputs", "status")
 
 
 @dataclass(frozen=True, eq=False)
@@ -37,6 +38,21 @@ class Members:
     def merge(self, other: Members) -> Members:
         """Both together."""
         return Members(self.replicates, {**self.held, **other.held})
+
+    def arrays(self) -> dict[str, Array]:
+        """place [member, 2]: replicate and row; watched, outcomes, inputs, status [member, ..]."""
+        keys = sorted(self.held)
+        parts = {name: np.array([self.held[key][place] for key in keys]) for place, name in enumerate(_PARTS)} if keys else {}
+        return {"replicates": np.array(self.replicates), "place": np.array(keys, dtype=np.int64).reshape(len(keys), 2), **parts}
+
+    @classmethod
+    def of_arrays(cls, arrays: Mapping[str, Array]) -> Members:
+        """The members that `arrays` tells of."""
+        held = {}
+        for place, (replicate, row) in enumerate(arrays["place"].tolist()):
+            values, outcomes, x, status = (arrays[name][place] for name in _PARTS)
+            held[replicate, row] = (values, outcomes, x, int(status))
+        return cls(int(arrays["replicates"]), held)
 
     def findings(self, ask: Ask) -> tuple[Finding, ...]:
         """The first 200, row by row through the replicates: the groups members, members/watched, members/outcomes and members/inputs."""

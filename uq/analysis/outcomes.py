@@ -9,12 +9,13 @@ import numpy as np
 from uq.analysis.ask import Ask, Counts
 from uq.analysis.bands import Moment, mean_and_deviation, moment_variables
 from uq.analysis.finding import Finding
+from uq.analysis.histograms import Histograms
 from uq.analysis.kept import Kept
 from uq.analysis.moments import Moments
 from uq.analysis.pieces import Pieces
 from uq.analysis.policy import Named
 from uq.analysis.probabilities import probability_both_ways
-from uq.analysis.quantiles import Levels, quantiles
+from uq.analysis.quantiles import Levels
 from uq.analysis.sample import Sample, failed
 
 
@@ -31,8 +32,12 @@ class Absent:
         lost = 0
         for outcomes, status in ((sample.outcomes.a, sample.status.a), (sample.outcomes.b, sample.status.b)):
             gone = failed(status)
-            without += (np.isnan(outcomes) & ~gone[:, None]).sum(axis=0)
-            lost += int(gone.sum())
+            lost += int(np.count_nonzero(gone))
+            # A sum is nan wherever a value is, and costs less than a look at each.
+            with np.errstate(invalid="ignore"):
+                whole = not np.isnan(outcomes.sum())
+            if not whole:
+                without += np.count_nonzero(np.isnan(outcomes) & ~gone[:, None], axis=0)
         return cls(Pieces.of(sample.block, {"without": without, "failed": np.array(lost)}))
 
     def merge(self, other: Absent) -> Absent:
@@ -44,7 +49,7 @@ class Absent:
 class Taken:
     """The tallies that the findings are made of."""
 
-    kept: Kept
+    kept: Kept | Histograms
     moments: Moments
     absent: Absent
 
@@ -55,7 +60,7 @@ def findings(ask: Ask, tallies: Taken) -> tuple[Finding, ...]:
     members = 2 * tallies.absent.pieces.rows
     without: Counts = counts["without"]
     gone: Counts = np.broadcast_to(counts["failed"][:, None], without.shape)
-    found = quantiles(tallies.kept.cells(0, len(ask.outcomes)), Levels(ask.quantiles, ask.confidence), without.T)
+    found = tallies.kept.quantiles(0, len(ask.outcomes), Levels(ask.quantiles, ask.confidence), without.T)
     moment = mean_and_deviation(tallies.moments, ask.outcome_centre, ask.confidence)
     missing = probability_both_ways(without, gone, members, ask.confidence)
     groups = []

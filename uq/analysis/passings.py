@@ -1,7 +1,9 @@
 """When members pass limits: counts of first passing times, exact whole numbers.
 
 Limits are judged at the output times and the `by` times. A member's passing is a place among the judged times (their number where it never
-passes); its share by any time follows from the counts per place. A member that failed before it passed is unknown from then on.
+passes); its share by any time follows from the counts per place. A member that failed before it passed is unknown from then on, and so
+is, for this limit only, one whose condition was unknown before it was true (`solve.batch.Truth`): it may have passed then. An earlier
+passing stands.
 """
 
 from __future__ import annotations
@@ -13,19 +15,18 @@ from numpy.typing import NDArray
 
 from uq.analysis.ask import Ask, Counts
 from uq.analysis.pieces import Array, Pieces
-from uq.analysis.sample import Sample, failed
+from uq.analysis.sample import Sample
 from uq.design.blocks import Parts
 
 Places = NDArray[np.intp]
-_CHUNK = 128
 
 
 @dataclass(frozen=True, eq=False)
 class Passings:
     """Counts by replicate, [limit, place]; the last place means never.
 
-    passed: first passings of A and B members; unknown: of those that failed before passing, when; now: how many are true [limit, judged];
-    failed: when A and B members failed [place]. For the ranking, over rows known as a whole: lost [limit, place]: when rows are lost;
+    passed: first passings of A and B members; unknown: of those that became unknown before passing, when; now, unsure: how many are true
+    and unknown at the time [limit, judged]. For the ranking, over rows known as a whole: lost [limit, place]: when rows are lost;
     a, b [limit, place]; both: the later of A's and B's passing; m, a_and_m, b_and_m [limit, input, place] the same with mixed members.
     """
 
@@ -40,8 +41,8 @@ class Passings:
         counts: dict[str, Array] = {
             "passed": _count(first.a, never) + _count(first.b, never),
             "unknown": _count(unknown.a, never) + _count(unknown.b, never),
-            "now": _now(ask, sample.conditions.a) + _now(ask, sample.conditions.b),
-            "failed": _count(places.failed.a[:, None], never)[0] + _count(places.failed.b[:, None], never)[0],
+            "now": places.now,
+            "unsure": places.unsure,
         }
         if ask.asks("ranking"):
             counts |= _ranked(places, never)
@@ -54,38 +55,35 @@ class Passings:
 
 @dataclass(frozen=True, eq=False)
 class _Places:
-    """Of every member and limit the place of the first passing and of becoming unknown [.., limit]; of every member that of failing."""
+    """Of every member and limit the place of the first passing and of becoming unknown before it [.., limit].
+
+    now, unsure [limit, judged]: how many A and B members have the condition true, and how many unknown.
+    """
 
     first: Parts
     unknown: Parts
-    failed: Parts
+    now: Counts
+    unsure: Counts
 
     @classmethod
     def of(cls, ask: Ask, sample: Sample) -> _Places:
-        times = ask.solved_times[ask.judged]
-        never = len(times)
-
-        def needed(part: Parts) -> Parts:
-            return part if ask.asks("ranking") else Parts(part.a, part.b, part.mixed[:0])
-
-        first = Parts(*(_first(_judged(ask, conditions)) for conditions in needed(sample.conditions)))
-        ends = zip(needed(sample.status), needed(sample.end_time), strict=True)
-        fails = Parts(*(np.where(failed(status), np.searchsorted(times, end, side="left"), never) for status, end in ends))
-        pairs = zip(first, fails, strict=True)
-        unknown = Parts(*(np.where(passing < never, never, failing[..., None]) for passing, failing in pairs))
-        return cls(first, unknown, fails)
+        part = sample.conditions
+        needed = part if ask.asks("ranking") else Parts(part.a, part.b, part.mixed[:0])
+        a, b, mixed = (_judged(ask, conditions) for conditions in needed)
+        return cls(Parts(a[0], b[0], mixed[0]), Parts(a[1], b[1], mixed[1]), a[2] + b[2], a[3] + b[3])
 
 
-def _judged(ask: Ask, conditions: NDArray[np.bool_]) -> NDArray[np.bool_]:
-    """Conditions at the judged times only."""
-    return conditions if len(ask.judged) == len(ask.solved_times) else conditions[..., ask.judged]
+def _judged(ask: Ask, conditions: NDArray[np.int8]) -> tuple[Places, Places, Counts, Counts]:
+    """The places of being true and of being unknown first [.., limit], from conditions [.., limit, solved]; and how many are true and
+    unknown at each time [limit, judged].
+    """
+    from uq.analysis.compiled import first_true_2
 
-
-def _first(conditions: NDArray[np.bool_]) -> Places:
-    """The first place along the last axis at which a condition is true; their number where there is none."""
-    place = conditions.argmax(axis=-1)
-    came = np.take_along_axis(conditions, place[..., None], axis=-1)[..., 0]
-    return np.asarray(np.where(came, place, conditions.shape[-1]))
+    flat = np.ascontiguousarray(conditions).reshape(-1, *conditions.shape[-2:]).view(np.uint8)
+    first, lost = np.empty((2, *flat.shape[:2]), dtype=np.intp)
+    now, unsure = np.zeros((2, flat.shape[1], len(ask.judged)), dtype=np.int64)
+    first_true_2(flat, ask.judged, first, lost, now, unsure)
+    return first.reshape(conditions.shape[:-1]), lost.reshape(conditions.shape[:-1]), now, unsure
 
 
 def _count(places: Places, never: int) -> Counts:
@@ -123,13 +121,3 @@ def _ranked(places: _Places, never: int) -> dict[str, Counts]:
         "a_and_m": count(np.maximum(a, m)),
         "b_and_m": count(np.maximum(b, m)),
     }
-
-
-def _now(ask: Ask, conditions: NDArray[np.bool_]) -> Counts:
-    """How many members have the condition true at each judged time [limit, judged], from [member, limit, solved]."""
-    judged = _judged(ask, conditions)
-    total = np.zeros(judged.shape[1:], dtype=np.int64)
-    # Sums of at most 128 truth values fit into a byte, which adds without conversion.
-    for start in range(0, len(judged), _CHUNK):
-        total += np.add.reduce(judged[start : start + _CHUNK].view(np.uint8), axis=0, dtype=np.uint8)
-    return total

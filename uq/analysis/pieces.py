@@ -67,6 +67,22 @@ class Pieces:
             _place(held, key, sums)
         return Pieces(held)
 
+    def arrays(self) -> dict[str, Array]:
+        """place [piece, 3]: replicate, first row, rows; and each sum with the piece as leading axis."""
+        keys = sorted(self.held)
+        names = self.held[keys[0]].keys() if keys else ()
+        return {
+            "place": np.array(keys, dtype=np.int64),
+            **{f"sums/{name}": np.stack([self.held[key][name] for key in keys]) for name in names},
+        }
+
+    @classmethod
+    def of_arrays(cls, arrays: Mapping[str, Array]) -> Pieces:
+        """The pieces that `arrays` tells of."""
+        names = [path.removeprefix("sums/") for path in arrays if path.startswith("sums/")]
+        places = enumerate(arrays["place"].tolist())
+        return cls({(a, b, c): {name: np.array(arrays[f"sums/{name}"][piece]) for name in names} for piece, (a, b, c) in places})
+
     @property
     def rows(self) -> int:
         """Rows of each replicate."""

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Any, Literal
 
 import numpy as np
@@ -25,12 +25,18 @@ NOBODY_LEFT = "no member is left that has a value"
 
 @dataclass(frozen=True, eq=False)
 class Counted:
-    """An estimate given success, and with the failed members counted both ways; `lost`: where any member failed."""
+    """An estimate given success, and with the failed members counted both ways; `lost`: where any member failed.
+
+    error, share: what the estimate may be off because values were counted into bins, where they were; and as a share of the width
+    from 5 to 95 %.
+    """
 
     success: Estimate
     if_low: Estimate
     if_high: Estimate
     lost: NDArray[np.bool_]
+    error: Floats | None = None
+    share: Floats | None = None
 
     @classmethod
     def complete(cls, estimate: Estimate) -> Counted:
@@ -43,7 +49,8 @@ class Counted:
         def changed(estimate: Estimate) -> Estimate:
             return Estimate(change(estimate.value), change(estimate.low), change(estimate.high))
 
-        return Counted(changed(self.success), changed(self.if_low), changed(self.if_high), change(self.lost))
+        error, share = (None if each is None else change(each) for each in (self.error, self.share))
+        return Counted(changed(self.success), changed(self.if_low), changed(self.if_high), change(self.lost), error, share)
 
     def at(self, place: int) -> Counted:
         """The part at one place of the leading axis."""
@@ -58,7 +65,11 @@ def stacked(parts: list[Counted]) -> Counted:
         return Estimate(*(np.concatenate([getattr(end, name) for end in ends]) for name in ("value", "low", "high")))
 
     lost = np.concatenate([part.lost for part in parts])
-    return Counted(joined(lambda part: part.success), joined(lambda part: part.if_low), joined(lambda part: part.if_high), lost)
+    ways = joined(lambda part: part.success), joined(lambda part: part.if_low), joined(lambda part: part.if_high)
+    errors = [(part.error, part.share) for part in parts if part.error is not None and part.share is not None]
+    if not errors:
+        return Counted(*ways, lost)
+    return Counted(*ways, lost, *(np.concatenate(each) for each in zip(*errors, strict=True)))
 
 
 @dataclass(frozen=True)
@@ -81,10 +92,19 @@ class Named:
 
     def counted(self, found: Counted, policy: Policy, reason: str = "") -> dict[str, Variable]:
         """The variables that the policy gives; see the module."""
-        return _POLICIES[policy](self, found, reason)
+        named = self
+        if found.error is not None and found.share is not None:
+            binned = {"bin_error": _largest(found.error), "bin_error_share": _largest(found.share)}
+            named = replace(self, attributes={**(self.attributes or {}), **binned})
+        return _POLICIES[policy](named, found, reason)
 
     def _one(self, data: Floats, long_name: str, further: Mapping[str, Any] | None = None) -> Variable:
         return Variable(self.dims, np.asarray(data, dtype=np.float64), long_name, self.unit, {**(self.attributes or {}), **(further or {})})
+
+
+def _largest(errors: Floats) -> float:
+    """The largest, to as many digits as anybody needs."""
+    return float(f"{np.max(errors, initial=0.0):.3g}")
 
 
 def _bound(named: Named, found: Counted, reason: str) -> dict[str, Variable]:

@@ -17,8 +17,10 @@ from uq.solve.batch import Batch, Status
 class Sample:
     """The members of one block, taken apart by the design that put them together; every array is a view on the Batch.
 
-    values: a, b [row, watched, solved], mixed [input, row, watched, solved], nan from a failure on. conditions: [.., limit, solved].
-    outcomes: [.., outcome]. status, end_time, steps, rejections: [..]. x: [.., input]. `replicates`: how many the design has.
+    values: a, b [row, watched, solved], mixed [input, row, watched, solved], nan from a failure on. conditions: [.., limit, solved], see
+    `Truth`. outcomes: [.., outcome]. status, end_time, steps, rejections: [..]. x: [.., input]. `replicates`: how many the design has.
+    courses: the watched quantities at the output times, side by side [.., watched x time], C order; columns behind those are to be
+    overlooked.
     """
 
     block: Block
@@ -31,6 +33,7 @@ class Sample:
     steps: NDArray[np.int32]
     rejections: NDArray[np.int32]
     x: Parts
+    courses: Parts
 
     @classmethod
     def of(cls, design: Design, block: Block, x: Floats, batch: Batch, ask: Ask) -> Sample:
@@ -50,12 +53,20 @@ class Sample:
             steps=batch.steps,
             rejections=batch.rejections,
             x=apart(x),
+            courses=apart(_side_by_side(batch.values, ask)),
         )
 
     @property
     def rows(self) -> int:
         """How many base rows the block has."""
         return int(self.block.count)
+
+
+def _side_by_side(values: Floats, ask: Ask) -> Floats:
+    """The values [member, observed, solved] as rows that begin with the watched quantities at the output times; a view where it can be."""
+    if not ask.grid_is_all:
+        values = np.take(values[:, : len(ask.watched)], ask.grid, axis=2)
+    return np.ascontiguousarray(values.reshape(len(values), -1), dtype=np.float64)
 
 
 def failed(status: NDArray[np.int8]) -> NDArray[np.bool_]:
