@@ -8,50 +8,14 @@ from pathlib import Path
 import numpy as np
 import pytest
 
+from tests.small_studies import HEAD, PLAIN, mistakes, read
 from uq.errors import StudyError
-from uq.inputs.distributions import Data, Normal, Uniform
+from uq.inputs.distributions import DISTRIBUTIONS, Data, Normal, Uniform
+from uq.study.dependence import KEYS
+from uq.study.keys import DECLARATIONS, WITHOUT_DECLARATION, key_table
 from uq.study.read import parse_study, read_study
-from uq.study.study import Study
+from uq.study.sheets import TABLES
 from uq.study.uncertain import Uncertain
-
-HEAD = """
-schema = 1
-[time]
-unit = "min"
-stop = "1 h"
-points = 61
-[states.T]
-unit = "K"
-start = { normal = { mean = "60 degC", sd = "2 degC" } }
-rate = "-cooling * (T - room)"
-[parameters]
-cooling = { unit = "1/min", uniform = { low = 0.01, high = "3 1/h" } }
-room = "293.15 K"
-"""
-PLAIN = """
-schema = 1
-[time]
-stop = 20
-every = 6
-[states.x]
-start = 1
-rate = "-a * x"
-[parameters]
-a = { uniform = { low = 1, high = 2 } }
-b = 3
-[terms]
-twice = "b * x"
-"""
-
-
-def read(more: str = "", text: str = HEAD) -> Study:
-    return parse_study(text + more)
-
-
-def mistakes(more: str = "", text: str = HEAD) -> list[str]:
-    with pytest.raises(StudyError) as caught:
-        parse_study(text + more)
-    return [str(m) for m in caught.value.mistakes]
 
 
 def test_quantities_are_converted_to_the_unit_of_their_table() -> None:
@@ -109,6 +73,12 @@ def test_output_times_in_three_ways() -> None:
     assert read(text=HEAD.replace("points = 61", "every = 0.1")).time.grid[-2:] == pytest.approx([59.9, 60], abs=1e-12)
     assert len(read(text=HEAD.replace("points = 61", "every = 0.1")).time.grid) == 601
     assert read(text=HEAD.replace("points = 61", 'at = [0, "0.5 h", 60]')).time.grid.tolist() == [0, 30, 60]
+
+
+def test_the_last_of_the_output_times_is_the_stop_where_none_is_stated() -> None:
+    time = read(text=HEAD.replace('stop = "1 h"\npoints = 61', 'at = [0, "0.5 h", 90]')).time
+    assert (time.stop, time.grid.tolist()) == (90, [0, 30, 90])
+    assert any("no `stop`" in text for text in mistakes(text=HEAD.replace('stop = "1 h"\n', "")))
 
 
 def test_solved_times_hold_output_times_ends_limits_and_windows_each_once() -> None:
@@ -337,13 +307,29 @@ def test_files_that_are_no_study(tmp_path: Path) -> None:
         read_study(tmp_path / "latin.toml")
 
 
-def test_names_of_switches_and_tables_of_a_later_version_are_not_unknown() -> None:
-    said = mistakes('[switches]\nU = "room"\n[tables.head]\nunit = "K"\n[terms]\na = "U * T"\nb = "head(T)"\nc = "a + b"\n')
-    assert len(said) == 2
-    assert all("not available yet" in text for text in said)
+def test_names_of_switches_of_a_later_version_are_not_unknown() -> None:
+    said = mistakes('[switches]\nU = "room"\n[terms]\na = "U * T"\nc = "a + 1"\n')
+    assert len(said) == 1
+    assert "not available yet" in said[0]
 
 
 def test_one_slip_gives_one_message() -> None:
     assert len(mistakes('[terms]\na = "rom"\nb = "a"\n[limits.l]\nwhen = "b > room"\n[outcomes.o]\ntake = "final(b)"\n')) == 1
     assert len(mistakes(text=HEAD.replace('"K"', '"Kk"', 1))) == 1
     assert len(mistakes(text=HEAD.replace('"min"', '"mni"'))) == 1
+
+
+def test_the_key_tables_hold_every_key_of_the_format() -> None:
+    text = key_table()
+    assert all(f"`{key}`" in text for key in (*KEYS, *(kind.key for kind in DISTRIBUTIONS)))
+    assert all(f"`[{name}" in text or f"`[[{name}" in text for name in TABLES)
+    assert text.count("\n\n| key |") == len(DECLARATIONS) + len(WITHOUT_DECLARATION) + 1
+
+
+def test_a_pulse_at_a_time_that_depends_on_an_input_is_warned_of() -> None:
+    rate = '[states.y]\nstart = 0\nrate = "where(time > {0} and time < 1 + {0}, b, 0)"\n'
+    said = [text for text in read(rate.format("3 * a"), PLAIN).warnings if "changes at times" in text]
+    assert len(said) == 1
+    assert said[0].startswith("the rate of `y` changes at times that depend on `a`:")
+    assert "make it a forcing" in said[0]
+    assert not any("changes at times" in text for text in read(rate.format("3 * b"), PLAIN).warnings)

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterable
 from typing import cast
 
 import numpy as np
@@ -9,8 +10,8 @@ from numpy.typing import NDArray
 
 from uq.analysis.ask import LimitAsked
 from uq.lang.graph import Node
-from uq.model.code import Course, CourseKind, Equations, Forcing, Interpolation
-from uq.study.declarations import ForcingCourse
+from uq.model.code import Course, CourseKind, Equations, Forcing, Interpolation, Outside, Table, TableInterpolation, TableOutside
+from uq.study.given import ForcingCourse, GivenTable, Measured
 from uq.study.plan import Time
 from uq.study.times import Times, all_times
 from uq.study.work import Work
@@ -33,6 +34,7 @@ def equations(work: Work, times: Times, time: Time) -> Equations:
         starts=_all(work.starts),
         rates=_all(work.rates),
         forcings=tuple(_forcing(sheet.whole) for sheet in work.sheets.forcings.values() if sheet.whole is not None),
+        tables=tuple(_table(sheet.whole) for sheet in work.sheets.tables.values() if sheet.whole is not None),
         observed=tuple(observed),
         conditions=_all(work.conditions),
         courses=tuple(courses),
@@ -42,7 +44,12 @@ def equations(work: Work, times: Times, time: Time) -> Equations:
 
 def _forcing(given: ForcingCourse) -> Forcing:
     times, values = zip(*given.rows, strict=True)
-    return Forcing(given.name, times, values, cast(Interpolation, given.interpolation))
+    return Forcing(given.name, times, values, cast(Interpolation, given.interpolation), cast(Outside, given.outside))
+
+
+def _table(given: GivenTable) -> Table:
+    points, values = zip(*given.rows, strict=True)
+    return Table(given.name, points, values, cast(TableInterpolation, given.interpolation), cast(TableOutside, given.outside))
 
 
 def _all(nodes: list[Node | None]) -> tuple[Node, ...]:
@@ -60,10 +67,11 @@ def limits_asked(work: Work, times: Times, time: Time) -> tuple[LimitAsked, ...]
     return tuple(found)
 
 
-def solved_times(work: Work, time: Time) -> Times:
+def solved_times(work: Work, time: Time, measured: Iterable[Measured]) -> Times:
     """All times at which members must be solved."""
     asked = [moment for course in work.asked for moment in (course.start, course.stop) if moment is not None]
     asked += [moment for sheet in work.sheets.limits.values() for moment in sheet.values.get("by", ())]
+    asked += [moment for each in measured for moment, _ in each.rows]
     return all_times(time, asked)
 
 
@@ -71,3 +79,9 @@ def valid_values(work: Work) -> tuple[NDArray[np.float64], NDArray[np.float64]]:
     """Lowest and highest valid value [state], -inf and inf where none."""
     pairs = [sheet.values.get("valid") or (-np.inf, np.inf) for sheet in work.sheets.states.values()]
     return np.array([low for low, _ in pairs], dtype=float), np.array([high for _, high in pairs], dtype=float)
+
+
+def negligible(work: Work) -> NDArray[np.float64]:
+    """What does not matter in every state [state], nan where that is not stated."""
+    stated = [sheet.values.get("negligible") for sheet in work.sheets.states.values()]
+    return np.array([np.nan if value is None else value for value in stated], dtype=float)

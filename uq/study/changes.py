@@ -5,16 +5,20 @@ from __future__ import annotations
 import copy
 import hashlib
 import json
-from collections.abc import Mapping
+from collections.abc import Iterator, Mapping
 from typing import Any
 
 from uq.errors import ValueMistake, suggest
+from uq.study.counting import own_units
 from uq.study.locate import Path
 from uq.study.notes import KeyMistake, Notes
 from uq.study.uncertain import DISTRIBUTION_KEYS
-from uq.study.values import show, split_quantity
+from uq.study.values import show
+from uq.units import Units, parse_quantity
 
-NAMED = ("states", "parameters", "terms", "forcings", "outcomes", "limits")
+NAMED = ("units", "states", "parameters", "terms", "forcings", "tables", "outcomes", "limits", "scenarios", "measured")
+# Tables that a change makes where they are not there.
+_MADE = (("plan",), ("time",), ("plan", "precision"), ("plan", "at_most"))
 # The order of these is the order of the output, or the place of an input in the design; the order of all others says nothing.
 _ORDERED = ("states", "parameters", "outcomes", "limits")
 # Keys of which only one may stand: setting one takes the place of the others.
@@ -24,21 +28,22 @@ _KEPT = ("unit", "label", "group")
 
 def changed(document: Mapping[str, Any], changes: Mapping[str, object], notes: Notes) -> dict[str, Any]:
     """The document with `changes` made; what cannot be changed is noted."""
+    own, _ = own_units(document)
     made = copy.deepcopy(dict(document))
     for key, value in changes.items():
         path = tuple(key.split("."))
         try:
-            _change(made, path, copy.deepcopy(value))
+            _change(made, path, copy.deepcopy(value), own)
         except ValueMistake as mistake:
             notes.refused(path, mistake)
     return made
 
 
-def _change(document: dict[str, Any], path: tuple[str, ...], value: Any) -> None:
+def _change(document: dict[str, Any], path: tuple[str, ...], value: Any, own: Units) -> None:
     table: Any = document
     for depth, part in enumerate(path[:-1]):
         inner = table.get(part)
-        if inner is None and depth == 0 and part in ("plan", "time"):
+        if inner is None and path[: depth + 1] in _MADE:
             inner = table[part] = {}
         if inner is None:
             raise KeyMistake(f"a change of `{part}`, which is not in the study", "a key of the study", suggest(part, table))
@@ -46,30 +51,33 @@ def _change(document: dict[str, Any], path: tuple[str, ...], value: Any) -> None
             raise KeyMistake(f"a change below {show(inner)}", f"a change of {'.'.join(path[: depth + 1])} itself")
         table = inner
     last = path[-1]
-    whole = len(path) == 1 and (last not in table or isinstance(table[last], dict))
+    whole = len(path) == 1 and last != "dependence" and (last not in table or isinstance(table[last], dict))
     if whole or (path[0] in NAMED and len(path) == 2 and last not in table):
         raise KeyMistake(f"a change of `{last}`, which is not in the study", "a key within a table", suggest(last, table))
     if len(path) == 2 and path[0] == "parameters":
-        table[last] = _other_number(table[last], value)
+        table[last] = _other_number(table[last], value, own)
         return
-    for group in _EITHER:
-        if last in group:
-            for other in group:
-                table.pop(other, None)
+    for other in _gives_way(last):
+        table.pop(other, None)
     table[last] = value
 
 
-def _other_number(old: Any, new: Any) -> Any:
+def _gives_way(key: str) -> Iterator[str]:
+    """The keys whose place another one takes."""
+    for group in _EITHER:
+        if key in group:
+            yield from group
+    yield from {"rows": ("file", "time", "value"), "file": ("rows",), "value": ("truncate",)}.get(key, ())
+
+
+def _other_number(old: Any, new: Any, own: Units) -> Any:
     """A parameter with another number: its unit and label remain, its source and evidence, which belong to the old one, do not."""
     if isinstance(new, dict):
         return new
     if isinstance(old, dict):
         return {**{key: old[key] for key in _KEPT if key in old}, "value": new}
-    if isinstance(old, str) and not isinstance(new, str):
-        quantity = split_quantity(old)
-        if quantity is not None:
-            return {"unit": quantity[1].text, "value": new}
-    return new
+    quantity = parse_quantity(old, own) if isinstance(old, str) else None
+    return new if quantity is None else {"unit": quantity[1].text, "value": new}
 
 
 def paths_of(changes: Mapping[str, object]) -> tuple[Path, ...]:

@@ -1,4 +1,4 @@
-"""The data files that a study names: read once, kept as bytes, a column taken as numbers.
+"""The data files that a study names: read once, kept as bytes, columns taken as numbers.
 
 UTF-8, comma or semicolon separated (found, and said), decimal point, one header line, `#` comments; a gap is a mistake.
 """
@@ -6,14 +6,33 @@ UTF-8, comma or semicolon separated (found, and said), decimal point, one header
 from __future__ import annotations
 
 import csv
+import io
 import math
-from collections.abc import Iterator, Mapping
+from array import array
+from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 from pathlib import Path, PurePosixPath
+
+import numpy as np
+from numpy.typing import NDArray
 
 from uq.errors import ValueMistake, suggest
 
 LARGEST = 200 * 10**6
+_MARKS = {",": "comma", ";": "semicolon"}
+
+
+@dataclass(frozen=True, eq=False)
+class Rows:
+    """Columns of a file that were asked for: `values` [column, row], and the line of every row."""
+
+    file: str
+    values: NDArray[np.float64]
+    lines: NDArray[np.int64]
+
+    def place(self, row: int) -> str:
+        """Where a row stands, in words."""
+        return f"{self.file}, line {self.lines[row]}"
 
 
 @dataclass
@@ -49,53 +68,74 @@ class Files:
             near = suggest(name, (p.name for p in self.folder.glob("*") if p.is_file()))
             raise ValueMistake(f'"{name}", which cannot be read ({error.strerror})', "a file in the study's folder", near) from None
 
-    def column(self, name: str, column: str) -> tuple[float, ...]:
+    def column(self, name: str, column: str) -> NDArray[np.float64]:
         """The numbers of one column of a file."""
-        mark, lines = _lines(name, self.bytes_of(name))
-        if not lines:
-            raise ValueMistake(f"{name} without a header line", "a header line and one number per line below it")
-        header = [cell.strip() for cell in lines[0][1]]
+        self.place_of(name, column)
+        values: NDArray[np.float64] = self.rows(name, (column,)).values[0]
+        return values
+
+    def place_of(self, name: str, column: str) -> int:
+        """Which column of a file has this name; raises ValueMistake with the key `column` where none has."""
+        header = _lines(name, self.bytes_of(name))[1]
         if header.count(column) != 1:
             found = f'no column "{column}"' if column not in header else f'the column "{column}" more than once'
             raise ValueMistake(f"{found} in {name}", "one of " + ", ".join(header), suggest(column, header), key="column")
-        place = header.index(column)
-        values = tuple(_number(name, line, cells, place) for line, cells in lines[1:])
-        if not values:
+        return header.index(column)
+
+    def rows(self, name: str, columns: Sequence[str]) -> Rows:
+        """The numbers of some columns of a file."""
+        places = [self.place_of(name, column) for column in columns]
+        mark, header, lines = _lines(name, self.bytes_of(name))
+        numbers, numbered = array("d"), array("q")
+        for line, cells in lines:
+            if any(cell.strip() for cell in cells[len(header) :]):
+                remedy = "numbers have a decimal point" if mark == "," else ""
+                raise ValueMistake(f"{len(cells)} cells in {name}, line {line}", f"{len(header)}, as in its header line", remedy)
+            numbers.extend(_number(name, line, cells, place) for place in places)
+            numbered.append(line)
+        if not numbered:
             raise ValueMistake(f"{name} without numbers", "one number per line below the header line")
-        word = "comma" if mark == "," else "semicolon"
-        self.said.append(f'{name}: {len(values)} numbers of column "{column}", {word} separated')
-        return values
+        self._say(name, columns, len(numbered), mark)
+        return Rows(name, np.array(numbers).reshape(-1, len(places)).T.copy(), np.array(numbered))
+
+    def _say(self, name: str, columns: Sequence[str], count: int, mark: str) -> None:
+        named = " and ".join(f'"{column}"' for column in columns)
+        what = f"numbers of column {named}" if len(columns) == 1 else f"rows of columns {named}"
+        told = f"{name}: {count} {what}, {_MARKS[mark]} separated"
+        if told not in self.said:
+            self.said.append(told)
 
 
-def _lines(name: str, content: bytes) -> tuple[str, list[tuple[int, list[str]]]]:
-    """Separator, and the cells of every line with its number; comments and empty lines left out."""
+def _lines(name: str, content: bytes) -> tuple[str, list[str], Iterator[tuple[int, list[str]]]]:
+    """Separator, header, and the cells of every line below with its number; comments and empty lines left out."""
     try:
-        text = content.decode("utf-8-sig")
+        content.decode("utf-8-sig")
     except UnicodeDecodeError as error:
         raise ValueMistake(f"{name}, which is not UTF-8 (byte {error.start})", "a text file in UTF-8") from None
-    rows = [(i, row) for i, row in enumerate(text.splitlines(), 1) if row.strip() and not row.lstrip().startswith("#")]
-    if not rows:
-        return ",", []
-    mark = ";" if ";" in rows[0][1] else ","
-    return mark, list(_cells(name, mark, rows))
+    text = io.TextIOWrapper(io.BytesIO(content), encoding="utf-8-sig")
+    rows = ((i, row) for i, row in enumerate(text, 1) if row.strip() and not row.lstrip().startswith("#"))
+    first = next(rows, None)
+    if first is None:
+        raise ValueMistake(f"{name} without a header line", "a header line and one number per line below it")
+    mark = ";" if ";" in first[1] else ","
+    return mark, [cell.strip() for cell in _split(name, mark, *first)], ((i, _split(name, mark, i, row)) for i, row in rows)
 
 
-def _cells(name: str, mark: str, rows: list[tuple[int, str]]) -> Iterator[tuple[int, list[str]]]:
-    for line, row in rows:
-        try:
-            yield line, next(csv.reader([row], delimiter=mark, skipinitialspace=True))
-        except csv.Error as error:
-            raise ValueMistake(f"{name}, line {line}: {error}", "cells separated by one kind of mark") from None
+def _split(name: str, mark: str, line: int, row: str) -> list[str]:
+    try:
+        return next(csv.reader([row.rstrip("\n")], delimiter=mark, skipinitialspace=True))
+    except csv.Error as error:
+        raise ValueMistake(f"{name}, line {line}: {error}", "cells separated by one kind of mark") from None
 
 
 def _number(name: str, line: int, cells: list[str], place: int) -> float:
     cell = cells[place].strip() if place < len(cells) else ""
     try:
-        value = float(cell)
+        value = math.nan if "_" in cell else float(cell)
     except ValueError:
         value = math.nan
     if not math.isfinite(value):
-        found = f'"{cell}"' if cell else "a gap"
+        found = f'"{cell[:60]}"' if cell else "a gap"
         remedy = "numbers have a decimal point" if "," in cell else "" if cell else "gaps are not filled in"
         raise ValueMistake(f"{found} in {name}, line {line}", "a finite number", remedy)
     return value

@@ -1,4 +1,4 @@
-"""The declarations of the model and of what is answered: states, parameters, terms, forcings, outcomes, limits."""
+"""The declarations of the model and of what is answered: states, parameters, terms, outcomes, limits."""
 
 from __future__ import annotations
 
@@ -10,7 +10,7 @@ from uq.study import values as read
 from uq.study.fields import entry, one_of, refuse, unit_entry
 from uq.study.notes import KeyMistake
 from uq.study.plan import Found
-from uq.study.uncertain import DISTRIBUTION_KEYS, KINDS, LATER_KEYS, Uncertain, distribution, evidence, start
+from uq.study.uncertain import DISTRIBUTION_FIELD, DISTRIBUTION_KEYS, KINDS, Uncertain, distribution, evidence, start
 from uq.study.values import Frame
 
 
@@ -22,12 +22,6 @@ def valid_range(value: object, frame: Frame) -> tuple[float, float]:
     if low >= high:
         raise ValueMistake(f"[{low:g}, {high:g}]", "a pair [lowest, highest] with the lowest first")
     return low, high
-
-
-def interpolation(value: object, frame: Frame) -> str:
-    """How a course goes on between its rows."""
-    word: str = read.choice(("linear", "step"), later=("smooth",))(value, frame)
-    return word
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -44,8 +38,11 @@ class State:
     valid: tuple[float, float] | None = entry(
         "[lowest, highest]; a member that leaves it stops with the status out_of_range", valid_range, None, "no bounds"
     )
+    negligible: float | None = entry(
+        "changes below this do not matter: the solver's absolute tolerance", read.deviation, None, "accuracy x its usual size"
+    )
 
-    later = ("negligible", "over", "edge")
+    later = ("over", "edge")
 
 
 @dataclass(frozen=True, kw_only=True)
@@ -56,13 +53,13 @@ class Parameter:
     label: str = entry("how it is called in reports", read.text, "", "the name")
     unit: str = unit_entry('its unit, "1" for none', read.unit)
     value: float | None = entry("the number, where it is fixed", read.quantity, None, "")
-    distribution: Distribution | None = one_of("the distribution, where it is uncertain", distribution, DISTRIBUTION_KEYS, LATER_KEYS)  # noqa: RUF009
+    distribution: Distribution | None = one_of("the distribution, where it is uncertain", distribution, DISTRIBUTION_FIELD)  # noqa: RUF009
     source: str = entry("where the numbers come from", read.text, "", 'shown as "not stated"')
     kind: str = entry('"knowledge" (could be reduced) or "variability" (cannot)', read.choice(KINDS), "", "not stated")
     evidence: int | None = entry("0 a guess to 4 measured here, repeatedly", evidence, None, "not stated")
     group: str = entry("label of a group of inputs", read.text, "", "no group")
 
-    later = ("over", "truncate")
+    later = ("over",)
 
     def __post_init__(self) -> None:
         refuse(self.mistakes())
@@ -85,30 +82,6 @@ class Term:
     unit: str = entry("the unit it must come out in", read.unit, "", "follows from the expression")
 
     later = ("over",)
-
-
-@dataclass(frozen=True, kw_only=True)
-class ForcingCourse:
-    """`[forcings.NAME]`: a given course over time."""
-
-    name: str
-    label: str = entry("how it is called in reports", read.text, "", "the name")
-    unit: str = unit_entry('its unit, "1" for none', read.unit)
-    rows: tuple[tuple[float, float], ...] = entry("[[time, value], ...] in order of time, from the start to the stop", read.rows)
-    interpolation: str = entry('"linear", or "step" (a value holds until the next row)', interpolation, "linear")
-
-    later = ("file", "time", "value", "outside")
-
-    def __post_init__(self) -> None:
-        refuse(self.mistakes())
-
-    def mistakes(self) -> Found:
-        """What cannot stand in this table."""
-        if not self.rows:
-            yield ("rows",), ValueMistake("an empty list", "rows [time, value] from the start to the stop")
-        times = [row[0] for row in self.rows]
-        for index in read.ascending(times):
-            yield ("rows", index, 0), ValueMistake(f"{times[index]:g} after {times[index - 1]:g}", "rows in order of time, each time once")
 
 
 @dataclass(frozen=True, kw_only=True)

@@ -5,10 +5,12 @@ from __future__ import annotations
 from collections.abc import Iterable, Iterator
 
 from uq.inputs.inputs import Input, Inputs
+from uq.model.moments import not_landed_on
 from uq.study.locate import Path
 from uq.study.names import differing_in_case
+from uq.study.plan import Plan
 from uq.study.work import Work
-from uq.units import parse_unit
+from uq.units import Units, parse_unit
 
 # A quantity counts as positive where most draws are: with a quarter or more below zero, values of both signs are meant. Below
 # one in a million nothing is said: no ordinary run meets such a draw.
@@ -21,8 +23,33 @@ def warnings(work: Work, inputs: Inputs, watch: Iterable[str]) -> tuple[str, ...
     found = ["no unit is stated anywhere: the study is taken as dimensionless"] if work.sheets.unitless else []
     found += [f"nothing uses {place} `{name}`" for place, name in _unused(work, watch)]
     found += differing_in_case([*work.low.declared, *work.sheets.outcomes, *work.sheets.limits])
-    found += [text for item in inputs.items for text in _below_zero(item)]
+    found += [text for item in inputs.items for text in _below_zero(item, work.sheets.own)]
+    found += [f"`{item.name}`: {text}" for item in inputs.items if (text := item.distribution.misfit())]
+    found += _moments(work, inputs)
     return tuple(found)
+
+
+def _moments(work: Work, inputs: Inputs) -> Iterator[str]:
+    """Rates that compare the time with inputs: moments that the solver cannot land on."""
+    states, names = tuple(work.sheets.states), [item.name for item in inputs.items]
+    for state, rate in zip(states, work.rates, strict=True):
+        asked = () if rate is None else not_landed_on(work.low.graph, rate, states, names)
+        if asked:
+            said = ", ".join(f"`{name}`" for name in asked)
+            yield (
+                f"the rate of `{state}` changes at times that depend on {said}: the solver does not stop there, and what lasts less than "
+                "a two-hundredth of the whole time may be missed; where the times are known, make it a forcing"
+            )
+
+
+def remarks(inputs: Inputs, plan: Plan) -> tuple[str, ...]:
+    """What follows from a study and may surprise."""
+    if not inputs.dependent or "ranking" not in plan.ask:
+        return ()
+    return (
+        "inputs depend on each other: the ranking gives Shapley effects, which share out what inputs have in common, "
+        "and first-order indices; total-order indices would count it more than once or not at all",
+    )
 
 
 def _unused(work: Work, watch: Iterable[str]) -> Iterator[tuple[str, str]]:
@@ -39,13 +66,18 @@ def _unused(work: Work, watch: Iterable[str]) -> Iterator[tuple[str, str]]:
             seen.add(name)
             if name in sheets.terms:
                 waiting += low.used(sheets.text_path("terms", name, work.document))
-    for what, names in (("the parameter", sheets.parameters), ("the term", sheets.terms), ("the forcing", sheets.forcings)):
+    for what, names in (
+        ("the parameter", sheets.parameters),
+        ("the term", sheets.terms),
+        ("the forcing", sheets.forcings),
+        ("the table", sheets.tables),
+    ):
         yield from ((what, name) for name in names if name not in seen)
 
 
-def _below_zero(item: Input) -> Iterator[str]:
+def _below_zero(item: Input, own: Units) -> Iterator[str]:
     """The share of draws below zero of a quantity whose other values are positive."""
-    if parse_unit(item.unit).temperature == "scale":
+    if parse_unit(item.unit, own).temperature == "scale":
         return
     share = item.distribution.share_below(0.0)
     if _FEWEST_BELOW <= share < _MOST_BELOW:

@@ -6,14 +6,14 @@ In: a table as tomllib gave it. Out: the declaration, or every mistake in it. Mu
 from __future__ import annotations
 
 from collections.abc import Iterable, Mapping
-from dataclasses import MISSING, dataclass, field, fields
+from dataclasses import MISSING, dataclass, field, fields, replace
 from typing import Any, Generic, TypeVar
 
 from uq.errors import ValueMistake, suggest
 from uq.study.locate import Path
 from uq.study.notes import KeyMistake, Refused
 from uq.study.values import Frame, Reader, show
-from uq.units import Unit, parse_unit
+from uq.units import Unit
 
 T = TypeVar("T")
 
@@ -30,23 +30,26 @@ def unit_entry(meaning: str, read: Reader) -> Any:
     return field(default="1", metadata={"meaning": meaning, "read": read, "shown": "needed", "needed": True})
 
 
-def one_of(meaning: str, read: Reader, keys: tuple[str, ...], later: tuple[str, ...]) -> Any:
+def one_of(meaning: str, read: Reader, keys: tuple[str, ...]) -> Any:
     """A field that is filled by any one of several TOML keys; `read` gets the table of those which are there."""
-    return field(default=None, metadata={"meaning": meaning, "read": read, "shown": "", "keys": keys, "later": later})
+    return field(default=None, metadata={"meaning": meaning, "read": read, "shown": "", "keys": keys})
 
 
 @dataclass(frozen=True)
 class Sheet(Generic[T]):
-    """A table as far as it could be read: the values by field, the mistakes by path below it, the declaration if there are none."""
+    """A table as far as it could be read: the values by field, the mistakes by path below it, the declaration if there are none.
+
+    `unit` is that of the table, None where it has none or a wrong one.
+    """
 
     values: Mapping[str, Any]
     mistakes: tuple[tuple[Path, ValueMistake], ...]
     whole: T | None
+    unit: Unit | None = None
 
-    @property
-    def unit(self) -> Unit | None:
-        """The unit of the table, None where it is missing or wrong."""
-        return parse_unit(self.values["unit"]) if self.values.get("unit") else None
+    def refused(self, *mistakes: tuple[Path, ValueMistake]) -> Sheet[T]:
+        """The same with more mistakes, and so without a declaration."""
+        return replace(self, mistakes=(*self.mistakes, *mistakes), whole=None)
 
 
 def refuse(mistakes: Iterable[tuple[Path, ValueMistake]]) -> None:
@@ -67,10 +70,7 @@ def keys_of(declaration: type[Any]) -> tuple[str, ...]:
 
 def later_keys(declaration: type[Any]) -> tuple[str, ...]:
     """The TOML keys of a declaration that the format knows and this version does not."""
-    keys = tuple(getattr(declaration, "later", ()))
-    for item in fields(declaration):
-        keys += tuple(item.metadata.get("later", ()))
-    return keys
+    return tuple(getattr(declaration, "later", ()))
 
 
 def read_table(declaration: type[T], table: object, frame: Frame, name: str = "") -> Sheet[T]:
@@ -84,21 +84,35 @@ def read_table(declaration: type[T], table: object, frame: Frame, name: str = ""
     # A key that cannot be read may have been meant as one that is missing: one slip gives one message.
     meant = {mistake.remedy for _, mistake in mistakes}
     waits = any(key in later_keys(declaration) for key in table)
+    own: Unit | None = None
     for item in fields(declaration):  # type: ignore[arg-type]
         if "meaning" in item.metadata:
             found = _read_field(item, table, values, frame)
             missing = item.name not in table and "keys" not in item.metadata
             mistakes += [] if missing and (waits or f"did you mean `{item.name}`?" in meant) else found
-            if item.name == "unit" and item.metadata.get("needed"):
-                frame = frame.within(parse_unit(values["unit"]) if "unit" in values else None)
+            if item.name == "unit":
+                own = frame.unit_of(values["unit"]) if values.get("unit") else None
+                frame = frame.within(own) if item.metadata.get("needed") else frame
     if mistakes:
-        return Sheet(values, tuple(mistakes), None)
+        return Sheet(values, tuple(mistakes), None, own)
     try:
-        return Sheet(values, (), declaration(**values))
+        return Sheet(values, (), declaration(**values), own)
     except ValueMistake as mistake:
-        return Sheet(values, (((), mistake),), None)
+        return Sheet(values, (((), mistake),), None, own)
     except Refused as refused:
-        return Sheet(values, refused.mistakes, None)
+        return Sheet(values, refused.mistakes, None, own)
+
+
+def read_part(declaration: type[Any]) -> Reader:
+    """The reader of a table within a table."""
+
+    def read(value: object, frame: Frame) -> Any:
+        sheet = read_table(declaration, value, frame)
+        if sheet.whole is None:
+            raise Refused(sheet.mistakes)
+        return sheet.whole
+
+    return read
 
 
 def _read_field(item: Any, table: Mapping[str, Any], values: dict[str, Any], frame: Frame) -> list[tuple[Path, ValueMistake]]:

@@ -7,19 +7,18 @@ gives one message.
 from __future__ import annotations
 
 from collections.abc import Mapping
-from dataclasses import dataclass, field
+from dataclasses import dataclass, field, replace
 
 from uq.errors import ExpressionError, ValueMistake, suggest
 from uq.lang.graph import Graph, Node
-from uq.lang.lower import Scope, TakeResult, Typed, lower, lower_take, require_truth, require_unit
+from uq.lang.lower import Scope, TableUnits, TakeResult, Typed, in_unit, lower, lower_take, require_truth
 from uq.lang.parser import parse
 from uq.lang.part import require_number
 from uq.lang.tree import Tree, names, parts
 from uq.lang.words import COURSES, COURSES_LATER, FUNCTION_NAMES
 from uq.study.locate import Path
 from uq.study.notes import Notes
-from uq.study.values import split_quantity
-from uq.units import Unit
+from uq.units import Unit, Units, parse_quantity
 
 _FUNCTIONS = (*FUNCTION_NAMES, *COURSES, *COURSES_LATER)
 
@@ -37,10 +36,12 @@ class Lowering:
     later: set[str]
     unitless: bool
     time_unit: Unit
+    own: Units
     graph: Graph = field(default_factory=Graph)
     known: dict[str, tuple[Node, Unit]] = field(default_factory=dict)
     broken: set[str] = field(default_factory=set)
     fixed: set[str] = field(default_factory=set)
+    tables: dict[str, TableUnits] = field(default_factory=dict)
     trees: dict[Path, Tree | None] = field(default_factory=dict)
 
     def tree(self, path: Path, text: str) -> Tree | None:
@@ -51,7 +52,7 @@ class Lowering:
 
     def _parsed(self, path: Path, text: str) -> Tree | None:
         try:
-            tree = parse(f"'{text.strip()}'" if "'" not in text and split_quantity(text) else text)
+            tree = parse(f"'{text.strip()}'" if "'" not in text and parse_quantity(text, self.own) else text)
         except ValueMistake as mistake:
             self.notes.refused(path, mistake)
             return None
@@ -72,17 +73,21 @@ class Lowering:
         return tree if known else None
 
     def used(self, path: Path) -> tuple[str, ...]:
-        """The names in the text at `path`."""
+        """The names in the text at `path`, tables among them."""
         tree = self.trees.get(path)
-        return tuple(dict.fromkeys(name for name, _ in names(tree))) if tree is not None else ()
+        if tree is None:
+            return ()
+        called = (part.name for part in parts(tree) if part.op == "call" and self.declared.get(part.name, ("",))[0] == "tables")
+        return tuple(dict.fromkeys([*(name for name, _ in names(tree)), *called]))
 
     def scope(self, fixed_only: bool = False) -> Scope:
         """What names mean; `fixed_only` bars all that changes during a member, for the start of a state."""
+        whole = Scope(self.known, self.unitless, {}, self.time_unit, frozenset(self.fixed), self.own, self.tables)
         if not fixed_only:
-            return Scope(self.known, self.unitless, time_unit=self.time_unit, fixed=frozenset(self.fixed))
+            return whole
         still = {name: typed for name, typed in self.known.items() if self.graph.leaves(typed[0]) <= self.fixed}
         barred = {name: "a start is made of parameters and numbers" for name in self.known if name not in still}
-        return Scope(still, self.unitless, barred, self.time_unit, frozenset(self.fixed))
+        return replace(whole, names=still, barred=barred)
 
     def _sound(self, path: Path, text: str) -> Tree | None:
         tree = self.tree(path, text)
@@ -97,8 +102,8 @@ class Lowering:
             self.notes.refused(path, mistake)
             return None
 
-    def number(self, path: Path, text: str, unit: Unit | None, what: str, fixed_only: bool = False) -> Node | None:
-        """The node of an expression that must come out as a number in `unit`, or None."""
+    def number(self, path: Path, text: str, unit: Unit | None, what: str, fixed_only: bool = False) -> Typed | None:
+        """An expression that must come out as a number, converted to `unit` where that is known, or None."""
         tree = self._sound(path, text)
         try:
             if tree is None:
@@ -106,11 +111,11 @@ class Lowering:
             typed = lower(tree, self.scope(fixed_only), self.graph)
             require_number(tree, typed)
             if unit is not None:
-                require_unit(tree, typed, unit, what)
+                typed = in_unit(tree, typed, unit, self.graph, what)
         except ValueMistake as mistake:
             self.notes.refused(path, mistake)
             return None
-        return typed.node
+        return typed
 
     def condition(self, path: Path, text: str) -> Node | None:
         """The node of an expression that must be true or false, or None."""
@@ -133,7 +138,8 @@ class Lowering:
                 return None
             taken = lower_take(tree, self.scope(), self.graph, first)
             if unit is not None:
-                require_unit(tree, Typed(taken.node, taken.unit), unit, what)
+                typed = in_unit(tree, Typed(taken.node, taken.unit), unit, self.graph, what)
+                taken = replace(taken, node=typed.node, unit=typed.unit)
         except ValueMistake as mistake:
             self.notes.refused(path, mistake)
             return None

@@ -11,11 +11,13 @@ from uq.study.locate import Path
 from uq.study.notes import Notes
 
 _NAME = re.compile(r"[A-Za-z][A-Za-z0-9_]*")
-QUANTITIES = ("states", "parameters", "terms", "forcings")
+QUANTITIES = ("states", "parameters", "terms", "forcings", "tables")
 ANSWERS = ("outcomes", "limits")
-WORDS = {"states": "state", "parameters": "parameter", "terms": "term", "forcings": "forcing"}
+WORDS = {"states": "state", "parameters": "parameter", "terms": "term", "forcings": "forcing", "tables": "table"}
 # Tables of a later version whose names stand in expressions.
-NAMED_LATER = ("switches", "tables", "index")
+NAMED_LATER = ("switches", "index")
+# Axes of the results that stand beside quantities of the study under their names.
+AXES = ("quantile", "input", "realization")
 
 
 def tables(document: Mapping[str, Any], key: str) -> Mapping[str, Any]:
@@ -40,7 +42,7 @@ def later_names(document: Mapping[str, Any]) -> set[str]:
 
 def check_names(document: Mapping[str, Any], notes: Notes) -> None:
     """Note names that cannot be one, reserved words, and names used twice."""
-    for key in (*QUANTITIES, *ANSWERS):
+    for key in (*QUANTITIES, *ANSWERS, "scenarios"):
         for name in tables(document, key):
             _check_one((key, name), name, notes)
     first: dict[str, Path] = {}
@@ -59,6 +61,8 @@ def _check_one(path: Path, name: str, notes: Notes) -> None:
         notes.at_key(path, f"the name `{name}`", "a name of letters A-Z, a-z, digits and _, with a letter first")
     elif name in RESERVED:
         notes.at_key(path, f"the name `{name}`, which is taken by the language of expressions", "another name")
+    elif name in AXES:
+        notes.at_key(path, f"the name `{name}`, which an axis of the results has", "another name")
 
 
 def _twice(path: Path, first: Path, what: str, notes: Notes) -> None:

@@ -10,13 +10,14 @@ from functools import cached_property
 import numpy as np
 from numpy.typing import NDArray
 
+from uq.design.design import REPLICATES
+from uq.design.sobol import MOST_ROWS
 from uq.errors import ValueMistake
 from uq.study import values as read
-from uq.study.fields import entry, refuse, unit_entry
+from uq.study.fields import entry, read_part, refuse, unit_entry
 from uq.study.locate import Path
 from uq.study.notes import KeyMistake
 from uq.study.values import Frame
-from uq.units import parse_unit
 
 Found = Iterator[tuple[Path, ValueMistake]]
 
@@ -33,13 +34,18 @@ QUESTIONS_LATER = (
     "two_level",
     "dimensionless",
 )
+# Which questions have the numbers whose precision may be asked.
+PRECISION_OF = {"quantiles": ("bands", "outcomes"), "probabilities": ("limits",), "indices": ("ranking",)}
 MOST_TIMES = 1_000_000
+MEMBERS = 16384
+# The most that the design has.
+MOST_MEMBERS = 2 * REPLICATES * MOST_ROWS
 
 
 def time_unit(value: object, frame: Frame) -> str:
     """The unit of the time; a rate is divided by it."""
     text: str = read.unit(value, frame)
-    if parse_unit(text).temperature == "scale":
+    if frame.unit_of(text).temperature == "scale":
         raise ValueMistake(f"a temperature in {text}", "a unit of time", "min, s, h, day")
     return text
 
@@ -50,16 +56,21 @@ class Time:
 
     unit: str = unit_entry("unit of all times of the study", time_unit)
     start: float = entry("time of the starts", read.quantity, 0.0, "0")
-    stop: float = entry("last time", read.quantity)
+    stop: float = entry("last time", read.quantity, math.nan, "needed; with `at` the last of these")
     points: int | None = entry("number of output times, evenly spaced, both ends included", read.whole(2), None, "one of the three")
     every: float | None = entry("distance of output times; the last time is always one", read.quantity, None, "one of the three")
     at: tuple[float, ...] | None = entry("output times", read.listed(read.quantity, "times"), None, "one of the three")
 
     def __post_init__(self) -> None:
+        if math.isnan(self.stop) and self.at:
+            object.__setattr__(self, "stop", self.at[-1])
         refuse(self.mistakes())
 
     def mistakes(self) -> Found:
         """What cannot stand in this table."""
+        if math.isnan(self.stop):
+            yield (), KeyMistake("no `stop`", "a key `stop`, last time")
+            return
         given = [key for key in ("points", "every", "at") if getattr(self, key) is not None]
         if not given:
             yield (), KeyMistake("no output times", "one of points, every, at", "for example points = 101")
@@ -110,6 +121,43 @@ def times_inside(path: Path, times: tuple[float, ...], time: Time, what: str) ->
 
 
 @dataclass(frozen=True, kw_only=True)
+class Precision:
+    """`[plan.precision]`: members are added until the intervals of all headline numbers are as narrow as this; each key is for its kind."""
+
+    quantiles: float | None = entry(
+        "half-width of the interval as a fraction of the 5-95 % width",
+        read.between(0, 1, "a fraction above 0, at most 1"),
+        None,
+        "not asked",
+    )
+    probabilities: float | None = entry(
+        "half-width of the interval of a probability", read.between(0, 0.5, "a number above 0, at most 0.5"), None, "not asked"
+    )
+    indices: float | None = entry(
+        "half-width of the interval of an index", read.between(0, 1, "a number above 0, at most 1"), None, "not asked"
+    )
+
+    def __post_init__(self) -> None:
+        if self.quantiles is self.probabilities is self.indices is None:
+            raise KeyMistake("a precision of nothing", "one or more of quantiles, probabilities, indices")
+
+
+@dataclass(frozen=True, kw_only=True)
+class AtMost:
+    """`[plan.at_most]`: what may be spent on a precision; the answer reached by then is given."""
+
+    solves: int | None = entry("members solved, those of the ranking too", read.whole(1), None, "no bound")
+    minutes: float | None = entry("time of the run", read.between(0, 1e6, "a number above 0, at most 1e6"), None, "no bound")
+
+    def __post_init__(self) -> None:
+        if self.solves is self.minutes is None:
+            raise KeyMistake("a bound on nothing", "one or both of solves, minutes")
+
+
+PRECISION, AT_MOST = read_part(Precision), read_part(AtMost)
+
+
+@dataclass(frozen=True, kw_only=True)
 class Plan:
     """`[plan]`: what is asked, how many members answer it, and how the answers are given."""
 
@@ -121,7 +169,12 @@ class Plan:
         "what applies of them",
     )
     watch: tuple[str, ...] = entry("states and terms that get bands", read.listed(read.text, "names"), (), "every state")
-    members: int = entry("members behind bands, limits and outcomes; rounded up to a power of two, at least 512", read.whole(1), 16384)
+    members: int = entry(
+        "members behind bands, limits and outcomes; rounded up to a power of two, at least 512; with `precision` the most that may be used",
+        read.whole(1),
+        0,
+        f"{MEMBERS}; with `at_most` no bound",
+    )
     confidence: float = entry("confidence of every interval quoted", read.between(0, 1, "a number between 0 and 1"), 0.95)
     quantiles: tuple[float, ...] = entry(
         "levels of the quantiles",
@@ -136,14 +189,25 @@ class Plan:
         read.choice(("bound", "exclude", "refuse")),
         "bound",
     )
+    precision: Precision | None = entry("table of the precision asked, see below", PRECISION, None, "what `members` give")  # noqa: RUF009
+    at_most: AtMost | None = entry("table of what may be spent on it, see below", AT_MOST, None, "no bound")  # noqa: RUF009
 
-    later = ("precision", "at_most", "solver")
+    later = ("solver",)
 
     def __post_init__(self) -> None:
-        refuse(self.mistakes())
+        bounded = self.members > 0
+        refuse(self.mistakes(bounded))
+        if not bounded:
+            object.__setattr__(self, "members", MEMBERS if self.at_most is None else MOST_MEMBERS)
 
-    def mistakes(self) -> Found:
-        """What cannot stand in this table."""
+    def mistakes(self, bounded: bool = True) -> Found:
+        """What cannot stand in this table; `bounded`: the members were stated."""
+        if self.precision is not None and self.at_most is None and not bounded:
+            found = "a precision without a bound on the work"
+            yield ("precision",), KeyMistake(found, "`members` in [plan], the most that may be used, or a table [plan.at_most]")
+        if self.at_most is not None and self.precision is None:
+            said = "a table [plan.precision] that it bounds"
+            yield ("at_most",), KeyMistake("[plan.at_most] without a precision", said, "`members` alone says how many there are")
         if self.confidence >= 1:
             yield ("confidence",), ValueMistake("1", "a number between 0 and 1")
         if self.accuracy < 1e-13:

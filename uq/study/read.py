@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import os
 from collections.abc import Mapping
-from dataclasses import replace
+from dataclasses import dataclass, replace
 from functools import partial
 from pathlib import Path
 from typing import Any
@@ -14,14 +14,20 @@ from uq.inputs.inputs import Inputs
 from uq.study import assemble
 from uq.study.changes import changed, fingerprint, paths_of
 from uq.study.columns import Files
-from uq.study.doubts import warnings
+from uq.study.doubts import remarks, warnings
 from uq.study.names import check_names, check_watch
 from uq.study.notes import Notes
-from uq.study.plan import QUESTIONS, Plan
+from uq.study.observations import Observations, observations
+from uq.study.plan import PRECISION_OF, QUESTIONS, Plan
+from uq.study.relay import relay, unlike
+from uq.study.scenarios import ScenarioTable
 from uq.study.sheets import Sheets, read_sheets
-from uq.study.study import Study
+from uq.study.study import Scenario, Study
 from uq.study.toml import read_toml
 from uq.study.work import Work
+
+# What a scenario does not have of its own.
+APART = ("scenarios", "measured")
 
 
 def read_study(path: str | os.PathLike[str], changes: Mapping[str, object] | None = None) -> Study:
@@ -54,25 +60,80 @@ def parse_study(
     Data files are taken from `files` by name, else from `folder`. `changes` by dotted key are made before the check. `shown_as` is what
     mistakes call the file.
     """
-    changes = dict(changes or {})
-    document, notes = read_toml(text, shown_as or f"{name}.toml")
+    return _read(Source(text, folder, name, files or {}, shown_as or f"{name}.toml"), changes or {})
+
+
+@dataclass(frozen=True)
+class Source:
+    """Where a study comes from; `without` are tables that are left out, as in the study of a scenario."""
+
+    text: str
+    folder: Path | None
+    name: str
+    files: Mapping[str, bytes]
+    shown_as: str
+    without: tuple[str, ...] = ()
+
+    def given(self, changes: Mapping[str, object], files: Mapping[str, bytes]) -> dict[str, Any]:
+        """What a study keeps of it."""
+        return {"name": self.name, "text": self.text, "changes": dict(changes), "again": partial(_read, replace(self, files=files))}
+
+
+def _read(source: Source, changes: Mapping[str, object]) -> Study:
+    document, notes = read_toml(source.text, source.shown_as)
     _raise(notes, unless=bool(document))
     notes.changed = paths_of(changes)
-    document = changed(document, changes, notes)
-    data = Files(folder, files or {})
+    document = changed({key: table for key, table in document.items() if key not in source.without}, changes, notes)
+    data = Files(source.folder, source.files)
+    work, plan = _checked(document, data, notes)
+    measured = observations(work)
+    made = [_scenario(source, changes, work, table) for table in _wholes(work.sheets.scenarios) if table is not None]
+    for each in made:
+        relay(each.table.name, each.table.change, each.work.notes, notes)
+        data.used.update(each.data.used)
+        data.said += [text for text in each.data.said if text not in data.said]
+    _raise(notes)
+    study = _study(work, plan, data, measured, source.given(changes, data.used))
+    scenarios = tuple(each.scenario(source, changes) for each in made)
+    more = [f"scenario {each.name}: {text}" for each in scenarios for text in each.study.warnings if text not in study.warnings]
+    return replace(study, scenarios=scenarios, warnings=(*study.warnings, *more)) if scenarios else study
+
+
+def _checked(document: Mapping[str, Any], data: Files, notes: Notes) -> tuple[Work, Plan]:
+    """Everything that follows from a document; mistakes go to `notes`."""
     check_names(document, notes)
     sheets = read_sheets(document, data, notes)
     check_watch(sheets.plan.values.get("watch") or sheets.states, document, notes)
     work = Work(document, sheets, notes)
     work.run()
-    plan = _plan(sheets, notes)
-    _raise(notes)
-    again = partial(_again, text, folder, name, data.used, shown_as)
-    return _study(work, plan, data, {"name": name, "text": text, "changes": changes, "again": again})
+    return work, _plan(sheets, notes)
 
 
-def _again(text: str, folder: Path | None, name: str, files: Mapping[str, bytes], shown_as: str, changes: Mapping[str, object]) -> Study:
-    return parse_study(text, folder, name, files, changes, shown_as)
+@dataclass(frozen=True)
+class _Made:
+    """The study of a scenario, worked out."""
+
+    table: ScenarioTable
+    work: Work
+    plan: Plan
+    data: Files
+
+    def scenario(self, source: Source, changes: Mapping[str, object]) -> Scenario:
+        given = replace(source, without=APART).given({**changes, **self.table.change}, self.data.used)
+        study = _study(self.work, self.plan, self.data, Observations(), given)
+        return Scenario(self.table.name, self.table.label or self.table.name, study)
+
+
+def _scenario(source: Source, changes: Mapping[str, object], base: Work, table: ScenarioTable) -> _Made:
+    """The study with the change of one scenario made; its mistakes are in the notes of its work."""
+    notes = Notes(source.shown_as, base.notes.places, changed=(*paths_of(changes), *paths_of(table.change)))
+    document = changed({key: each for key, each in base.document.items() if key not in APART}, table.change, notes)
+    data = Files(source.folder, {**source.files, **base.sheets.files.used})
+    work, plan = _checked(document, data, notes)
+    if not base.notes.mistakes and not notes.mistakes:
+        for key, found, expected in unlike(base, work):
+            notes.at_key(key, found, expected)
+    return _Made(table, work, plan, data)
 
 
 def _raise(notes: Notes, unless: bool = False) -> None:
@@ -89,10 +150,14 @@ def _plan(sheets: Sheets, notes: Notes) -> Plan:
         if not answerable[question]:
             notes.at_value(("plan", "ask", index), f'"{question}" in a study without {question}', f"a table [{question}.NAME]")
     ask = plan.ask or tuple(question for question in QUESTIONS if answerable[question])
+    for key, answers in PRECISION_OF.items():
+        if plan.precision is not None and getattr(plan.precision, key) is not None and not set(answers) & set(ask):
+            said = " or ".join(f'"{question}"' for question in answers)
+            notes.at_value(("plan", "precision", key), f"a precision of {key} that are not asked for", f"{said} among what is asked")
     return replace(plan, ask=ask, watch=plan.watch or tuple(sheets.states))
 
 
-def _study(work: Work, plan: Plan, data: Files, given: Mapping[str, Any]) -> Study:
+def _study(work: Work, plan: Plan, data: Files, observed: Observations, given: Mapping[str, Any]) -> Study:
     """The study of a document without mistakes."""
     from uq import __version__
 
@@ -100,8 +165,8 @@ def _study(work: Work, plan: Plan, data: Files, given: Mapping[str, Any]) -> Stu
     head, time = sheets.head.whole, sheets.time.whole
     if head is None or time is None:
         raise RuntimeError("a study without mistakes has a head and a time")
-    times = assemble.solved_times(work, time)
-    inputs = Inputs(tuple(work.inputs))
+    times = assemble.solved_times(work, time, observed.made)
+    inputs = Inputs(tuple(work.inputs), work.dependence)
     lowest, highest = assemble.valid_values(work)
     return Study(
         **given,
@@ -116,11 +181,14 @@ def _study(work: Work, plan: Plan, data: Files, given: Mapping[str, Any]) -> Stu
         parameters=_wholes(sheets.parameters),
         terms=_wholes(sheets.terms),
         forcings=_wholes(sheets.forcings),
+        tables=_wholes(sheets.tables),
         outcomes=_wholes(sheets.outcomes),
         limits=_wholes(sheets.limits),
         plan=plan,
+        measured=tuple(observed.made),
+        own_units=sheets.own,
         warnings=warnings(work, inputs, plan.watch),
-        remarks=tuple(data.said),
+        remarks=(*data.said, *observed.said, *remarks(inputs, plan)),
         inputs=inputs,
         equations=assemble.equations(work, times, time),
         watched=tuple(work.watched),
@@ -129,6 +197,7 @@ def _study(work: Work, plan: Plan, data: Files, given: Mapping[str, Any]) -> Stu
         times=times,
         lowest=lowest,
         highest=highest,
+        negligible=assemble.negligible(work),
     )
 
 

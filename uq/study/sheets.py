@@ -3,40 +3,39 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Iterator, Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import Any, TypeVar
 
 from uq.errors import ValueMistake
 from uq.study import values as read
 from uq.study.columns import Files
-from uq.study.declarations import ForcingCourse, Limit, Outcome, Parameter, State, Term
+from uq.study.counting import own_units
+from uq.study.declarations import Limit, Outcome, Parameter, State, Term
+from uq.study.dependence import Statements, statements
 from uq.study.fields import Sheet, entry, keys_of, read_table, unknown
+from uq.study.given import ForcingCourse, GivenTable, Measured
 from uq.study.locate import Path
 from uq.study.names import tables
 from uq.study.notes import KeyMistake, Notes
 from uq.study.plan import Plan, Time
+from uq.study.points import forcing, measured, table
+from uq.study.scenarios import ScenarioTable
+from uq.study.uncertain import drawn_jointly
 from uq.study.values import Frame
-from uq.units import NONE
+from uq.units import NONE, Units, parse_quantity
 
-TABLES = ("time", "states", "parameters", "terms", "forcings", "outcomes", "limits", "plan")
-TABLES_LATER = (
-    "switches",
-    "events",
-    "dependence",
-    "index",
-    "tables",
-    "scenarios",
-    "measured",
-    "units",
-    "model",
-    "assumptions",
-    "not_included",
-    "review",
+TABLES = (
+    *("units", "time", "states", "parameters", "terms", "forcings", "tables", "outcomes", "limits"),
+    *("dependence", "plan", "scenarios", "measured"),
 )
+TABLES_LATER = ("switches", "events", "index", "model", "assumptions", "not_included", "review")
 T = TypeVar("T")
 
 # Keys whose texts say something about units; labels and sources are prose.
-_PROSE = ("title", "about", "caution", "label", "source", "kind", "group", "interpolation", "keep", "name")
+_PROSE = (
+    *("title", "about", "caution", "label", "source", "kind", "group", "interpolation", "outside", "keep", "name"),
+    *("file", "column", "columns"),
+)
 
 
 def schema(value: object, frame: Frame) -> int:
@@ -61,6 +60,8 @@ class Sheets:
     """All tables of a document."""
 
     unitless: bool
+    own: Units
+    files: Files
     head: Sheet[Head]
     time: Sheet[Time]
     plan: Sheet[Plan]
@@ -68,8 +69,12 @@ class Sheets:
     parameters: Mapping[str, Sheet[Parameter]]
     terms: Mapping[str, Sheet[Term]]
     forcings: Mapping[str, Sheet[ForcingCourse]]
+    tables: Mapping[str, Sheet[GivenTable]]
     outcomes: Mapping[str, Sheet[Outcome]]
     limits: Mapping[str, Sheet[Limit]]
+    measured: Mapping[str, Sheet[Measured]]
+    scenarios: Mapping[str, Sheet[ScenarioTable]]
+    dependence: Statements
 
     def text_path(self, key: str, name: str, document: Mapping[str, Any]) -> Path:
         """Where the expression of a term stands: in its short form the term itself is the text."""
@@ -78,8 +83,11 @@ class Sheets:
 
 def read_sheets(document: Mapping[str, Any], files: Files, notes: Notes) -> Sheets:
     """Read every table; mistakes go to `notes`."""
-    unitless = not _states_units(document)
-    frame = Frame(NONE, NONE, unitless, files)
+    own, wrong = own_units(document)
+    for path, mistake in wrong:
+        notes.refused(path, mistake)
+    unitless = not _states_units(document, own)
+    frame = Frame(NONE, NONE, unitless, files, own)
     head = _head(document, frame, notes)
     if "time" in document:
         time = _noted(read_table(Time, document["time"], frame), ("time",), notes)
@@ -88,7 +96,8 @@ def read_sheets(document: Mapping[str, Any], files: Files, notes: Notes) -> Shee
         time = Sheet({}, (), None)
     if document.get("states", {}) == {}:
         notes.at_key(("states",), "no state", "one table [states.NAME] or more")
-    frame = Frame(NONE, time.unit, unitless, files)
+    stated = statements(document, frame, notes)
+    frame = replace(frame, time=time.unit, joint=stated.joint)
 
     def all_of(key: str, one: Callable[[str, Any, Frame], Sheet[Any]]) -> dict[str, Sheet[Any]]:
         if key in document and not isinstance(document[key], Mapping):
@@ -97,15 +106,21 @@ def read_sheets(document: Mapping[str, Any], files: Files, notes: Notes) -> Shee
 
     return Sheets(
         unitless,
+        own,
+        files,
         head,
         time,
         _noted(read_table(Plan, document.get("plan", {}), frame), ("plan",), notes),
-        all_of("states", lambda name, value, frame: read_table(State, value, frame, name)),
+        all_of("states", state),
         all_of("parameters", parameter),
         all_of("terms", term),
-        all_of("forcings", lambda name, value, frame: read_table(ForcingCourse, value, frame, name)),
+        all_of("forcings", forcing),
+        all_of("tables", table),
         all_of("outcomes", lambda name, value, frame: read_table(Outcome, value, frame, name)),
         all_of("limits", lambda name, value, frame: read_table(Limit, value, frame, name)),
+        all_of("measured", measured),
+        all_of("scenarios", lambda name, value, frame: read_table(ScenarioTable, value, frame, name)),
+        stated,
     )
 
 
@@ -124,12 +139,31 @@ def _noted(sheet: Sheet[T], path: Path, notes: Notes) -> Sheet[T]:
     return sheet
 
 
+def state(name: str, value: object, frame: Frame) -> Sheet[State]:
+    """A state; a joint sample of [[dependence]] may draw its start."""
+    own = f"{name}_start"
+    given = value.get("start", {}) if isinstance(value, Mapping) else None
+    if own not in frame.joint or not isinstance(value, Mapping) or not isinstance(given, Mapping):
+        return read_table(State, value, frame, name)
+    try:
+        drawn = drawn_jointly(own, given, frame)
+    except KeyMistake as mistake:
+        return read_table(State, value, frame, name).refused((("start",), mistake))
+    sheet = read_table(State, {**value, "start": drawn}, frame, name)
+    return sheet if drawn != given else _waiting(sheet, "start")
+
+
 def parameter(name: str, value: object, frame: Frame) -> Sheet[Parameter]:
     """A parameter: a table, or in short a quantity, or a plain number where the study has no units."""
     if isinstance(value, Mapping):
-        return read_table(Parameter, value, frame, name)
+        try:
+            drawn = value if "value" in value else drawn_jointly(name, value, frame)
+        except KeyMistake as mistake:
+            return read_table(Parameter, value, frame, name).refused(((), mistake))
+        sheet = read_table(Parameter, drawn, frame, name)
+        return sheet if drawn != value or name not in frame.joint or "value" in value else _waiting(sheet, "")
     try:
-        quantity = read.split_quantity(value) if isinstance(value, str) else None
+        quantity = frame.quantity_of(value) if isinstance(value, str) else None
         if quantity is not None:
             number, unit = quantity[0], quantity[1].text
         elif isinstance(value, str):
@@ -143,7 +177,13 @@ def parameter(name: str, value: object, frame: Frame) -> Sheet[Parameter]:
         said = KeyMistake("a number without a unit", "a quantity", f'{name} = {{ value = {value!r}, unit = "1" }} where it has none')
         return Sheet({"name": name, "value": number}, (((), said),), None)
     whole = Parameter(name=name, value=number, unit=unit)
-    return Sheet({"name": name, "value": number, "unit": unit}, (), whole)
+    return Sheet({"name": name, "value": number, "unit": unit}, (), whole, frame.unit_of(unit))
+
+
+def _waiting(sheet: Sheet[T], key: str) -> Sheet[T]:
+    """The same without a mistake about the distribution that a joint sample, itself wrong, would have given."""
+    path = (key,) if key else ()
+    return replace(sheet, mistakes=tuple(found for found in sheet.mistakes if found[0] != path), whole=None)
 
 
 def term(name: str, value: object, frame: Frame) -> Sheet[Term]:
@@ -151,12 +191,12 @@ def term(name: str, value: object, frame: Frame) -> Sheet[Term]:
     if isinstance(value, Mapping):
         return read_table(Term, value, frame, name)
     sheet = read_table(Term, {"value": value}, frame, name)
-    return Sheet(sheet.values, tuple(((), mistake) for _, mistake in sheet.mistakes), sheet.whole)
+    return replace(sheet, mistakes=tuple(((), mistake) for _, mistake in sheet.mistakes))
 
 
-def _states_units(document: Mapping[str, Any]) -> bool:
-    """Whether any unit is stated anywhere: a key `unit`, a quantity, or a quantity inside an expression."""
-    return any(key == "unit" or _has_unit(text) for key, text in _texts(document))
+def _states_units(document: Mapping[str, Any], own: Units) -> bool:
+    """Whether any unit is stated anywhere: a key `unit`, a unit of its own, a quantity, or a quantity inside an expression."""
+    return bool(own.names) or any(key == "unit" or _has_unit(text, own) for key, text in _texts(document))
 
 
 def _texts(value: object, key: str = "") -> Iterator[tuple[str, str]]:
@@ -171,8 +211,8 @@ def _texts(value: object, key: str = "") -> Iterator[tuple[str, str]]:
         yield key, value
 
 
-def _has_unit(text: str) -> bool:
+def _has_unit(text: str, own: Units) -> bool:
     try:
-        return "'" in text or read.split_quantity(text) is not None
+        return "'" in text or parse_quantity(text, own) is not None
     except ValueMistake:
         return True

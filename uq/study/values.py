@@ -9,15 +9,16 @@ from __future__ import annotations
 import math
 import re
 from collections.abc import Callable, Iterator, Mapping, Sequence
-from dataclasses import dataclass, replace
+from dataclasses import dataclass, field, replace
 from typing import Any
 
 from uq.errors import ValueMistake, suggest
 from uq.study.columns import Files
 from uq.study.locate import Path
 from uq.study.notes import Refused
-from uq.units import Unit, parse_quantity, parse_unit
+from uq.units import Unit, Units, parse_quantity, parse_unit
 
+NO_OWN = Units()
 Reader = Callable[[object, "Frame"], Any]
 
 _SIZE = re.compile(r"\s*(\d+(?:\.\d+)?)\s*(B|kB|MB|GB|TB|KiB|MiB|GiB|TiB)\s*")
@@ -27,16 +28,29 @@ _CONTROL = re.compile(r"[\x00-\x08\x0b-\x1f\x7f-\x9f]")
 
 @dataclass(frozen=True)
 class Frame:
-    """What the numbers around are measured in; `unit` and `time` are None where missing or wrong (numbers then pass as they are)."""
+    """What the numbers around are measured in; `unit` and `time` are None where missing or wrong (numbers then pass as they are).
+
+    `own` are the study's own counting units. `joint` has the inputs that a joint sample draws: file and column, None where that is wrong.
+    """
 
     unit: Unit | None
     time: Unit | None
     unitless: bool
     files: Files
+    own: Units = NO_OWN
+    joint: Mapping[str, tuple[str, str] | None] = field(default_factory=dict)
 
     def within(self, unit: Unit | None) -> Frame:
         """The same for a table with a unit of its own."""
         return replace(self, unit=unit)
+
+    def unit_of(self, text: str) -> Unit:
+        """The unit of a text."""
+        return parse_unit(text, self.own)
+
+    def quantity_of(self, text: str) -> tuple[float, Unit] | None:
+        """Number and unit of a text like "75 degC"; None where it is none. One without a known unit is a mistake."""
+        return parse_quantity(text, self.own)
 
 
 def show(value: object) -> str:
@@ -156,7 +170,7 @@ def one_or_more(reader: Reader, what: str) -> Reader:
 def unit(value: object, frame: Frame) -> str:
     """The text of a unit, "1" for none."""
     plain = text(value)
-    parse_unit(plain)
+    frame.unit_of(plain)
     return plain
 
 
@@ -180,16 +194,11 @@ def expression(value: object, frame: Frame) -> str:
     return repr(plain)
 
 
-def split_quantity(value: str) -> tuple[float, Unit] | None:
-    """Number and unit of a text like "75 degC"; None where it is none. One without a known unit is a mistake."""
-    return parse_quantity(value)
-
-
-def quantity_in(value: object, unit: Unit | None, difference: bool = False) -> float:
+def quantity_in(value: object, unit: Unit | None, frame: Frame, difference: bool = False) -> float:
     """A number, or a quantity converted to `unit`; `difference` says that an offset of the scale does not count (a deviation of degC)."""
     if not isinstance(value, str):
         return number(value)
-    found = split_quantity(value)
+    found = frame.quantity_of(value)
     if found is None:
         example = f' or a quantity such as "75 {unit.text}"' if unit is not None and not unit.is_none else ""
         raise ValueMistake(show(value), f"a number{example}", number_remedy(value))
@@ -206,12 +215,20 @@ def quantity_in(value: object, unit: Unit | None, difference: bool = False) -> f
 
 def quantity(value: object, frame: Frame) -> float:
     """A number in the unit of the table, or a quantity that is converted to it."""
-    return quantity_in(value, frame.unit)
+    return quantity_in(value, frame.unit, frame)
+
+
+def deviation(value: object, frame: Frame) -> float:
+    """A deviation above 0 in the unit of the table; of a temperature it is a difference."""
+    plain = quantity_in(value, frame.unit, frame, difference=True)
+    if plain <= 0:
+        raise ValueMistake(show(value), "a number above 0")
+    return plain
 
 
 def moment(value: object, frame: Frame) -> float:
     """A time: a number in the study's time unit, or a quantity that is converted to it."""
-    return quantity_in(value, frame.time)
+    return quantity_in(value, frame.time, frame)
 
 
 def rows(value: object, frame: Frame) -> tuple[tuple[float, float], ...]:

@@ -8,9 +8,12 @@ from typing import Any
 
 from uq.analysis.ask import Quantity
 from uq.errors import ExpressionError, ValueMistake, suggest
+from uq.inputs.dependence import Dependences
 from uq.inputs.inputs import Input
 from uq.lang.graph import Node
+from uq.lang.scope import TableUnits
 from uq.lang.take import CourseAsked, TakeResult
+from uq.study.dependence import judged
 from uq.study.locate import Path
 from uq.study.lowering import Lowering
 from uq.study.names import WORDS, declared, later_names
@@ -30,6 +33,7 @@ class Work:
     sheets: Sheets
     notes: Notes
     inputs: list[Input] = field(default_factory=list)
+    dependence: tuple[Dependences, ...] = ()
     starts: list[Node | None] = field(default_factory=list)
     rates: list[Node | None] = field(default_factory=list)
     watched: list[Quantity] = field(default_factory=list)
@@ -41,11 +45,12 @@ class Work:
 
     def __post_init__(self) -> None:
         names, later = declared(self.document), later_names(self.document)
-        self.low = Lowering(self.notes, names, later, self.sheets.unitless, self.sheets.time.unit or NONE)
+        self.low = Lowering(self.notes, names, later, self.sheets.unitless, self.sheets.time.unit or NONE, self.sheets.own)
 
     def run(self) -> None:
         """Everything in turn."""
         self.leaves()
+        self.depend()
         self.terms()
         self.rates_and_starts()
         self.watch()
@@ -70,6 +75,12 @@ class Work:
             self.leaf(name, state.unit)
         for name, forcing in sheets.forcings.items():
             self.leaf(name, forcing.unit)
+        for name, table in sheets.tables.items():
+            argument = table.values.get("of")
+            if argument is None or table.unit is None:
+                low.broken.add(name)
+            else:
+                low.tables[name] = TableUnits(parse_unit(argument.unit, sheets.own), table.unit)
         for name, parameter in sheets.parameters.items():
             self.leaf(name, parameter.unit)
             given = parameter.values
@@ -89,6 +100,13 @@ class Work:
                 low.fixed.add(own)
                 self.inputs.append(_input(own, f"{state.values.get('label') or name}, start", start, state.unit))
 
+    def depend(self) -> None:
+        """What is said about inputs that depend on each other."""
+        sheets = self.sheets
+        unclear = [name for name, sheet in sheets.parameters.items() if sheet.whole is None]
+        unclear += [f"{name}_start" for name, sheet in sheets.states.items() if sheet.whole is None]
+        self.dependence = judged(sheets.dependence, tuple(item.name for item in self.inputs), unclear, self.notes)
+
     def terms(self) -> None:
         """Terms, each after those it uses; cycles named in full."""
         low, terms = self.low, self.sheets.terms
@@ -107,16 +125,16 @@ class Work:
 
     def term(self, name: str, path: Path) -> None:
         """One term into the names known."""
-        values, low = self.sheets.terms[name].values, self.low
-        typed = low.typed(path, values["value"]) if "value" in values else None
+        sheet, low = self.sheets.terms[name], self.low
+        typed = None
+        if "value" in sheet.values and sheet.unit is None:
+            typed = low.typed(path, sheet.values["value"])
+        elif "value" in sheet.values:
+            typed = low.number(path, sheet.values["value"], sheet.unit, f"as its `unit` says for the term `{name}`")
         if typed is None or name in low.known:
             low.broken.add(name)
-            return
-        unit = typed.unit
-        if values.get("unit"):
-            unit = parse_unit(values["unit"])
-            low.number(path, values["value"], unit, f"as its `unit` says for the term `{name}`")
-        low.known[name] = (typed.node, unit)
+        else:
+            low.known[name] = (typed.node, typed.unit)
 
     def rates_and_starts(self) -> None:
         """Rates in the unit of the state per time, starts in the unit of the state."""
@@ -127,7 +145,7 @@ class Work:
             if "rate" in values:
                 needed = self.per_time(name, unit, time)
                 rate = self.low.number(("states", name, "rate"), values["rate"], needed, f"for the rate of `{name}`")
-            self.rates.append(rate)
+            self.rates.append(rate.node if rate is not None else None)
             self.starts.append(self.start(name, values.get("start"), unit))
 
     def per_time(self, name: str, unit: Unit | None, time: Unit | None) -> Unit | None:
@@ -145,7 +163,8 @@ class Work:
         if isinstance(start, float):
             return self.low.graph.number(start)
         if isinstance(start, str):
-            return self.low.number(("states", name, "start"), start, unit, f"for the start of `{name}`", fixed_only=True)
+            typed = self.low.number(("states", name, "start"), start, unit, f"for the start of `{name}`", fixed_only=True)
+            return typed.node if typed is not None else None
         return None
 
     def watch(self) -> None:
@@ -181,8 +200,7 @@ class Work:
         """Outcomes and the courses they are taken from."""
         for name, sheet in self.sheets.outcomes.items():
             if "take" in sheet.values and self.sheets.time.unit is not None:
-                unit = parse_unit(sheet.values["unit"]) if sheet.values.get("unit") else None
-                path, what = ("outcomes", name, "take"), f"as its `unit` says for the outcome `{name}`"
+                unit, path, what = sheet.unit, ("outcomes", name, "take"), f"as its `unit` says for the outcome `{name}`"
                 taken = self.low.take(path, sheet.values["take"], unit, what, len(self.asked))
                 if taken is not None:
                     self.windows(path, taken)
@@ -202,18 +220,20 @@ class Work:
                     self.notes.refused(path, ExpressionError(part.start, part.stop - part.start, f"`{part.text}`", said))
 
     def forcings(self) -> None:
-        """Forcings must cover the whole time."""
+        """Forcings must cover the whole time, unless they say what holds outside."""
         time = self.sheets.time.whole
         for name, sheet in self.sheets.forcings.items():
             rows = sheet.values.get("rows")
-            if time is None or not rows:
+            if time is None or not rows or sheet.values.get("outside", "refuse") != "refuse":
                 continue
+            file = sheet.values.get("file")
             for edge, row, index in ((time.start, rows[0], 0), (time.stop, rows[-1], len(rows) - 1)):
                 short = row[0] > edge if index == 0 else row[0] < edge
                 if short or (len(rows) == 1 and row[0] != edge):
-                    found = f"{'first' if index == 0 else 'last'} row at {row[0]:g}"
+                    found = f"{'first' if index == 0 else 'last'} row at {row[0]:g}" + (f" in {file}" if file else "")
                     said = f"rows from the start to the stop, {time.span}"
-                    self.notes.at_value(("forcings", name, "rows", index), found, said, f"add a row at {edge:g}")
+                    path: Path = ("forcings", name, "file") if file else ("forcings", name, "rows", index)
+                    self.notes.at_value(path, found, said, f'add a row at {edge:g}, or say what holds: outside = "hold"')
 
 
 def _input(name: str, label: str, given: Any, unit: Unit | None) -> Input:
