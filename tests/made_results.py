@@ -16,11 +16,13 @@ from uq.analysis.finding import Finding, Variable
 from uq.inputs.distributions import Lognormal, Normal, Triangular
 from uq.inputs.inputs import Input, Inputs
 from uq.solve.batch import Status
+from uq.store.described import within
 from uq.store.facts import RunFacts
 from uq.store.folder import write_result
 from uq.store.open import open_result
 from uq.store.result import Result
-from uq.study.study import Study
+from uq.study.study import Scenario, Study
+from uq.units import Units
 
 TIMES = np.linspace(0.0, 720.0, 13)
 BY = np.array([120.0, 360.0, 720.0])
@@ -57,7 +59,10 @@ def made_study(**changes: Any) -> Study:
             quantiles=LEVELS,
             members=16384,
             accuracy=1e-6,
+            precision=None,
         ),
+        "scenarios": (),
+        "own_units": Units(),
         "warnings": ("the parameter `spare` is used by nothing",),
         "remarks": (),
         "states": (SimpleNamespace(name="T", unit="K"), SimpleNamespace(name="x", unit="1")),
@@ -212,3 +217,69 @@ def made_result(
     """Written and read again."""
     write_result(folder, study or made_study(), made_findings() if findings is None else findings, facts or made_facts())
     return open_result(folder)
+
+
+def scenario_study(**changes: Any) -> Study:
+    """A study with one scenario."""
+    early = made_study(changes={"plan.seed": 11, "parameters.UA_off": 5.5})
+    return made_study(scenarios=(Scenario("early", "Operator in 4 min", early),), **changes)
+
+
+def scenario_findings(difference: float = -0.0020, half: float = 0.0005) -> tuple[Finding, ...]:
+    """What the scenario came to, and how far that is from the study."""
+    said = {"draws": "paired", "intervals": "intervals from paired replicates"}
+    by = {"by": Variable(("by",), BY, "time by which", "min")}
+    ever = estimate("ever_by", ("by",), [difference / 4, difference / 2, difference], half)
+    quantiles = estimate("quantiles", ("quantile",), [-1.1, -1.3, -1.6, -2.0, -3.1], 0.2, "K")
+    peak = next(each for each in made_findings() if each.group == "outcomes/peak_T")
+    passed = limit((0.0027, 0.0071, 0.0128), (0.0005, 0.0008, 0.0010))
+    return (
+        *within(
+            "scenarios/early",
+            (passed, peak, ranking("T", (0.5, 0.2, 0.1, 0.0), along="time")),
+        ),
+        *within("scenarios/early", members()),
+        *within("differences/early", (Finding("limits/alarm_passed", {**by, **ever}, said), Finding("outcomes/peak_T", quantiles, said))),
+    )
+
+
+def measured(inside: float = 1.0, low: float = 2 / 3, high: float = 1.0) -> Finding:
+    """Three observations of a temperature."""
+    shown = ("observation",)
+    share = {"share_inside": inside, "share_inside_low": low, "share_inside_high": high}
+    return Finding(
+        "measured/T",
+        {
+            "value": Variable(shown, np.array([312.0, 320.0, 331.0]), "measured: Tank temperature", "K"),
+            "time_measured": Variable(shown, np.array([60.0, 120.0, 120.0]), "when it was measured", "min"),
+            "sd": Variable(shown, np.full(3, 0.5), "standard deviation of the measurement", "K"),
+            **{name: Variable((), np.array(value), "share", "1", {"share": 0.9}) for name, value in share.items()},
+        },
+    )
+
+
+def shapley(name: str, effects: Sequence[float], half: float = 0.03) -> Finding:
+    """A ranking of an outcome with dependent inputs."""
+    effect = np.array(effects)
+    reason = {"reason": "not given because inputs depend on each other"}
+    missing = {each: Variable(("input",), np.full(len(effect), np.nan), each, "1", reason) for each in ("total", "total_low", "total_high")}
+    groups = {"group": Variable(("group",), np.array(["kinetics"]), "inputs ranked together")}
+    return Finding(
+        f"ranking/{name}",
+        {
+            **estimate("first", ("input",), 0.9 * effect, half),
+            **missing,
+            **estimate("shapley", ("input",), effect, half),
+            **groups,
+            **estimate("shapley_group", ("group",), [effect[:2].sum()], half),
+        },
+    )
+
+
+def precision_rounds() -> Finding:
+    """Two rounds of one number."""
+    rounds = {
+        "members": Variable(("round",), np.array([8192, 16384]), "members so far"),
+        "by": Variable(("by",), BY, "time by which", "min"),
+    }
+    return Finding("precision/limits/alarm_passed", {**rounds, **estimate("ever_by", ("round", "by"), np.full((2, 3), 0.01), 0.001)})

@@ -70,7 +70,7 @@ def test_it_says_what_was_understood(study: Study) -> None:
         "dT/dt = heating - loss * (T - ambient) in K/min; T has an uncertain start",
         "margin = alarm - T",
         "loss = 0.01 1/min",
-        "ambient: given course, 2 rows, linear",
+        "ambient: given course in K, 2 rows, linear, nothing outside them",
     ):
         assert part in text
 

@@ -40,6 +40,7 @@ SHARES = [{"input": "str", **ESTIMATE}]
 def test_its_names_are_stable(told: dict[str, Any]) -> None:
     """Names are added, never taken away: who changes a line here breaks somebody's program."""
     names = "schema path attributes time_unit limits bands outcomes ranking inputs failures warnings scales_fell_back"
+    names += " dependence measured scenarios precision settled"
     assert list(told) == names.split()
     assert told["schema"] == 1
     assert shape(told["limits"]["alarm_passed"]) == {
@@ -57,7 +58,7 @@ def test_its_names_are_stable(told: dict[str, Any]) -> None:
     ranking = {"label": "str", "of": "str", "time": "NoneType", "first": SHARES, "total": SHARES, "reason": "str"}
     assert shape(told["ranking"]["T"]) == ranking
     assert shape(told["ranking"]["alarm_passed"]) == {**ranking, "time": "number"}
-    each = {"label": "str", "unit": "str", "distribution": "str", "source": "str", "kind": "str", "evidence": "number"}
+    each = {"label": "str", "unit": "str", "distribution": "str", "source": "str", "kind": "str", "evidence": "number", "group": "str"}
     assert shape(told["inputs"]["k0"]) == each
     assert list(told["inputs"]) == list(INPUTS.names)
 

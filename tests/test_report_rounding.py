@@ -77,9 +77,11 @@ def test_all_three_end_at_one_place(value: float, half: float) -> None:
 
 def test_the_interval_in_words() -> None:
     assert Rounded("1", "0", "2").interval == "0 to 2"
-    assert Rounded("1", "0", "").interval == "0 or more"
-    assert Rounded("1", "", "2").interval == "2 or less"
+    assert Rounded("1", "0", "").interval == "at least 0"
+    assert Rounded("1", "", "2").interval == "at most 2"
     assert Rounded("1").interval == ""
+    assert rounded(1.23456, -INF, INF) == Rounded("1.23", unbounded=True)
+    assert rounded(1.23456, -INF, INF).interval == "unbounded"
 
 
 @pytest.mark.parametrize(

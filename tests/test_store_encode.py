@@ -148,7 +148,7 @@ def test_an_estimate_names_its_interval() -> None:
         ("m**3", "mean", {"units": "m3", "unit": "m**3"}),
         ("1/min", "mean", {"units": "min-1", "unit": "1/min"}),
         ("1", "mean", {"units": "1"}),
-        ("person", "mean", {"units": "person"}),
+        ("person", "mean", {"units": "1", "unit": "person"}),
         ("", "mean", {}),
     ],
 )

@@ -45,6 +45,8 @@ def test_the_default_folder_is_named_after_study_and_fingerprint() -> None:
         ("..\\air.csv", "files/air.csv"),
         ("result.nc", "files/result.nc"),
         ("study.toml", "files/study.toml"),
+        ("tallies.nc", "files/tallies.nc"),
+        ("progress/a.csv", "files/a.csv"),
         ("./air.csv", "air.csv"),
     ],
 )

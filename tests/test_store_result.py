@@ -148,10 +148,29 @@ def test_what_was_not_asked_is_empty_and_what_is_unknown_is_told(tmp_path: Path)
     assert len(result.bands) == 0
     with pytest.raises(AttributeError, match="bands has no 'T'; it has nothing"):
         result.bands.T  # noqa: B018
-    with pytest.raises(KeyError):
+    with pytest.raises(KeyError, match=r"^bands has no 'T'; it has nothing$"):
         result.bands["T"]
     with pytest.raises(AttributeError, match="no 'band'"):
         result.band  # noqa: B018
+
+
+def test_what_the_file_says_of_a_group_are_attributes_too(result: Result) -> None:
+    assert result.limits["alarm_passed"].verdict == "not met"
+    assert result.limits["alarm_passed"].accept == 0.01
+    # Variables and groups come first: the root has an attribute of this name too.
+    assert result.failures.attributes == {}
+    with pytest.raises(KeyError, match=r"^limits has no 'alarm'; it has alarm_passed$"):
+        result.limits["alarm"]
+    with pytest.raises(AttributeError, match="first_time, and the attributes label, when, accept, verdict"):
+        result.limits["alarm_passed"].verdikt  # noqa: B018
+
+
+def test_a_group_shows_itself_shortly(result: Result) -> None:
+    for group in (result, result.bands["T"], result.limits["alarm_passed"], result.limits, result.members):
+        lines = repr(group).splitlines()
+        assert len(lines) <= 16
+        assert all(len(line) <= 110 for line in lines if "result.nc" not in line)
+        assert "quantiles_low" not in repr(group)
 
 
 def test_a_study_without_inputs_files_or_warnings(tmp_path: Path) -> None:

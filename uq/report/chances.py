@@ -6,7 +6,10 @@ import math
 from dataclasses import dataclass
 
 from uq.report.answers import Estimate
-from uq.report.rounding import MISSING, Rounded, at_most, rounded
+from uq.report.rounding import FINEST, MISSING, Rounded, at_most, rounded
+
+# Below this a probability is said as "1 in 70"; above, two digits of such a count are too coarse.
+RARE = 0.05
 
 
 @dataclass(frozen=True)
@@ -17,22 +20,34 @@ class Chance:
     interval: str
 
 
-def chance(estimate: Estimate, members: int) -> Chance:
-    """The texts for a probability of which `members` solved members are the sample."""
+def chance(estimate: Estimate, members: int, unknown: int = 0) -> Chance:
+    """The texts for a probability of which so many members are the sample, and of so many of these it is not known."""
     value, low, high = estimate.value, estimate.low, estimate.high
     if math.isnan(value):
         return Chance(MISSING, "")
     if value == 0:
-        return Chance(f"0 of {members} members", f"at most {_upper(high)}" if high < 1 else "")
+        return Chance(f"0 {f'to {unknown} ' if unknown else ''}of {members} members", f"at most {_upper(high)}" if high < 1 else "")
     if value == 1:
-        return Chance(f"all {members} members", f"at least {_lower(low)}" if low > 0 else "")
+        count = f"{members - unknown} to {members} of {members}" if unknown else f"all {members}"
+        return Chance(f"{count} members", f"at least {_lower(low)}" if low > 0 else "")
     texts = rounded(value, max(low, 0.0), min(high, 1.0))
     return Chance(texts.value, texts.interval)
 
 
-def in_per_cent(estimate: Estimate) -> Rounded:
-    """A share and its interval in per cent, within 0 and 100 (an estimate of a share may lie beyond)."""
-    return rounded(100 * min(max(estimate.value, 0.0), 1.0), 100 * max(estimate.low, 0.0), 100 * min(estimate.high, 1.0))
+def in_per_cent(estimate: Estimate, finest: int = FINEST) -> Rounded:
+    """A share and its interval in per cent, within 0 and 100 (an estimate of a share may lie beyond); finest: as in `rounded`."""
+    return rounded(100 * min(max(estimate.value, 0.0), 1.0), 100 * max(estimate.low, 0.0), 100 * min(estimate.high, 1.0), finest)
+
+
+def one_in(estimate: Estimate) -> tuple[str, str]:
+    """A rare probability as a count: the N of "1 in N", and its interval; both from the digits that are printed beside them.
+
+    The low end must be above 0; where its digits are not, the interval has an upper end only.
+    """
+    texts = rounded(estimate.value, max(estimate.low, 0.0), min(estimate.high, 1.0))
+    value, low, high = (float(text) for text in (texts.value, texts.low, texts.high))
+    most = f"1 in {down(1 / high)}"
+    return two_digits(1 / value), f"between 1 in {up(1 / low)} and {most}" if low > 0 else f"at most {most}"
 
 
 def two_digits(number: float) -> str:

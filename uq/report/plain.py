@@ -1,13 +1,18 @@
-"""Texts of the user made safe and fitting for a terminal: no sign in them acts, long ones wrap."""
+"""Texts of the user made safe and fitting for a terminal: no sign in them acts, long ones wrap, wide tables fold."""
 
 from __future__ import annotations
 
 import re
 import unicodedata
 from collections.abc import Iterable, Sequence
+from dataclasses import dataclass
 
 WIDTH = 100
-NARROWEST = 16
+# No page is laid out narrower than this.
+NARROWEST_PAGE = 60
+# The first column of a table gives way down to this.
+NARROWEST = 20
+BETWEEN = " to "
 # Where a line may break; a number keeps its per cent.
 BLANK = re.compile(r"\s+(?!%)")
 # Signs that turn the direction of reading: a label with one could make a line say something else than is written.
@@ -65,6 +70,41 @@ def padded(text: str, columns: int, right: bool = False) -> str:
     return blanks + text if right else text + blanks
 
 
+@dataclass(frozen=True)
+class Text:
+    """A line that wraps; `further` is what lines after the first begin with, by default the same as `indent`."""
+
+    text: str
+    indent: str = ""
+    further: str | None = None
+
+
+@dataclass(frozen=True)
+class Table:
+    """Rows of cells; one of a single cell is a line across all columns. intervals: columns that hold the interval of the column before
+    them, and that go below it where lines would be too long."""
+
+    rows: Sequence[Sequence[str]]
+    intervals: tuple[int, ...] = ()
+
+
+# Part of a page; a plain text is a line that is left as it is.
+Part = str | Text | Table
+
+
+def laid(parts: Iterable[Part], columns: int = WIDTH) -> list[str]:
+    """The lines of a page so many columns wide."""
+    lines: list[str] = []
+    for part in parts:
+        if isinstance(part, Text):
+            lines += wrapped(part.text, part.indent, part.further, columns)
+        elif isinstance(part, Table):
+            lines += table(_folded(part, columns), columns=columns)
+        else:
+            lines.append(part)
+    return lines
+
+
 def table(rows: Sequence[Sequence[str]], numbers: Iterable[int] = (), indent: str = "  ", columns: int = WIDTH) -> list[str]:
     """Rows in columns two blanks apart; `numbers` stand to the right. A row of one cell is a line across all columns.
 
@@ -91,3 +131,60 @@ def _widths(rows: Sequence[Sequence[str]], columns: int) -> list[int]:
     widths = [max(width(row[place]) for row in rows) for place in range(len(rows[0]))]
     widths[0] = max(min(widths[0], columns - sum(widths[1:]) - 2 * (len(widths) - 1)), min(widths[0], NARROWEST))
     return widths
+
+
+def _folded(part: Table, columns: int) -> Sequence[Sequence[str]]:
+    """Rows that fit: as they are, else with intervals below their numbers, else with first cells on lines of their own too, else with
+    the ends of intervals in two lines."""
+    rows: Sequence[Sequence[str]] = part.rows
+    least = NARROWEST
+    for fold in (_intervals_below, _first_apart, _ends_apart):
+        if _needed(rows, least) <= columns:
+            break
+        rows = fold(rows, part.intervals)
+        # A first cell that wraps would come between a number and its interval.
+        least = columns
+    return rows
+
+
+def _needed(rows: Sequence[Sequence[str]], least: int) -> int:
+    """The columns that rows need where the first cells wrap to no fewer than so many."""
+    widths = [max(map(width, cells)) for cells in zip(*(row for row in rows if len(row) > 1), strict=True)]
+    return sum([min(least, *widths[:1]), *widths[1:]]) + 2 * len(widths) if widths else 0
+
+
+def _intervals_below(rows: Sequence[Sequence[str]], intervals: tuple[int, ...]) -> list[Sequence[str]]:
+    """Every interval in a line of its own, below its number."""
+    folded: list[Sequence[str]] = []
+    for row in rows:
+        kept = [place for place in range(len(row)) if len(row) == 1 or place not in intervals]
+        folded.append([row[place] for place in kept])
+        if len(row) > 1 and any(row[place] for place in intervals):
+            folded.append(["", *(row[place + 1] if place + 1 in intervals else "" for place in kept[1:])])
+    return folded
+
+
+def _ends_apart(rows: Sequence[Sequence[str]], _: tuple[int, ...]) -> list[Sequence[str]]:
+    """The two ends of every interval in two lines."""
+    folded: list[Sequence[str]] = []
+    for row in rows:
+        pairs = [cell.partition(BETWEEN) for cell in row[1:]]
+        if not any(between for _, between, _ in pairs):
+            folded.append(row)
+            continue
+        folded.append([row[0], *(f"from {low}" if between else low for low, between, _ in pairs)])
+        folded.append(["", *(f"to {high}" if between else "" for _, between, high in pairs)])
+    return folded
+
+
+def _first_apart(rows: Sequence[Sequence[str]], _: tuple[int, ...]) -> list[Sequence[str]]:
+    """First cells in lines of their own, the others moved in below them."""
+    folded: list[Sequence[str]] = []
+    for row in rows:
+        if len(row) == 1:
+            folded.append(row)
+            continue
+        front = row[0][: len(row[0]) - len(row[0].lstrip())]
+        folded += [[row[0]]] if row[0].strip() else []
+        folded += [[f"{front}  ", *row[1:]]] if any(row[1:]) else []
+    return folded

@@ -17,27 +17,36 @@ CARRIED = 14
 WIDE = Context(prec=800)
 # Without an interval: enough to recognise the number, too few to look exact.
 DIGITS_ALONE = 6
+# Of a number whose interval has no end on either side even these are a courtesy.
+DIGITS_UNBOUNDED = 3
 FINEST = -400
 # Between these powers of ten a number is written out.
 SMALLEST_PLAIN, LARGEST_PLAIN = -4, 7
 
 
+UNBOUNDED = "unbounded"
+
+
 @dataclass(frozen=True)
 class Rounded:
-    """An estimate and the ends of its interval as texts, all to one decimal place; an end that is not there is empty."""
+    """An estimate and the ends of its interval as texts, all to one decimal place; an end that is not there is empty.
+
+    unbounded: both ends are known to be infinite.
+    """
 
     value: str
     low: str = ""
     high: str = ""
+    unbounded: bool = False
 
     @property
     def interval(self) -> str:
-        """The interval in words: "1.2 to 1.4", "1.2 or more", "1.4 or less"; empty where there is none."""
+        """The interval in words: "1.2 to 1.4", "at least 1.2", "at most 1.4", "unbounded"; empty where there is none."""
         if self.low and self.high:
             return f"{self.low} to {self.high}"
         if self.low:
-            return f"{self.low} or more"
-        return f"{self.high} or less" if self.high else ""
+            return f"at least {self.low}"
+        return f"at most {self.high}" if self.high else UNBOUNDED if self.unbounded else ""
 
 
 def rounded(value: float, low: float = math.nan, high: float = math.nan, finest: int = FINEST) -> Rounded:
@@ -45,18 +54,45 @@ def rounded(value: float, low: float = math.nan, high: float = math.nan, finest:
 
     finest: no decimal place below this power of ten, where more digits would serve nobody.
     """
+    found = place_by(value, low, high, finest)
+    if found and _all_but_one(value, low, found[0]):
+        below = written(1 - 10.0 ** found[0], found[0], -1)
+        return Rounded(f"> {below}", below)
+    if found is None:
+        unbounded = math.isinf(low) and math.isinf(high)
+        text = alone(value, DIGITS_UNBOUNDED if unbounded else DIGITS_ALONE)
+        ends = [alone(end) if math.isfinite(end) else "" for end in (low, high)]
+        return Rounded(text, ends[0], ends[1], unbounded)
+    return Rounded(
+        written(value, *found),
+        written(low, *found, ROUND_FLOOR) if math.isfinite(low) else "",
+        written(high, *found, ROUND_CEILING) if math.isfinite(high) else "",
+    )
+
+
+def place_by(value: float, low: float, high: float, finest: int = FINEST) -> tuple[int, int] | None:
+    """The decimal place that an interval leaves standing, and the power of ten that goes with it; None where it settles none."""
     ends = [end for end in (low, high) if math.isfinite(end)]
-    numbers = [number for number in (value, *ends) if math.isfinite(number)]
     half = high / 2 - low / 2 if len(ends) == 2 else max((abs(end - value) for end in ends), default=0.0)
     if not math.isfinite(value) or not half > 0:
-        return Rounded(alone(value), *(alone(end) if math.isfinite(end) else "" for end in (low, high)))
-    largest = max(numbers, key=abs)
-    place, power = max(place_of(half, largest), finest), power_of(largest)
-    return Rounded(
-        written(value, place, power),
-        written(low, place, power, ROUND_FLOOR) if math.isfinite(low) else "",
-        written(high, place, power, ROUND_CEILING) if math.isfinite(high) else "",
-    )
+        return None
+    largest = max((value, *ends), key=abs)
+    return max(place_of(half, largest), finest), power_of(largest)
+
+
+def _all_but_one(value: float, low: float, place: int) -> bool:
+    """Whether a number below 1 would look as if it were 1, and is surely within the last place of it."""
+    return place < 0 and 1 - 10.0**place < low <= value < 1
+
+
+def finest_of(value: float, spread: float) -> int:
+    """The last decimal place that serves a reader of a quantity whose members spread so far (from 5 to 95 %): a thousandth of the spread,
+    though two digits of the number itself, and no more than four digits unless they are needed to tell hundredths of the spread apart.
+    """
+    if not (math.isfinite(value) and math.isfinite(spread) and spread > 0):
+        return FINEST
+    wide, power = power_of(spread), power_of(value) if value else power_of(spread)
+    return max(min(wide - 3, power - 1), min(wide - 2, power - 3))
 
 
 def place_of(half: float, value: float, digits: int = 2) -> int:

@@ -2,19 +2,21 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Iterable
 
-from uq.report.answers import Headline, RankingAnswer
-from uq.report.plain import plain, wrapped
+from uq.report.answers import Headline, InputRow, Pair, RankingAnswer
+from uq.report.plain import Part, Text, plain
 from uq.report.rounding import alone
+from uq.report.spoken import listed, per_cent, quoted
 from uq.solve.batch import Status
 from uq.solve.statuses import describe
+from uq.store.facts import method_words
 
 # "One person's range" and worse.
 WEAK = 1
-# A total share whose interval reaches above this makes an input influential.
+# A total share that reaches this makes an input influential.
 INFLUENTIAL = 0.1
-NAMED = 8
 
 POLICIES = {
     "bound": "probabilities and quantiles count them both ways, as below and as above everything",
@@ -23,22 +25,39 @@ POLICIES = {
 }
 
 
-def trust_section(head: Headline) -> list[str]:
-    """Members, failures, solver, inputs, dependence, warnings, and what is missing, in this order."""
-    lines = ["How far to trust this"]
-    for text in (
-        *_members(head),
+def trust_section(head: Headline) -> list[Part]:
+    """What intervals mean and where limits are judged, then members, failures, solver, inputs, dependence, and warnings."""
+    told = (
+        *_intervals(head),
+        *_judged(head),
+        *failed_members(head),
         *_solver(head),
         *_inputs(head),
-        "Dependence: all inputs are taken as independent." if len(head.inputs) > 1 else "",
+        *_dependence(head),
+        *_measured(head),
         *(f"Warning: {text}" for text in head.warnings),
-    ):
-        if text:
-            lines += wrapped(plain(text), "  ", "    ")
-    return lines
+    )
+    return ["How far to trust this", *(Text(plain(text), "  ", "    ") for text in told)]
 
 
-def _members(head: Headline) -> Iterable[str]:
+def _intervals(head: Headline) -> Iterable[str]:
+    yield (
+        f"Intervals ({per_cent(head.facts['confidence'])}) show the effect of the finite number of members only, not errors of the model, "
+        "of the inputs, of the output times or of the solver."
+    )
+
+
+def _judged(head: Headline) -> Iterable[str]:
+    """Where limits and outcomes are looked at."""
+    judged = [name for name, asked in (("limits", head.limits), ("outcomes", head.outcomes)) if asked]
+    if not judged or len(head.times) < 2:
+        return
+    what = " and ".join(judged).capitalize()
+    yield f"{what} are judged at {len(head.times)} output times, {head.clock.apart(head.times)}; what happens between them is not seen."
+
+
+def failed_members(head: Headline) -> Iterable[str]:
+    """How many members there are and how many failed, how that is counted, and why they did."""
     facts = head.facts
     asked, members, failed = (int(facts[name]) for name in ("members_asked", "members", "members_failed"))
     more = f" ({asked} asked)" if asked != members else ""
@@ -54,29 +73,91 @@ def _members(head: Headline) -> Iterable[str]:
 
 def _solver(head: Headline) -> Iterable[str]:
     tolerance = alone(head.facts["accuracy"])
-    yield f"Solver: {head.facts['method']}, relative tolerance {tolerance}; its error is not compared with the bands yet."
+    method = method_words(str(head.facts["method"]))
+    yield f"Solver: {method}, relative tolerance {tolerance}; its error is not compared with the bands yet."
     if head.fell_back:
-        yield f"Scale: the pilot gave none for {_listed(head.fell_back)}; the absolute tolerance there is a guess."
+        yield f"Scale: the pilot gave none for {listed(head.fell_back)}; the absolute tolerance there is a guess."
 
 
 def _inputs(head: Headline) -> Iterable[str]:
     silent = [row.label for row in head.inputs if not row.source.strip()]
-    if silent:
-        yield f"Sources: not stated for {len(silent)} of {len(head.inputs)} inputs: {_listed(silent)}."
-    weak = [row for row in head.inputs if row.evidence is not None and row.evidence <= WEAK]
-    influential = {name for ranking in head.rankings for name in _influential(ranking)}
-    told = [f"{row.label} (evidence {row.evidence})" for row in weak if row.name in influential]
+    if silent and len(silent) == len(head.inputs):
+        yield "Sources: stated for no input."
+    elif silent:
+        yield f"Sources: not stated for {len(silent)} of {len(head.inputs)} inputs: {listed(silent)}."
+    told = [f"{quoted(row.label)} (evidence {row.evidence})" for row in weak_inputs(head)]
     if told:
-        yield f"Weak evidence among the influential inputs: {_listed(told)}."
+        yield f"Weak evidence among the influential inputs: {'; '.join(told)}."
+
+
+def weak_inputs(head: Headline) -> list[InputRow]:
+    """Influential inputs that rest on a guess or on one person's range."""
+    influential = {name for ranking in head.rankings for name in _influential(ranking)}
+    return [row for row in head.inputs if row.evidence is not None and row.evidence <= WEAK and row.name in influential]
+
+
+def _dependence(head: Headline) -> Iterable[str]:
+    """Every pair that goes together with its rank correlation, asked and achieved."""
+    if len(head.inputs) < 2:
+        return
+    first, *others = _as_stated(head)
+    alike = "; ".join(f"{names} ({why})" for names, why in _alike(head))
+    yield first + (f" Probably not independent: {alike}." if alike else "")
+    yield from others
+
+
+def _as_stated(head: Headline) -> Iterable[str]:
+    if not head.pairs and not head.dependence:
+        yield "Dependence: all inputs are taken as independent."
+        return
+    told = [f"{quoted(pair.one.label)} with {quoted(pair.other.label)}, {_correlation(pair)}" for pair in head.pairs]
+    names = {row.name for pair in head.pairs for row in (pair.one, pair.other)}
+    others = "; all others are taken as independent" if len(names) < len(head.inputs) else ""
+    yield f"Dependence (rank correlations): {'; '.join(told) or 'as stated'}{others}."
+    yield from (f"Dependence as stated: {text}." for text in head.dependence)
+
+
+def _alike(head: Headline) -> Iterable[tuple[str, str]]:
+    """Inputs of one group or of one source of which some go together with no other of these."""
+    told: list[set[str]] = []
+    for kind in ("group", "source"):
+        by_text: dict[str, list[InputRow]] = {}
+        for row in head.inputs:
+            by_text.setdefault(" ".join(getattr(row, kind).split()).casefold(), []).append(row)
+        for text, rows in by_text.items():
+            names = {row.name for row in rows}
+            linked = {each.name for pair in head.pairs for each in (pair.one, pair.other) if {pair.one.name, pair.other.name} <= names}
+            if not text or len(rows) < 2 or names <= linked or any(names <= before for before in told):
+                continue
+            told.append(names)
+            why = f"group {rows[0].group}" if kind == "group" else f'same source, "{rows[0].source.strip()}"'
+            yield _and(row.label for row in rows), why
+
+
+def _and(labels: Iterable[str]) -> str:
+    *first, last = (quoted(label) for label in labels)
+    return f"{', '.join(first)} and {last}"
+
+
+def _correlation(pair: Pair) -> str:
+    """To two places; of a correlation nobody states more."""
+    asked = f"asked {pair.asked:.2f}"
+    return asked if math.isnan(pair.achieved) else f"{asked}, got {pair.achieved:.2f}"
+
+
+def _measured(head: Headline) -> Iterable[str]:
+    """How many of the observations lie between the outermost quantiles."""
+    for each in head.measured:
+        inside, count = each.share_inside, each.observations
+        if inside.missing:
+            yield f"Measured: of {each.label} nothing can be said ({each.reason or 'members failed'})."
+            continue
+        low, high = round(inside.low * count), round(inside.high * count)
+        open_ = f" (between {low} and {high}, as intervals go)" if low < high else ""
+        expected = "" if math.isnan(each.expected) else f"; {alone(100 * each.expected)} % of them are expected there"
+        what = f"{round(inside.value * count)} of {count} observations of {each.label}"
+        yield f"Measured: {what} lie between the outermost quantiles{open_}{expected}."
 
 
 def _influential(ranking: RankingAnswer) -> Iterable[str]:
-    return (driver.input.name for driver in ranking.drivers if driver.total.value >= INFLUENTIAL)
-
-
-def _listed(texts: Iterable[str]) -> str:
-    """Texts one after another; many are cut short, with their number."""
-    all_of_them = list(texts)
-    if len(all_of_them) > NAMED:
-        return ", ".join(all_of_them[:NAMED]) + f" and {len(all_of_them) - NAMED} more"
-    return ", ".join(all_of_them)
+    return (driver.input.name for driver in ranking.drivers if driver.shares.share.value >= INFLUENTIAL)

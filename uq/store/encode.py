@@ -14,7 +14,8 @@ from typing import Any
 import numpy as np
 
 from uq.analysis.finding import Finding, Variable
-from uq.store.unit_text import units_attributes
+from uq.store.unit_text import NO_OWN, units_attributes
+from uq.units import Units
 
 Array = np.ndarray[Any, Any]
 
@@ -26,6 +27,8 @@ METHODS = {"mean": "realization: mean", "sd": "realization: standard_deviation"}
 OVER_MEMBERS = ("bands/", "outcomes/")
 # Variables that are a width, not a place on a scale.
 DEVIATIONS = ("sd", "sd_low", "sd_high")
+# Groups of nothing but differences.
+DIFFERENCES = "differences/"
 DERIVED = ("long_name", "units", "unit", "units_metadata", "ancillary_variables", "cell_methods", "_FillValue")
 
 
@@ -48,15 +51,18 @@ class StoredGroup:
     attributes: Mapping[str, Any]
 
 
-def encode(findings: Iterable[Finding]) -> tuple[StoredGroup, ...]:
-    """The groups of a file, parents before children, else in the order given; a dimension stands in the outermost group that has it."""
+def encode(findings: Iterable[Finding], own: Units = NO_OWN) -> tuple[StoredGroup, ...]:
+    """The groups of a file, parents before children, else in the order given; a dimension stands in the outermost group that has it.
+
+    own: counting units of the study.
+    """
     ordered = sorted(findings, key=lambda finding: _depth(finding.group))
     known: dict[str, dict[str, int]] = {}
     groups = []
     for finding in ordered:
         sizes = _own_sizes(finding, known)
         known[finding.group] = sizes
-        variables = {name: _encoded(finding, name, variable) for name, variable in finding.variables.items()}
+        variables = {name: _encoded(finding, name, own) for name in finding.variables}
         attributes = {name: _attribute(value) for name, value in finding.attributes.items() if value is not None}
         groups.append(StoredGroup(finding.group, sizes, variables, attributes))
     return tuple(groups)
@@ -94,18 +100,26 @@ def _own_sizes(finding: Finding, known: Mapping[str, Mapping[str, int]]) -> dict
     return own
 
 
-def _encoded(finding: Finding, name: str, variable: Variable) -> StoredVariable:
+def _encoded(finding: Finding, name: str, own: Units) -> StoredVariable:
+    variable = finding.variables[name]
     data = variable.data
-    attributes: dict[str, Any] = {"long_name": _text(variable.long_name), **units_attributes(_text(variable.unit), name in DEVIATIONS)}
+    deviation = name in DEVIATIONS or (finding.group.startswith(DIFFERENCES) and name not in variable.dims)
+    attributes: dict[str, Any] = {"long_name": _text(variable.long_name), **units_attributes(_text(variable.unit), deviation, own)}
     beside = [name + ending for ending in BESIDE if name + ending in finding.variables]
     if beside:
         attributes["ancillary_variables"] = " ".join(beside)
-    if name in METHODS and finding.group.startswith(OVER_MEMBERS):
+    if name in METHODS and _over_members(finding.group):
         attributes["cell_methods"] = METHODS[name]
     if data.dtype.kind == "f" and name not in variable.dims:
         attributes["_FillValue"] = np.nan
     attributes |= {key: _attribute(value) for key, value in variable.attributes.items() if value is not None}
     return StoredVariable(variable.dims, _stored(data), attributes)
+
+
+def _over_members(group: str) -> bool:
+    """Whether a mean in this group is one over members: that of a band or an outcome, of the study or of a scenario."""
+    room, _, inner = group.partition("/")
+    return (inner.partition("/")[2] if room == "scenarios" else group).startswith(OVER_MEMBERS)
 
 
 def _decoded(variable: StoredVariable) -> Variable:

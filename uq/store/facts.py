@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 import platform
 from collections.abc import Mapping
 from dataclasses import dataclass, field
@@ -10,6 +11,34 @@ from importlib.metadata import PackageNotFoundError, version
 
 # Everything that touches a number, by distribution name; uq and python come on top.
 NUMERIC = ("numpy", "scipy", "numba", "llvmlite")
+
+
+# What the methods of the solver are called in words.
+METHODS = {"explicit54": "explicit Runge-Kutta pair 5(4)", "explicit853": "explicit Runge-Kutta pair 8(5,3)"}
+
+
+@dataclass(frozen=True)
+class Counts:
+    """Of a scenario: A and B members and how many of them failed, and the same of all its solves, those for the ranking counted."""
+
+    members: int
+    members_failed: int
+    solves: int
+    solves_failed: int
+
+
+@dataclass(frozen=True)
+class PrecisionReached:
+    """Whether the precision asked was reached, or what ended the run before: "members", "solves" or "minutes" that it may spend.
+
+    solves_needed: all solves after which it is expected, nan where nobody can say; unknown: the variables ("ranking/L total_by") of
+    which nothing can be foretold.
+    """
+
+    reached: bool
+    stopped: str = ""
+    solves_needed: float = math.nan
+    unknown: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True)
@@ -21,7 +50,8 @@ class RunFacts:
     finished with its time zone. scales: absolute tolerance of a state = accuracy x scale, by state; fell_back: the states whose scale
     was 0.
     seconds_per_solve: of one core, as measured. versions: see `versions`. processor: its features, as text. command: what was called,
-    for the history.
+    for the history; earlier: the history of the result that was extended. scenarios: counts by name of scenario; all others here are of the
+    study itself. precision: where one was asked.
     """
 
     seed: int
@@ -42,6 +72,9 @@ class RunFacts:
     versions: Mapping[str, str] = field(default_factory=dict)
     processor: str = ""
     command: str = ""
+    earlier: str = ""
+    scenarios: Mapping[str, Counts] = field(default_factory=dict)
+    precision: PrecisionReached | None = None
 
 
 def versions(uq_version: str) -> dict[str, str]:
@@ -53,3 +86,8 @@ def versions(uq_version: str) -> dict[str, str]:
         except PackageNotFoundError:
             found[name] = "not installed"
     return found
+
+
+def method_words(method: str) -> str:
+    """The solver's method in words."""
+    return METHODS.get(method, method)

@@ -3,8 +3,7 @@
 from __future__ import annotations
 
 import os
-import secrets
-from collections.abc import Callable, Iterable, Mapping
+from collections.abc import Iterable, Mapping
 from functools import partial
 from pathlib import Path, PurePosixPath
 from typing import TYPE_CHECKING, Any
@@ -16,6 +15,9 @@ from uq.store.facts import RunFacts
 from uq.store.fingerprint import content_fingerprint
 from uq.store.layout import contents
 from uq.store.netcdf import read_attributes, read_groups, write_groups
+from uq.store.progress import PROGRESS
+from uq.store.tallies import TALLIES
+from uq.store.whole import put
 
 if TYPE_CHECKING:
     from uq.study.study import Study
@@ -24,6 +26,8 @@ RESULT = "result.nc"
 STUDY = "study.toml"
 # Data files whose name leads out of the study's folder are kept here.
 ELSEWHERE = "files"
+# Names in a run folder that are no data file's.
+OURS = (RESULT, STUDY, TALLIES, "report.html")
 SHORT = 6
 
 
@@ -57,11 +61,11 @@ def write_result(folder: Path, study: Study, findings: Iterable[Finding], facts:
     Raises StorageError; what had been there is then still whole.
     """
     check_folder(folder, study)
-    groups = with_fingerprint(encode(contents(study, findings, facts)))
+    groups = with_fingerprint(encode(contents(study, findings, facts), study.own_units))
     try:
         for name, content in _texts_of(study).items():
-            _put(folder / name, partial(_write_bytes, content))
-        _put(folder / RESULT, partial(_write_checked, groups))
+            put(folder / name, partial(_write_bytes, content))
+        put(folder / RESULT, partial(_write_checked, groups))
     except (OSError, RuntimeError) as error:  # the NetCDF library says RuntimeError when the disk is full
         raise StorageError(f"cannot write to {folder}: {error}") from error
     return folder / RESULT
@@ -99,8 +103,8 @@ def _texts_of(study: Study) -> dict[str, bytes]:
 def _inside(name: str, taken: Iterable[str]) -> str:
     """The name itself where it stays in the folder and is free, else a free one below ELSEWHERE."""
     path = PurePosixPath(name.replace("\\", "/"))
-    stays = not path.is_absolute() and ".." not in path.parts and ":" not in path.parts[0]
-    if stays and str(path) not in (*taken, RESULT):
+    stays = not path.is_absolute() and ".." not in path.parts and ":" not in path.parts[0] and path.parts[0] != PROGRESS
+    if stays and str(path) not in (*taken, *OURS):
         return str(path)
     names = (f"{ELSEWHERE}/{number or ''}{path.name}" for number in range(len(list(taken)) + 1))
     return next(each for each in names if each not in taken)
@@ -111,30 +115,6 @@ def _content(path: Path) -> bytes | None:
         return path.read_bytes()
     except OSError:
         return None
-
-
-def _put(target: Path, write: Callable[[Path], object]) -> None:
-    """Lets `write` make a file under another name, has it on the disk, and gives it its name."""
-    target.parent.mkdir(parents=True, exist_ok=True)
-    draft = target.with_name(f".{target.name}.{secrets.token_hex(4)}.part")
-    try:
-        write(draft)
-        _flush(draft)
-        draft.replace(target)
-        _flush(target.parent)
-    finally:
-        draft.unlink(missing_ok=True)
-
-
-def _flush(path: Path) -> None:
-    """Has a file, or the names in a folder, on the disk before anything goes on."""
-    if path.is_dir() and os.name == "nt":  # has no such thing for folders
-        return
-    handle = os.open(path, os.O_RDONLY if path.is_dir() else os.O_RDWR)
-    try:
-        os.fsync(handle)
-    finally:
-        os.close(handle)
 
 
 def _write_bytes(content: bytes, draft: Path) -> None:

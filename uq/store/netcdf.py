@@ -23,6 +23,7 @@ def write_groups(path: Path, groups: Iterable[StoredGroup]) -> None:
     import netCDF4
 
     with netCDF4.Dataset(path, "w", format="NETCDF4") as file:
+        file.set_fill_off()
         for group in groups:
             place = file.createGroup(group.path) if group.path else file
             for dim, size in group.sizes.items():

@@ -1,0 +1,88 @@
+"""Who works in a run folder: an operating-system lock on a file in it, released by the kernel at death, whatever the clocks do."""
+
+from __future__ import annotations
+
+import contextlib
+import os
+import re
+from collections.abc import Iterator
+from contextlib import contextmanager
+from pathlib import Path
+
+from uq.errors import StorageError
+from uq.store.progress import PROGRESS
+from uq.store.whole import DRAFT
+
+LOCK = "lock"
+# The name of a draft, see `whole.put`.
+OURS = re.compile(rf"\..+\.[0-9a-f]{{8}}{re.escape(DRAFT)}")
+# Attempts to lock a file which another process takes away just then.
+_ATTEMPTS = 100
+
+
+@contextmanager
+def owned(folder: Path) -> Iterator[None]:
+    """The run folder is this process's own while this lasts. Raises StorageError where another process works in it.
+
+    What a killed process left half written is taken away, and so are folders that are still empty afterwards.
+    """
+    place = folder / PROGRESS
+    made = [each for each in (folder, *folder.parents) if not each.exists()]
+    try:
+        handle = _locked(place)
+    except OSError as error:
+        raise StorageError(f"{folder} cannot be locked: {error}") from error
+    if handle is None:
+        raise StorageError(f"another process is working in {folder} at this moment; wait for it, or choose another folder with -o")
+    _sweep(folder)
+    try:
+        yield
+    finally:
+        # The file goes first, then the lock on it: nobody can get a lock on a file that stays.
+        with contextlib.suppress(OSError):
+            (place / LOCK).unlink()
+        os.close(handle)
+        for each in (place, *made):
+            with contextlib.suppress(OSError):
+                each.rmdir()
+
+
+def _sweep(folder: Path) -> None:
+    """Takes away drafts that a killed process left: nobody else writes here now."""
+    for draft in [each for each in folder.rglob(f".*{DRAFT}") if OURS.fullmatch(each.name)]:
+        with contextlib.suppress(OSError):
+            draft.unlink()
+
+
+def _locked(place: Path) -> int | None:
+    """A handle of the lock file, locked; None where another process has it."""
+    for _ in range(_ATTEMPTS):
+        place.mkdir(parents=True, exist_ok=True)
+        try:
+            handle = os.open(place / LOCK, os.O_RDWR | os.O_CREAT, 0o644)
+        except FileNotFoundError:  # the folder was taken away just now
+            continue
+        if not _lock(handle):
+            os.close(handle)
+            return None
+        with contextlib.suppress(OSError):
+            if os.path.samestat(os.fstat(handle), os.stat(place / LOCK)):
+                return handle
+        os.close(handle)
+    return None
+
+
+def _lock(handle: int) -> bool:
+    """Whether this process could get the lock, without waiting."""
+    try:
+        if os.name == "nt":
+            import msvcrt
+
+            msvcrt.locking(handle, msvcrt.LK_NBLCK, 1)  # type: ignore[attr-defined]
+        else:
+            import fcntl
+
+            fcntl.flock(handle, fcntl.LOCK_EX | fcntl.LOCK_NB)
+    except OSError:
+        return False
+    return True
