@@ -33,6 +33,9 @@ rate = "-x"
 accuracy = 1e-10
 """
 
+# Some seconds long, in blocks of some milliseconds.
+GOES_ON = LONG.replace("stop = 20000", "stop = 2000") + "seed = 2\n"
+
 
 def uq(folder: Path, *arguments: str, **environment: str) -> subprocess.CompletedProcess[str]:
     command = [sys.executable, "-m", "uq", *arguments]
@@ -49,7 +52,7 @@ def test_results_go_out_messages_go_to_the_other_side_and_show_repeats_it(tmp_pa
     assert done.returncode == 0, done.stderr
     (folder,) = (tmp_path / "results").iterdir()
     assert folder.name.startswith("a-")
-    assert {path.name for path in folder.iterdir()} == {"study.toml", "result.nc"}
+    assert {path.name for path in folder.iterdir()} == {"study.toml", "result.nc", "tallies.nc"}
     assert (folder / "study.toml").read_text() == SMALL
     assert "Decay" in done.stdout
     assert "\x1b" not in done.stdout + done.stderr
@@ -116,7 +119,7 @@ def test_another_seed_by_the_command_is_written_down(tmp_path: Path) -> None:
 
 @pytest.mark.skipif(os.name == "nt", reason="signals of this kind are POSIX")
 @pytest.mark.parametrize("wait", [0.0, 1.5])
-def test_ctrl_c_stops_within_a_second_and_leaves_nothing(tmp_path: Path, wait: float) -> None:
+def test_ctrl_c_stops_within_a_second_and_leaves_no_result(tmp_path: Path, wait: float) -> None:
     command = [sys.executable, "-m", "uq", "run", "a.toml"]
     with subprocess.Popen(command, cwd=write(tmp_path, LONG), stdout=subprocess.PIPE, stderr=subprocess.PIPE, text=True) as running:
         assert running.stderr is not None
@@ -133,6 +136,69 @@ def test_ctrl_c_stops_within_a_second_and_leaves_nothing(tmp_path: Path, wait: f
     assert "interrupted" in told
     assert "no result was written" in told
     assert "Traceback" not in told
-    assert not (tmp_path / "results").exists()
+    assert {path.parent.name for path in (tmp_path / "results").rglob("*.nc")} <= {"progress"}
     # A second is the promise on an idle machine; tests share theirs.
     assert taken < 3
+
+
+@pytest.mark.skipif(os.name == "nt", reason="signals of this kind are POSIX")
+def test_ctrl_c_keeps_what_is_done_and_the_same_command_goes_on(tmp_path: Path) -> None:
+    folder = write(tmp_path, GOES_ON)
+    command = [sys.executable, "-m", "uq", "run", "a.toml", "-o", "out"]
+    with subprocess.Popen(command, cwd=folder, stdout=subprocess.PIPE, stderr=subprocess.PIPE, text=True) as running:
+        assert running.stderr is not None
+        for line in running.stderr:
+            if "solving" in line:
+                break
+        time.sleep(1.5)
+        running.send_signal(signal.SIGINT)
+        _, told = running.communicate(timeout=30)
+    assert running.returncode == 6, told
+    assert "the same command goes on from there" in told
+    assert "Traceback" not in told
+    assert list((folder / "out" / "progress").glob("*.nc"))
+    text = (folder / "a.toml").read_text()
+    (folder / "a.toml").write_text(text.replace("seed = 2", "seed = 3"))
+    other = uq(folder, "run", "a.toml", "-o", "out")
+    assert other.returncode == 7
+    assert "another study" in other.stderr
+
+
+def test_a_precision_that_is_not_reached_ends_with_5_and_a_result(tmp_path: Path) -> None:
+    asked = SMALL + "[plan.precision]\nprobabilities = 0.0001\n"
+    done = uq(write(tmp_path, asked), "run", "a.toml", "-o", "out")
+    assert done.returncode == 5, done.stderr
+    assert "not reached within the members it may spend" in done.stderr
+    assert "NOT SETTLED" in done.stdout
+    assert (tmp_path / "out" / "result.nc").exists()
+    done = uq(tmp_path, "extend", "out", "--precision", "probabilities=0.02", "--members", "8192", "-o", "more")
+    assert done.returncode == 0, done.stderr
+    assert "settled" in done.stdout
+    assert "uq extend out" in str(open_result(tmp_path / "more").attributes["history"])
+
+
+def test_extend_and_compare(tmp_path: Path) -> None:
+    assert uq(write(tmp_path, SMALL), "run", "a.toml", "-o", "out").returncode == 0
+    done = uq(tmp_path, "extend", "out/result.nc", "--members", "2048", "-o", "more")
+    assert done.returncode == 0, done.stderr
+    assert "2048 solves are done already" in done.stderr
+    compared = uq(tmp_path, "compare", "out", "more")
+    assert (compared.returncode, compared.stderr) == (0, "")
+    assert "more" in compared.stdout
+    machine = json.loads(uq(tmp_path, "compare", "out", "more", "--json").stdout)
+    assert machine["schema"] == 1
+    wrong = uq(tmp_path, "extend", "out", "--members", "512")
+    assert wrong.returncode == 2
+    assert "more than the 1024 that are solved already" in wrong.stderr
+    assert uq(tmp_path, "compare", "out").returncode == 2
+    assert uq(tmp_path, "extend", "out", "--precision", "probabilities=0.01").returncode in (0, 3, 5)
+
+
+def test_the_pilot_of_check_solves_a_little_and_foretells(tmp_path: Path) -> None:
+    checked = uq(write(tmp_path, SMALL + "[plan.precision]\nprobabilities = 0.001\n"), "check", "--pilot", "a.toml")
+    assert checked.returncode == 0, checked.stderr
+    assert "What the pilot says" in checked.stdout
+    assert "The precision asked is expected after about" in checked.stdout
+    assert not (tmp_path / "results").exists()
+    machine = json.loads(uq(tmp_path, "check", "--pilot", "a.toml", "--json").stdout)
+    assert machine["run"]["pilot"]["needed"]["solves"] > machine["run"]["pilot"]["solves"]

@@ -80,6 +80,11 @@ def test_where_no_log_can_be_written_the_traceback_is_shown(
         (["check", "no-such-file.toml"], EXIT_STUDY),
         (["run", "no-such-file.toml"], EXIT_STUDY),
         (["show", "no-such-folder"], EXIT_STORAGE),
+        (["extend", "no-such-folder", "--members", "1024"], EXIT_STORAGE),
+        (["extend", "no-such-folder", "--precision", "width=0.1"], EXIT_USAGE),
+        (["extend", "no-such-folder", "--members", "0"], EXIT_USAGE),
+        (["compare", "no-such-folder"], EXIT_USAGE),
+        (["compare", "no-such-folder", "neither"], EXIT_STORAGE),
     ],
 )
 def test_use_and_misuse(arguments: list[str], code: int) -> None:

@@ -31,10 +31,12 @@ ROOMS = (
     "pipeline",
     "cli",
 )
-# Each heavy library has one door (scipy.stats two: distributions, and the direction numbers of Sobol' sequences).
+# Each heavy library has one door (scipy.stats two: distributions, and the direction numbers of Sobol' sequences; numba two, because its
+# cache wants what is compiled together in one file: the stepping kernel, and the inner loops of the statistics, which without them cost as
+# much as the solving).
 DOORS = {
     "pint": {"units"},
-    "numba": {"solve"},
+    "numba": {"solve", "analysis"},
     "llvmlite": {"solve"},
     "scipy.stats": {"inputs", "design"},
     "xarray": {"store"},
@@ -50,7 +52,9 @@ HEAVY = ("numba", "llvmlite", "scipy.stats", "dask", "distributed", "xarray", "n
 # These packages are the whole and its front door, not rooms.
 OUTSIDE = {"__init__", "__main__"}
 
-LONG_FILES: dict[str, str] = {}
+LONG_FILES: dict[str, str] = {
+    "uq/analysis/selection.py": "numba's cache does not see edits of other files: a kernel and all it calls stand in one",
+}
 LONG_FUNCTIONS: dict[str, str] = {}
 
 

@@ -10,7 +10,6 @@ import numpy as np
 import pytest
 
 import uq
-from uq.errors import ValueMistake
 from uq.store.result import Result
 from uq.study.study import Study
 
@@ -163,8 +162,10 @@ def test_under_refuse_the_statements_are_withheld_and_the_file_is_written(tmp_pa
     assert int(result.failures["count"].sum()) > 0
 
 
-def test_more_than_keep_is_refused_with_what_to_do(tmp_path: Path) -> None:
-    study = study_of(DECAY + 'keep = "0.5 MB"\n', tmp_path)
-    with pytest.raises(ValueMistake, match="raise `keep` or lower `members`"):
-        uq.run(study, tmp_path / "result")
-    assert not (tmp_path / "result").exists()
+def test_more_than_keep_is_counted_into_histograms_with_the_error_stated(tmp_path: Path, decay: Result) -> None:
+    result = uq.run(study_of(DECAY + 'keep = "0.5 MB"\n', tmp_path), tmp_path / "result")
+    exact, binned = decay.bands["x"].quantiles, result.bands["x"].quantiles
+    error = float(binned.attrs["bin_error"])
+    assert 0 < error < 1e-3 * float(exact.sel(quantile=0.95).max())
+    np.testing.assert_allclose(binned.values, exact.values, atol=error)
+    np.testing.assert_array_equal(result.bands["x"].mean.values, decay.bands["x"].mean.values)

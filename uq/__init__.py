@@ -10,15 +10,23 @@ from importlib import import_module
 from typing import TYPE_CHECKING, Any
 
 if TYPE_CHECKING:
+    from uq.pipeline import compare as compare
+    from uq.pipeline import extend as extend
     from uq.pipeline import run as run
     from uq.store.open import open_result as open_result
     from uq.study.read import read_study as read_study
 
 __version__ = "0.1.0"
 
-_DOORS = {"read_study": "uq.study.read", "run": "uq.pipeline", "open_result": "uq.store.open"}
+_DOORS = {
+    "read_study": "uq.study.read",
+    "run": "uq.pipeline",
+    "extend": "uq.pipeline",
+    "compare": "uq.pipeline",
+    "open_result": "uq.store.open",
+}
 
-__all__ = ["__version__", "open_result", "read_study", "run"]
+__all__ = ["__version__", "compare", "extend", "open_result", "read_study", "run"]
 
 
 def __getattr__(name: str) -> Any:

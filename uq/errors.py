@@ -36,6 +36,12 @@ class ValueMistake(UqError):
         self.found, self.expected, self.remedy, self.key = found, expected, remedy, key
 
 
+class UseMistake(ValueMistake):
+    """An argument that cannot stand: as typed, or as handed to a function."""
+
+    exit_code = EXIT_USAGE
+
+
 class ExpressionError(ValueMistake):
     """A mistake within the text of an expression, with the offset and length of the place in characters."""
 

@@ -1,67 +1,123 @@
 """The whole flow on one page; it has no logic of its own.
 
-In: a study. Out: its run folder, read back as a result. Must not know: how any step works.
+In: a study, or results. Out: a run folder, read back as a result; results compared. Must not know: how any step works.
 """
 
 from __future__ import annotations
 
 import os
+from collections.abc import Mapping, Sequence
 from pathlib import Path
 from typing import TYPE_CHECKING
 
 if TYPE_CHECKING:
+    from uq.report.compare import Comparison
     from uq.running.observer import Observer
+    from uq.running.start import Start
     from uq.store.result import Result
     from uq.study.study import Study
 
-FIRST_RUN = "preparing the solver, once on this machine (some seconds)"
-
 
 def run(
-    study: Study,
+    study: Study | str | os.PathLike[str],
     folder: str | os.PathLike[str] | None = None,
     *,
     threads: int = 0,
     observer: Observer | None = None,
     block_rows: int = 0,
+    start: Start | None = None,
 ) -> Result:
     """Runs a study, writes its run folder and returns the result as `open_result` does.
 
-    folder: where the result goes, by default results/NAME-FINGERPRINT. threads: how many to solve with, 0 for all cores. observer: is told
-    how far the run is and can stop it. block_rows: rows of a block, a power of two, 0 from the measured cost. The result has the same bits
-    whatever these are. Raises StorageError where the folder cannot be written, ValueMistake where the values do not fit into `keep` of the
-    plan, Interrupted where the run was stopped; no result is written then.
+    study: what `read_study` gave, or the path of a study file. folder: where the result goes, by default results/NAME-FINGERPRINT; where an
+    earlier attempt was stopped there, this one goes on. threads: how many to solve with, 0 for all cores. observer: is told how far the run
+    is and can stop it. block_rows: rows of a block, a power of two, 0 from the measured cost. start: what else it starts with. The result
+    has the same bits whatever these are.
+
+    Raises StorageError where the folder cannot be written or another process works in it, Interrupted where the run was stopped: no result
+    is written then, but what was done is kept. With a path it raises as `read_study` does.
+    """
+    from uq.running.answers import all_findings
+    from uq.running.branch import forecasts_of, tell_first_run
+    from uq.running.course import to_the_end
+    from uq.running.facts import facts_of
+    from uq.running.resume import gone_on_with, standing_saved
+    from uq.running.rounds import Spread
+    from uq.running.start import Start, crew_for
+    from uq.store.folder import check_folder, default_folder, write_result
+    from uq.store.keeper import FolderKeeper
+    from uq.store.lock import owned
+    from uq.store.open import open_result
+    from uq.store.progress import check_progress, clear_progress
+    from uq.store.tallies import write_tallies
+    from uq.study.read import read_study
+
+    if isinstance(study, (str, os.PathLike)):
+        study = read_study(study)
+    start = start or Start()
+    crew = crew_for(study, Spread(threads, block_rows), observer, start)
+    target = Path(folder) if folder else default_folder(study)
+    check_folder(target, study)
+    with owned(target):
+        check_progress(target, study.fingerprint)
+        tell_first_run(crew.observer)
+        running, standing, begun = gone_on_with(study, forecasts_of(study), crew, FolderKeeper(target, study.fingerprint), start)
+        standing = to_the_end(running, standing, begun)
+        crew.observer.stage("working out the answers")
+        findings = all_findings(running, standing)
+        write_tallies(target, standing_saved(standing, running.branches), study.fingerprint)
+        write_result(target, study, findings, facts_of(study, running, standing, start))
+        clear_progress(target)
+    return open_result(target)
+
+
+def extend(
+    path: str | os.PathLike[str],
+    members: int | None = None,
+    precision: Mapping[str, float] | None = None,
+    folder: str | os.PathLike[str] | None = None,
+    *,
+    threads: int = 0,
+    observer: Observer | None = None,
+    command: str = "",
+) -> Result:
+    """Goes on with a finished run until it has so many members, or the precision {"probabilities": 0.001, ...}; every solve is used again.
+
+    path: a run folder or its result.nc, which stays as it is. folder: where the new result goes, by default the one that a fresh run of the
+    changed study would have, beside the old one; the result has the same bits as that. Raises as `run` does, StorageError where the old run
+    left no tallies, UseMistake where nothing more is asked, StudyError where the plan does not allow it.
+    """
+    from uq.running.again import extended, folder_beside, study_of
+    from uq.running.start import Start
+    from uq.store.open import open_result
+    from uq.store.tallies import read_tallies
+
+    old = open_result(path)
+    facts = old.attributes
+    study = extended(study_of(old), facts["members"], members, precision or {})
+    before = read_tallies(old.folder, str(facts["study_fingerprint"]))
+    start = Start(before, command, str(facts["history"]))
+    return run(study, folder or folder_beside(old, study), threads=threads, observer=observer, start=start)
+
+
+def compare(paths: Sequence[str | os.PathLike[str]], *, threads: int = 0) -> tuple[Result, list[Comparison]]:
+    """The first of some results, and each of the others less it, with intervals from paired replicates where they share draws.
+
+    paths: run folders or their result.nc, two or more. Raises StorageError.
     """
     from time import perf_counter
 
-    from uq.model.build import build
-    from uq.running.block import Forecast, tallies_of
-    from uq.running.facts import facts_of
+    from uq.report.compare import Comparison
+    from uq.running.again import study_of
+    from uq.running.answers import compared, side_of
     from uq.running.meter import Meter
     from uq.running.observer import Silent
-    from uq.running.pilot import piloted
-    from uq.running.rounds import Spread, answered, fold
-    from uq.running.setup import ask_of, design_of, must_fit, settings_of
-    from uq.solve.compile import compile_code
-    from uq.solve.solve import prepare
-    from uq.store.folder import check_folder, default_folder, write_result
+    from uq.running.rounds import Crew, Spread
     from uq.store.open import open_result
+    from uq.store.tallies import read_tallies
 
-    watcher, spread = observer or Silent(), Spread(threads, block_rows)
-    target = Path(folder) if folder else default_folder(study)
-    check_folder(target, study)
-    must_fit(study)
-    if prepare():
-        watcher.stage(FIRST_RUN)
-
-    compiled = compile_code(build(study.equations))
-    design = design_of(study)
-    forecast = Forecast(compiled, study.inputs, design, settings_of(study), study.time.start, ask_of(study))
-    meter = Meter(design.solves, watcher, perf_counter)
-    pilot = piloted(forecast, meter, watcher)
-    watcher.stage(f"solving {design.members} members, {design.solves} solves")
-    tallies = fold(design, lambda block: tallies_of(pilot.forecast, block, meter, watcher), forecast.shape, meter, spread, watcher)
-    watcher.stage("working out the answers")
-    findings = answered(tallies, pilot.forecast.ask, pilot.nominal, spread, watcher)
-    write_result(target, study, findings, facts_of(study, pilot, meter, spread))
-    return open_result(target)
+    crew = Crew(Spread(threads), Meter(0, Silent(), perf_counter), Silent())
+    results = [open_result(path) for path in paths]
+    first, *others = (side_of(study_of(each), read_tallies(each.folder, str(each.attributes["study_fingerprint"]))) for each in results)
+    found = [compared(first, other, crew) for other in others]
+    return results[0], [Comparison(each, findings, draws) for each, (draws, findings) in zip(results[1:], found, strict=True)]

@@ -12,19 +12,20 @@ from functools import reduce
 
 from uq.analysis.sample import Sample
 from uq.analysis.tallies import Tallies
-from uq.design.blocks import Block
-from uq.model.build import build
-from uq.running.block import Forecast, tallies_of
-from uq.running.meter import Meter
+from uq.running.answers import all_findings
+from uq.running.branch import Branch, forecasts_of
+from uq.running.course import Running, Standing, to_the_end
+from uq.running.keeping import Forgetful
 from uq.running.observer import Silent
-from uq.running.pilot import Pilot, piloted
-from uq.running.rounds import Spread, answered, fold
-from uq.running.setup import ask_of, design_of, settings_of
-from uq.solve.compile import compile_code
+from uq.running.pace import block_rows
+from uq.running.resume import gone_on_with
+from uq.running.rounds import Crew, Spread
+from uq.running.setup import meter_of
+from uq.running.start import Start
 from uq.study.read import parse_study
 from uq.study.study import Study
 
-STUDY = """
+PREY = """
 schema = 1
 title = "Predator and prey"
 [time]
@@ -53,15 +54,11 @@ REPEATS = 3
 QUIET = Silent()
 
 
-def prepared(study: Study) -> Pilot:
+def prepared(study: Study, threads: int) -> tuple[Running, Standing]:
     """Everything up to the first block."""
-    ask, settings, design = ask_of(study), settings_of(study), design_of(study)
-    forecast = Forecast(compile_code(build(study.equations)), study.inputs, design, settings, study.time.start, ask)
-    return piloted(forecast, meter(pilot_solves=0), QUIET)
-
-
-def meter(pilot_solves: int) -> Meter:
-    return Meter(pilot_solves, QUIET, time.perf_counter)
+    crew = Crew(Spread(threads), meter_of(study, QUIET, time.perf_counter), QUIET)
+    running, standing, _ = gone_on_with(study, forecasts_of(study), crew, Forgetful(), Start())
+    return running, standing
 
 
 def seconds(call: Callable[[], object]) -> float:
@@ -70,14 +67,18 @@ def seconds(call: Callable[[], object]) -> float:
     return time.perf_counter() - begin
 
 
-def parts(pilot: Pilot) -> dict[str, float]:
-    """Seconds of one core for every part of a run (of the processor, so that other work on the machine counts less)."""
-    forecast, design = pilot.forecast, pilot.forecast.design
+def parts(branch: Branch) -> dict[str, float]:
+    """Seconds of one core for every part of a run (of the processor, so that other work on the machine counts less).
+
+    Blocks are as long as those of a run on two threads in its last round.
+    """
+    forecast, design = branch.forecast, branch.forecast.design
+    rows = block_rows(forecast.shape, 2.5e-6, design.rows // 2, design.replicates, 2)
     spent = dict.fromkeys(("points", "solving", "tallies", "merging and findings"), 0.0)
     made: list[Tallies] = []
-    for block in design.blocks(0, design.rows, 256):
+    for block in design.blocks(0, design.rows, rows):
         begin = time.process_time()
-        x = design.spread(block, forecast.inputs.values(design.base(block)))
+        x = design.draw(block, forecast.inputs)
         placed = time.process_time()
         batch = forecast.solved(x, QUIET)
         solved = time.process_time()
@@ -87,38 +88,33 @@ def parts(pilot: Pilot) -> dict[str, float]:
         spent["tallies"] += time.process_time() - solved
     begin = time.process_time()
     whole = reduce(Tallies.merge, made)
-    answered(whole, forecast.ask, pilot.nominal, Spread(1), QUIET)
+    whole.findings(forecast.ask, branch.pilot.nominal.values[0, : len(forecast.ask.watched)])
     spent["merging and findings"] = time.process_time() - begin
     return spent
 
 
-def run_on(pilot: Pilot, threads: int) -> float:
+def run_on(study: Study, threads: int) -> float:
     """Seconds from the first block to the findings."""
-    spread = Spread(threads)
-    count = meter(pilot.forecast.design.solves)
+    running, standing = prepared(study, threads)
+    return seconds(lambda: all_findings(running, to_the_end(running, standing, {})))
 
-    def work(block: Block) -> Tallies:
-        return tallies_of(pilot.forecast, block, count, QUIET)
 
-    def whole() -> None:
-        tallies = fold(pilot.forecast.design, work, pilot.forecast.shape, count, spread, QUIET)
-        answered(tallies, pilot.forecast.ask, pilot.nominal, spread, QUIET)
-
-    return seconds(whole)
+ASKED = ('["bands"]', '["bands", "ranking"]', '["bands", "limits", "outcomes"]', '["bands", "limits", "outcomes", "ranking"]')
 
 
 def main() -> None:
-    for ask in ('["bands", "limits", "outcomes"]', '["bands", "limits", "outcomes", "ranking"]'):
-        pilot = prepared(parse_study(STUDY.replace("[plan]", f"[plan]\nask = {ask}"), name="prey"))
-        solves = pilot.forecast.design.solves
-        rounds = [parts(pilot) for _ in range(REPEATS)]
+    for ask in ASKED:
+        study = parse_study(PREY.replace("[plan]", f"[plan]\nask = {ask}"), name="prey")
+        branch = prepared(study, 1)[0].branches[0]
+        solves = branch.forecast.design.solves
+        rounds = [parts(branch) for _ in range(REPEATS)]
         spent = {name: statistics.median(each[name] for each in rounds) for name in rounds[0]}
         print(f"{ask}: {solves} solves, microseconds of one core per solve")
         for name, taken in spent.items():
             print(f"  {name:22} {1e6 * taken / solves:6.2f}")
         ratios = [(each["tallies"] + each["merging and findings"]) / each["solving"] for each in rounds]
         print(f"  statistics / solving   {statistics.median(ratios):6.2f}  (target 0.5)")
-        pairs = [(run_on(pilot, 1), run_on(pilot, 2)) for _ in range(REPEATS)]
+        pairs = [(run_on(study, 1), run_on(study, 2)) for _ in range(REPEATS)]
         print(f"  one thread / two       {statistics.median(one / two for one, two in pairs):6.2f}  (target 1.8)")
 
 

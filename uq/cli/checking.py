@@ -1,18 +1,21 @@
-"""`uq check`: everything that can be said of a study without solving it."""
+"""`uq check`: everything that can be said of a study without solving it, and with --pilot what a few members tell."""
 
 from __future__ import annotations
 
 import os
 from dataclasses import asdict
+from math import isfinite
 from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
 from uq.cli import speeds
+from uq.cli.progress import stopping, watching
 from uq.cli.say import out
 from uq.cli.settings import state_folder
 
 if TYPE_CHECKING:
     from uq.report.check import CheckFacts
+    from uq.running.foretell import Foretold
     from uq.study.study import Study
 
 SCHEMA = 1
@@ -21,39 +24,55 @@ ECHOED = (0.05, 0.5, 0.95)
 AROUND_SECONDS = 2.0
 
 
-def check_study(path: Path, json: bool) -> None:
-    """Prints what was understood, what every input looks like and what a run would take; raises where a run would be refused."""
+def check_study(path: Path, pilot: bool, threads: int, json: bool) -> None:
+    """Prints what was understood, what every input looks like and what a run would take; `pilot`: measured on a few members."""
     from uq.report.check import check_text
-    from uq.running.setup import must_fit
     from uq.study.read import read_study
 
     study = read_study(path)
-    facts = facts_of(study, speeds.load(state_folder(os.environ)))
+    folder = state_folder(os.environ)
+    known = speeds.load(folder)
+    measured = piloted(study, threads) if pilot else None
+    if measured is not None:
+        known = speeds.with_measured(known, speeds.model_of(study), measured.seconds / measured.solves)
+    facts = facts_of(study, known, measured)
     if json:
         from json import dumps
 
         out(dumps(machine(study, facts), indent=1, allow_nan=False))
     else:
         out(check_text(study, facts))
-    must_fit(study)
 
 
-def facts_of(study: Study, known: dict[str, float]) -> CheckFacts:
-    """What a run would take, by the speeds of earlier ones."""
+def piloted(study: Study, threads: int) -> Foretold:
+    """What the pilot of the study says; how far it is goes to standard error."""
+    with watching() as observer, stopping(observer):
+        from time import perf_counter
+
+        from uq.running.foretell import foretold
+        from uq.running.rounds import Spread
+
+        return foretold(study, Spread(threads), observer, perf_counter)
+
+
+def facts_of(study: Study, known: dict[str, float], measured: Foretold | None = None) -> CheckFacts:
+    """What a run would take, by the speeds of earlier ones or of the pilot."""
     from uq.report.check import CheckFacts
-    from uq.running.setup import design_of, memory_of
+    from uq.running.setup import design_of, memory_of, scenario_solves
     from uq.running.threads import all_cores
 
     design, threads = design_of(study), all_cores()
+    solves = design.solves + sum(scenario_solves(study))
     cost = speeds.expected(known, speeds.model_of(study))
     return CheckFacts(
         members=design.members,
         replicates=design.replicates,
-        solves=design.solves,
+        solves=solves,
         threads=threads,
         memory=memory_of(study, threads),
-        seconds=AROUND_SECONDS + cost[0] * design.solves / threads if cost else None,
+        seconds=AROUND_SECONDS + cost[0] * solves / threads if cost else None,
         same_model=cost[1] if cost else False,
+        pilot=measured,
     )
 
 
@@ -73,4 +92,13 @@ def machine(study: Study, facts: CheckFacts) -> dict[str, Any]:
         for item in study.inputs.items
     }
     told = {"schema": SCHEMA, "study": study.name, "fingerprint": study.fingerprint, "warnings": list(study.warnings)}
-    return {**told, "inputs": inputs, "run": asdict(facts)}
+    return {**told, "inputs": inputs, "run": finite(asdict(facts))}
+
+
+def finite(value: Any) -> Any:
+    """The same with null for numbers that JSON does not know."""
+    if isinstance(value, dict):
+        return {key: finite(each) for key, each in value.items()}
+    if isinstance(value, list | tuple):
+        return [finite(each) for each in value]
+    return None if isinstance(value, float) and not isfinite(value) else value

@@ -19,6 +19,12 @@ app = typer.Typer(
 )
 
 StudyPath = Annotated[Path, typer.Argument(metavar="STUDY", help="The study file (TOML).", show_default=False)]
+ResultPath = Annotated[Path, typer.Argument(metavar="RESULT", help="A run folder or its result.nc.", show_default=False)]
+Output = Annotated[
+    Path | None,
+    typer.Option("-o", "--output", metavar="DIR", help="Folder of the result; default results/NAME-FINGERPRINT.", show_default=False),
+]
+Threads = Annotated[int, typer.Option("--threads", min=0, help="Threads to solve with; 0 takes all cores.")]
 Json = Annotated[bool, typer.Option("--json", help="Print the machine form (JSON) instead of the text.")]
 
 
@@ -45,17 +51,14 @@ def options(
 @app.command()
 def run(
     study: StudyPath,
-    output: Annotated[
-        Path | None,
-        typer.Option("-o", "--output", metavar="DIR", help="Folder of the result; default results/NAME-FINGERPRINT.", show_default=False),
-    ] = None,
-    threads: Annotated[int, typer.Option("--threads", min=0, help="Threads to solve with; 0 takes all cores.")] = 0,
+    output: Output = None,
+    threads: Threads = 0,
     seed: Annotated[
         int | None, typer.Option("--seed", min=0, help="Run with this seed instead of the study's.", show_default=False)
     ] = None,
     json: Json = False,
 ) -> None:
-    """Run a study and print what it says."""
+    """Run a study and print what it says; goes on by itself where an earlier run of it was stopped."""
     with telling():
         from uq.cli.running import run_study
 
@@ -63,17 +66,58 @@ def run(
 
 
 @app.command()
-def check(study: StudyPath, json: Json = False) -> None:
-    """Check a study without solving anything."""
+def extend(
+    result: ResultPath,
+    members: Annotated[
+        int | None, typer.Option("--members", min=1, metavar="N", help="Go on until there are N members.", show_default=False)
+    ] = None,
+    precision: Annotated[
+        str,
+        typer.Option(
+            "--precision", metavar="KIND=WIDTH,...", help="Go on until intervals are so narrow: probabilities=0.001,indices=0.02."
+        ),
+    ] = "",
+    output: Output = None,
+    threads: Threads = 0,
+    json: Json = False,
+) -> None:
+    """Go on with a finished run, using every solve again; the result goes to another folder."""
+    with telling():
+        from uq.cli.going_on import extend_result
+
+        extend_result(result, members, precision, output, threads, json)
+
+
+@app.command()
+def compare(
+    results: Annotated[list[Path], typer.Argument(metavar="RESULT RESULT...", help="Run folders or their result.nc.", show_default=False)],
+    threads: Threads = 0,
+    json: Json = False,
+) -> None:
+    """Show how results differ from the first of them, with intervals."""
+    with telling():
+        from uq.cli.comparing import compare_results
+
+        compare_results(results, threads, json)
+
+
+@app.command()
+def check(
+    study: StudyPath,
+    pilot: Annotated[bool, typer.Option("--pilot", help="Solve a few members and say how many the precision will take.")] = False,
+    threads: Threads = 0,
+    json: Json = False,
+) -> None:
+    """Check a study; without --pilot nothing is solved."""
     with telling():
         from uq.cli.checking import check_study
 
-        check_study(study, json)
+        check_study(study, pilot, threads, json)
 
 
 @app.command()
 def show(
-    result: Annotated[Path, typer.Argument(metavar="RESULT", help="A run folder or its result.nc.", show_default=False)],
+    result: ResultPath,
     json: Json = False,
 ) -> None:
     """Show a result again."""

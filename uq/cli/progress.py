@@ -71,7 +71,8 @@ class Moving(Silent):
     def progress(self, progress: Progress) -> None:
         if self._task is None:
             self._task = self._bar.add_task("solving", total=progress.total, left="")
-        self._bar.update(self._task, completed=progress.done, left=words_of(progress))
+        # With a precision the total is that of the round.
+        self._bar.update(self._task, completed=progress.done, total=progress.total, left=words_of(progress))
 
 
 class Lines(Silent):

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import os
+import shlex
 import sys
 import time
 import traceback
@@ -26,6 +27,11 @@ def err(text: str) -> None:
     """A message, to standard error."""
     sys.stderr.write(text if text.endswith("\n") else text + "\n")
     sys.stderr.flush()
+
+
+def typed() -> str:
+    """The command as it was typed, for the history of a result."""
+    return shlex.join(["uq", *sys.argv[1:]])
 
 
 @contextmanager

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from pathlib import Path
+from shutil import get_terminal_size
 from typing import TYPE_CHECKING
 
 from uq.cli.say import out
@@ -28,4 +29,11 @@ def told(result: Result, json: bool) -> str:
         return dumps(result_json(result), indent=1, allow_nan=False)
     from uq.report.summary import summary
 
-    return summary(result)
+    return summary(result, columns())
+
+
+def columns() -> int:
+    """How wide a text may be: as the terminal, though lines that are too long are hard to read; of a pipe or a file as many as these."""
+    from uq.report.plain import NARROWEST_PAGE, WIDTH
+
+    return min(max(get_terminal_size((WIDTH, 0)).columns, NARROWEST_PAGE), WIDTH)

@@ -3,8 +3,11 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cached_property
+from typing import Any
 
 import numpy as np
+from numpy.typing import NDArray
 
 from uq.analysis.ask import Ask, Floats
 from uq.analysis.sample import Sample, failed
@@ -15,14 +18,20 @@ from uq.inputs.inputs import Inputs
 from uq.running.meter import Count, Meter
 from uq.running.observer import Observer
 from uq.running.pace import Shape
+from uq.running.part import Part
 from uq.solve.batch import Batch, Settings
 from uq.solve.compile import Compiled
 from uq.solve.solve import solve
 
+Arrays = NDArray[Any]
+
 
 @dataclass(frozen=True)
 class Forecast:
-    """What is solved, how, at which points, and what is asked of it; `start` is the time of the starts."""
+    """What is solved, how, at which points, and what is asked of it; `start` is the time of the starts.
+
+    The inputs are those of the design; the code may take fewer (a scenario that fixes one), in an order of its own.
+    """
 
     compiled: Compiled
     inputs: Inputs
@@ -37,20 +46,30 @@ class Forecast:
         layout = self.compiled.layout
         return Shape(self.design.parts, (layout.observed + layout.conditions) * len(self.ask.solved_times))
 
+    @cached_property
+    def _columns(self) -> list[int] | None:
+        names, wanted = self.inputs.names, self.compiled.code.inputs
+        return None if names == wanted else [names.index(name) for name in wanted]
+
+    def taken(self, x: Floats) -> Floats:
+        """Of the inputs x [member, input] those that the code takes."""
+        return x if self._columns is None else x[:, self._columns]
+
     def solved(self, x: Floats, observer: Observer) -> Batch:
         """Members with the inputs x [member, input], solved. Raises Interrupted where the stop flag is set."""
-        return solve(self.compiled, x, self.ask.solved_times, self.start, self.settings, observer.stop)
+        return solve(self.compiled, self.taken(x), self.ask.solved_times, self.start, self.settings, observer.stop)
 
 
-def tallies_of(forecast: Forecast, block: Block, meter: Meter, observer: Observer) -> Tallies:
-    """The tallies of one block; tells the meter. Raises Interrupted where the stop flag is set."""
+def part_of(forecast: Forecast, block: Block, meter: Meter, observer: Observer) -> Part:
+    """What one block says; tells the meter. Raises Interrupted where the stop flag is set."""
     begin = meter.now()
     design = forecast.design
-    x = design.spread(block, forecast.inputs.values(design.base(block)))
+    x = design.draw(block, forecast.inputs)
     batch = forecast.solved(x, observer)
     tallies = Tallies.of(forecast.ask, Sample.of(design, block, x, batch, forecast.ask))
-    meter.add(counted(batch, 2 * block.count, meter.now() - begin))
-    return tallies
+    count = counted(batch, 2 * block.count, meter.now() - begin)
+    meter.add(count)
+    return Part((block,), tallies, count)
 
 
 def counted(batch: Batch, members: int, seconds: float) -> Count:

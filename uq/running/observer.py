@@ -11,12 +11,13 @@ from numpy.typing import NDArray
 
 @dataclass(frozen=True)
 class Progress:
-    """How far a run is: solves done of all, those of them that failed, seconds since the beginning."""
+    """How far a run is: solves done of all, those of them that failed, seconds of this attempt and solves done in it (None: all)."""
 
     done: int
     total: int
     failed: int
     seconds: float
+    lately: int | None = None
 
     @property
     def share(self) -> float:
@@ -26,7 +27,8 @@ class Progress:
     @property
     def seconds_left(self) -> float | None:
         """At the speed so far; None before anything is done."""
-        return self.seconds * (self.total - self.done) / self.done if self.done else None
+        done = self.done if self.lately is None else self.lately
+        return self.seconds * (self.total - self.done) / done if done else None
 
 
 class Observer(Protocol):

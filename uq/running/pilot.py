@@ -2,10 +2,17 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass, replace
+from collections.abc import Mapping
+from dataclasses import dataclass, fields, replace
 
+import numpy as np
+
+from uq.analysis.ask import Ask
+from uq.analysis.given import pilot_classes
 from uq.analysis.pilot import pilot_ask
-from uq.running.block import Forecast, counted
+from uq.design.design import Design
+from uq.inputs.inputs import Inputs
+from uq.running.block import Arrays, Forecast, counted
 from uq.running.meter import Meter
 from uq.running.observer import Observer
 from uq.running.threads import aside
@@ -13,25 +20,72 @@ from uq.solve.batch import Batch
 from uq.solve.scales import pilot_scales
 
 
-@dataclass(frozen=True)
+@dataclass(frozen=True, eq=False)
+class Found:
+    """What the pilot found: the scale of every state, which of them had none of their own, the pilot's members, the nominal member."""
+
+    scales: Arrays
+    fell_back: Arrays
+    batch: Batch
+    nominal: Batch
+
+    def arrays(self) -> dict[str, Arrays]:
+        """As named arrays, so that it need not be found again."""
+        batches = {f"{name}/{each.name}": getattr(getattr(self, name), each.name) for name in _BATCHES for each in fields(Batch)}
+        return {"scales": self.scales, "fell_back": self.fell_back, **batches}
+
+    @classmethod
+    def of_arrays(cls, arrays: Mapping[str, Arrays]) -> Found:
+        """Back from the arrays."""
+        batches = [Batch(**{each.name: arrays[f"{name}/{each.name}"] for each in fields(Batch)}) for name in _BATCHES]
+        return cls(arrays["scales"], arrays["fell_back"], *batches)
+
+
+_BATCHES = ("batch", "nominal")
+
+
+@dataclass(frozen=True, eq=False)
 class Pilot:
-    """The forecast with scales, centres and floors filled in, the states without a scale of their own, and the nominal member, solved."""
+    """The forecast with scales, centres and floors filled in, and what the pilot found."""
 
     forecast: Forecast
-    fell_back: tuple[str, ...]
-    nominal: Batch
+    found: Found
+
+    @property
+    def fell_back(self) -> tuple[str, ...]:
+        """The states without a scale of their own."""
+        names = self.forecast.compiled.code.states
+        return tuple(name for name, fell in zip(names, self.found.fell_back, strict=True) if fell)
+
+    @property
+    def nominal(self) -> Batch:
+        """The member with every input at its median, solved."""
+        return self.found.nominal
 
 
 def piloted(forecast: Forecast, meter: Meter, observer: Observer) -> Pilot:
-    """What the pilot says (the first 16 A rows of every replicate), and the member with every input at its median."""
+    """Solves the pilot (the first 16 A rows of every replicate) and the nominal member; the meter hears how long a solve takes."""
     x = forecast.inputs.values(forecast.design.pilot())
-    times, start = forecast.ask.solved_times, forecast.start
-    scales, fell_back = aside(lambda: pilot_scales(forecast.compiled, x, times, start, forecast.settings, observer.stop), observer)
+    times, start, taken = forecast.ask.solved_times, forecast.start, forecast.taken(x)
+    scales, names = aside(lambda: pilot_scales(forecast.compiled, taken, times, start, forecast.settings, observer.stop), observer)
     scaled = replace(forecast, settings=replace(forecast.settings, scales=scales))
     begin = meter.now()
     batch = aside(lambda: scaled.solved(x, observer), observer)
     # These rows are solved again in their blocks, so they only set the pace.
     meter.pace(counted(batch, 0, meter.now() - begin))
-    ready = replace(scaled, ask=pilot_ask(forecast.ask, batch, forecast.settings.accuracy))
-    nominal = aside(lambda: ready.solved(forecast.inputs.medians()[None, :], observer), observer)
-    return Pilot(ready, fell_back, nominal)
+    nominal = aside(lambda: scaled.solved(forecast.inputs.medians()[None, :], observer), observer)
+    fell_back = np.isin(np.array(forecast.compiled.code.states), np.array(names, dtype=np.str_))
+    return completed(forecast, Found(scales, fell_back, batch, nominal))
+
+
+def completed(forecast: Forecast, found: Found) -> Pilot:
+    """The forecast with what the pilot found."""
+    settings = replace(forecast.settings, scales=found.scales)
+    ask = told(forecast.ask, found, settings.accuracy, forecast.inputs, forecast.design)
+    return Pilot(replace(forecast, settings=settings, ask=ask), found)
+
+
+def told(ask: Ask, found: Found, accuracy: float, inputs: Inputs, design: Design) -> Ask:
+    """The ask with what the pilot found."""
+    ask = pilot_ask(ask, found.batch, accuracy)
+    return pilot_classes(ask, inputs.values(design.pilot()), design.replicates) if ask.dependent else ask

@@ -1,30 +1,26 @@
-"""The fold: rounds of blocks on dask's threaded scheduler, merged along the binary tree over rows into one set of tallies per replicate.
+"""A round: the blocks that are still to be solved, spread over threads by dask's scheduler, and gathered as they come.
 
-The tree depends on the rows alone, so the result has the same bits for any number of threads and any size of block.
+Sums combine along the binary tree over rows, whatever came first, so the result has the same bits for any number of threads, any size of
+block and any interruption.
 """
 
 from __future__ import annotations
 
-from collections.abc import Callable, Hashable, Iterable
+from collections.abc import Callable, Iterable, Iterator, Mapping, Sequence
 from concurrent.futures import ThreadPoolExecutor
 from dataclasses import dataclass
-from functools import reduce
-from typing import Any
 
-from uq.analysis.ask import Ask
 from uq.analysis.finding import Finding
-from uq.analysis.tallies import Tallies
 from uq.design.blocks import Block
 from uq.design.design import Design
-from uq.errors import ValueMistake
+from uq.errors import UseMistake
+from uq.running.branch import Branch
 from uq.running.meter import Meter
 from uq.running.observer import Observer
-from uq.running.pace import Shape, block_rows
+from uq.running.part import Part, Parts
 from uq.running.threads import all_cores, threads
-from uq.solve.batch import Batch
 
-Work = Callable[[Block], Tallies]
-Graph = dict[Hashable, tuple[Any, ...]]
+Work = Callable[[Block], Part]
 
 
 @dataclass(frozen=True)
@@ -36,9 +32,9 @@ class Spread:
 
     def __post_init__(self) -> None:
         if self.threads < 0:
-            raise ValueMistake(f"{self.threads} threads", "a number of threads, 0 for all cores", key="threads")
+            raise UseMistake(f"{self.threads} threads", "a number of threads, 0 for all cores", key="threads")
         if self.rows < 0 or self.rows & (self.rows - 1):
-            raise ValueMistake(f"blocks of {self.rows} rows", "a power of two, 0 for a fitting one", key="block_rows")
+            raise UseMistake(f"blocks of {self.rows} rows", "a power of two, 0 for a fitting one", key="block_rows")
 
     @property
     def workers(self) -> int:
@@ -46,57 +42,67 @@ class Spread:
         return self.threads or all_cores()
 
 
-def fold(design: Design, work: Work, shape: Shape, meter: Meter, spread: Spread, observer: Observer) -> Tallies:
-    """The tallies of all replicates over all rounds; `work` makes those of one block.
+@dataclass(frozen=True)
+class Crew:
+    """Who works: how the work is spread, who adds up, who is told."""
+
+    spread: Spread
+    meter: Meter
+    observer: Observer
+
+
+def still_open(design: Design, span: tuple[int, int], size: int, done: Iterable[Block]) -> Iterator[Block]:
+    """The rows of a round that no block has done yet, in aligned blocks of at most `size` rows, by replicate, then by row."""
+    first, stop = span
+    by_replicate: dict[int, list[Block]] = {}
+    for block in done:
+        by_replicate.setdefault(block.replicate, []).append(block)
+    whole = design.blocks(first, stop, stop - first)
+    for block in whole:
+        yield from _open(block, size, by_replicate.get(block.replicate, []))
+
+
+def _open(block: Block, size: int, done: Sequence[Block]) -> Iterator[Block]:
+    inside = [each for each in done if each.first < block.first + block.count and block.first < each.first + each.count]
+    if any(each.count >= block.count for each in inside):
+        return
+    if not inside and block.count <= size:
+        yield block
+        return
+    half = block.count // 2
+    for start in (block.first, block.first + half):
+        yield from _open(Block(block.replicate, start, half), size, inside)
+
+
+def solve_blocks(tasks: Sequence[tuple[str, Block]], works: Mapping[str, Work], brought: Callable[[str, Part], None], crew: Crew) -> None:
+    """Solves blocks of branches by name; `brought` gets the part of each, from the thread that made it.
 
     Raises Interrupted, with every thread at rest, where the observer's stop flag was set or Ctrl-C pressed.
     """
-    sofar: dict[int, Tallies] = {}
-    with threads(spread.workers, observer) as pool:
-        for first, stop in design.rounds():
-            size = spread.rows or block_rows(shape, meter.seconds_per_solve, stop - first, design.replicates, spread.workers)
-            graph, ends = tree(design.blocks(first, stop, size), work)
-            for replicate, tallies in zip(ends, worked_out(graph, list(ends.values()), pool), strict=True):
-                sofar[replicate] = sofar[replicate].merge(tallies) if replicate in sofar else tallies
-    return reduce(merged, (sofar[replicate] for replicate in sorted(sofar)))
+
+    def one(name: str, block: Block) -> None:
+        brought(name, works[name](block))
+
+    with threads(crew.spread.workers, crew.observer) as pool:
+        _spread_out([(one, name, block) for name, block in tasks], pool)
 
 
-def answered(tallies: Tallies, ask: Ask, nominal: Batch, spread: Spread, observer: Observer) -> tuple[Finding, ...]:
-    """The findings, worked out on all threads. Raises Interrupted as `fold` does."""
-    with threads(spread.workers, observer) as pool:
-        return tallies.findings(ask, nominal.values[0, : len(ask.watched)], pool.map)
-
-
-def tree(blocks: Iterable[Block], work: Work) -> tuple[Graph, dict[int, Hashable]]:
-    """The graph of one round, and the key of every replicate's tallies in it: neighbours are merged, then neighbours of those, ...
-
-    The blocks of a replicate are equally long, in order, and a power of two in number.
-    """
-    graph: Graph = {}
-    ends: dict[int, list[Hashable]] = {}
-    for block in blocks:
-        key = ("block", block.replicate, block.first)
-        graph[key] = (work, block)
-        ends.setdefault(block.replicate, []).append(key)
-    for replicate, keys in ends.items():
-        level = 0
-        while len(keys) > 1:
-            level += 1
-            pairs = list(zip(keys[::2], keys[1::2], strict=True))
-            parents: list[Hashable] = [("merged", replicate, level, place) for place in range(len(pairs))]
-            graph.update({key: (merged, left, right) for key, (left, right) in zip(parents, pairs, strict=True)})
-            keys = parents
-        ends[replicate] = keys
-    return graph, {replicate: keys[0] for replicate, keys in ends.items()}
-
-
-def merged(left: Tallies, right: Tallies) -> Tallies:
-    """The tallies of two neighbours as one."""
-    return left.merge(right)
-
-
-def worked_out(graph: Graph, keys: list[Hashable], pool: ThreadPoolExecutor) -> list[Tallies]:
-    """The tallies behind the keys, in their order."""
+def _spread_out(calls: Sequence[tuple[object, ...]], pool: ThreadPoolExecutor) -> None:
+    """Makes all calls, each a function followed by its arguments."""
     from dask.threaded import get
 
-    return list(get(graph, keys, pool=pool))
+    if calls:
+        keys = [("block", place) for place in range(len(calls))]
+        get(dict(zip(keys, calls, strict=True)), keys, pool=pool)
+
+
+def answered(branch: Branch, part: Part, crew: Crew) -> tuple[Finding, ...]:
+    """The findings of one branch at the end of a round, worked out on all threads. Raises Interrupted as `solve_blocks` does."""
+    ask = branch.forecast.ask
+    with threads(crew.spread.workers, crew.observer) as pool:
+        return part.tallies.findings(ask, branch.pilot.nominal.values[0, : len(ask.watched)], pool.map)
+
+
+def whole(parts: Parts, names: Iterable[str]) -> bool:
+    """Whether there is a part of every branch."""
+    return all(name in parts for name in names)
