@@ -88,3 +88,10 @@ def write_map() -> None:
 
 if __name__ == "__main__":
     write_map()
+
+
+def test_the_tables_of_keys_are_those_of_the_declarations() -> None:
+    from uq.study.keys import key_table
+
+    told = README.partition("<!-- keys: begin -->")[2].partition("<!-- keys: end -->")[0]
+    assert told.strip() == key_table().strip()
