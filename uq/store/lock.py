@@ -10,8 +10,9 @@ from contextlib import contextmanager
 from pathlib import Path
 
 from uq.errors import StorageError
+from uq.store.folder import ELSEWHERE
 from uq.store.progress import PROGRESS
-from uq.store.whole import DRAFT
+from uq.store.whole import DRAFT, drafts
 
 LOCK = "lock"
 # The name of a draft, see `whole.put`.
@@ -49,9 +50,10 @@ def owned(folder: Path) -> Iterator[None]:
 
 def _sweep(folder: Path) -> None:
     """Takes away drafts that a killed process left: nobody else writes here now."""
-    for draft in [each for each in folder.rglob(f".*{DRAFT}") if OURS.fullmatch(each.name)]:
-        with contextlib.suppress(OSError):
-            draft.unlink()
+    for place in (folder, folder / PROGRESS, folder / ELSEWHERE):
+        for draft in [each for each in drafts(place) if OURS.fullmatch(each.name)]:
+            with contextlib.suppress(OSError):
+                draft.unlink()
 
 
 def _locked(place: Path) -> int | None:
