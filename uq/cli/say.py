@@ -10,23 +10,36 @@ import traceback
 from collections.abc import Iterator
 from contextlib import contextmanager
 from pathlib import Path
+from typing import TextIO
 
 import typer
 
 from uq.cli.settings import state_folder
-from uq.errors import EXIT_DEFECT, EXIT_INTERRUPTED, UqError
+from uq.errors import EXIT_DEFECT, EXIT_INTERRUPTED, StorageError, UqError
 
 
 def out(text: str) -> None:
-    """A result, to standard output."""
-    sys.stdout.write(text if text.endswith("\n") else text + "\n")
-    sys.stdout.flush()
+    """A result, to standard output. Raises StorageError where it cannot be written there, as on a full disk."""
+    try:
+        _write(sys.stdout, text)
+    except BrokenPipeError:
+        raise
+    except OSError as error:
+        # What is still buffered must not fail again when Python ends.
+        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
+        raise StorageError(f"cannot write to standard output: {error.strerror}") from None
 
 
 def err(text: str) -> None:
     """A message, to standard error."""
-    sys.stderr.write(text if text.endswith("\n") else text + "\n")
-    sys.stderr.flush()
+    _write(sys.stderr, text)
+
+
+def _write(stream: TextIO, text: str) -> None:
+    """A text and the end of its line; letters that the stream's encoding does not know become question marks."""
+    known = text.encode(stream.encoding or "utf-8", errors="replace").decode(stream.encoding or "utf-8")
+    stream.write(known if known.endswith("\n") else known + "\n")
+    stream.flush()
 
 
 def typed() -> str:
