@@ -28,8 +28,9 @@ def pilot_ask(ask: Ask, batch: Batch, accuracy: float) -> Ask:
     half_width = (high - low) / 2
     widest = (_quantile(values, 1.0) - _quantile(values, 0.0)) / 2
     half_width = np.where(half_width > 0, half_width, widest)
-    half_width = np.where(half_width > 0, half_width, floor[:, None])
-    half_width = np.where(half_width > 0, half_width, 1.0)
+    # Narrower than the solver's own noise is no width to measure a deviation by, and below the least normal number its inverse is infinite.
+    half_width = np.maximum(half_width, floor[:, None])
+    half_width = np.where(half_width > _LEAST_WIDTH, half_width, 1.0)
     centre, outcome_floor = _quantile(values, 0.5), accuracy * _quantile(np.abs(batch.outcomes), 0.5)
     with np.errstate(invalid="ignore"):
         deviations = np.abs((values - centre) / half_width).max(axis=2, initial=0.0)
