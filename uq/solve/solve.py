@@ -49,7 +49,7 @@ def advance(compiled: Compiled, x: Floats, times: Floats, start: float, settings
 
 
 def prepare() -> bool:
-    """Whether the kernel must still be compiled on this machine, which the first `solve` then does (some seconds)."""
+    """Whether the kernel must still be compiled on this machine, which the first `solve` then does (up to half a minute)."""
     from uq.solve.kernel import is_compiled
 
     return not is_compiled()
