@@ -12,7 +12,7 @@ from hypothesis import strategies as st
 from SALib.analyze import sobol as salib
 from scipy.stats import binom
 
-from uq.analysis.estimate import ratio, rounding_sd, standard_deviation, t_quantile
+from uq.analysis.estimate import ratio, rounding_sd, t_quantile
 from uq.analysis.probabilities import clopper_pearson, probability
 from uq.analysis.quantiles import Levels, quantiles, rank, weighted_quantiles
 from uq.analysis.sobol import first_numerator, index, over_time, total_numerator, variance
@@ -164,17 +164,6 @@ def test_ratio_of_equal_denominators_is_the_mean_with_its_t_interval() -> None:
     assert found.value == pytest.approx(numbers.mean(axis=0))
     assert found.high - found.value == pytest.approx(half)
     assert rounding_sd(np.full((16, 1), 100)) == pytest.approx(0.01 / np.sqrt(12))
-
-
-def test_deviation_is_that_of_all_values_with_the_jackknife_by_hand() -> None:
-    values = RNG.normal(5.0, 2.0, size=(16, 200))
-    shifted = values - 4.0
-    counted = np.full((16, 1), 200)
-    found = standard_deviation(shifted.sum(axis=1)[:, None], (shifted**2).sum(axis=1)[:, None], counted, 0.95)
-    without = np.array([np.delete(values, place, axis=0).std(ddof=1) for place in range(16)])
-    half = t_quantile(0.95, 16) * np.sqrt(15 / 16 * ((without - without.mean()) ** 2).sum())
-    assert found.value[0] == pytest.approx(values.std(ddof=1))
-    assert found.high[0] - found.value[0] == pytest.approx(half)
 
 
 def ishigami(x: np.ndarray) -> np.ndarray:

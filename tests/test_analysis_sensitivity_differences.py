@@ -134,7 +134,7 @@ def test_jackknifed_differences_by_hand() -> None:
     # Of equal denominators the jackknife is the plain standard error, and Welch's formula the textbook one.
     means = [ratio_of(each[0], np.ones((16, 3))) for each in (one, other)]
     plain = [each[0].var(axis=0, ddof=1) / 16 for each in (one, other)]
-    assert means[0].variance() == pytest.approx(plain[0])
+    assert means[0].error() ** 2 == pytest.approx(plain[0])
     from scipy.stats import ttest_ind
 
     ends = ttest_ind(other[0], one[0], equal_var=False).confidence_interval(0.95)
@@ -157,7 +157,7 @@ def test_quantiles_without_their_replicates_move_along_the_distribution_function
     assert np.corrcoef((found.without - found.value).ravel(), (plain - found.value).ravel())[0, 1] > 0.95
     # Of independent values: the root of p (1 - p) / N over the density.
     known = np.sqrt(np.array([0.05 * 0.95, 0.25, 0.05 * 0.95]) / 64000) / np.array([0.103, 0.399, 0.103])
-    assert np.sqrt(found.variance()) == pytest.approx(known, rel=0.6)
+    assert found.error() == pytest.approx(known, rel=0.6)
 
 
 def test_values_counted_into_bins_differ_as_those_kept_but_for_half_a_bin() -> None:
@@ -168,7 +168,7 @@ def test_values_counted_into_bins_differ_as_those_kept_but_for_half_a_bin() -> N
     kept, binned = (cell.quantiles(LEVELS, members) for cell in cells)
     assert cells[1].error is not None
     assert (np.abs(kept.value - binned.value) <= cells[1].error(binned.value) * (1 + 1e-9)).all()
-    assert np.sqrt(binned.variance()) == pytest.approx(np.sqrt(kept.variance()), rel=0.15)
+    assert binned.error() == pytest.approx(kept.error(), rel=0.15)
 
 
 def test_replicates_that_agree_leave_a_width() -> None:
@@ -176,7 +176,7 @@ def test_replicates_that_agree_leave_a_width() -> None:
     values = (np.arange(64) + RNG.random((16, 1))) / 64
     members = Members(np.full(16, 64), np.zeros(16, dtype=np.int64))
     found = kept_cell(kept_of(values), 0).quantiles(Levels((0.5,), 0.95), members)
-    assert (found.variance() > 0).all()
+    assert (found.error() > 0).all()
     whole = paired(found, Jackknifed(found.value, found.without, found.least), 0.95)
     assert (whole.high > whole.low).all()
 

@@ -9,18 +9,18 @@ import pytest
 
 from tests.analysis_models import Model, complete, folded, gaussian, number, tallied
 from tests.sensitivity_coverage import group_model, linear_model
-from tests.sensitivity_models import design_of
+from tests.sensitivity_models import Dependent, design_of, linear
+from uq.analysis.ask import InputGroup
 from uq.analysis.estimate import Estimate
 from uq.analysis.finding import Finding, Variable
+from uq.analysis.places import dropping, order_of_inputs, ranked_in, singly
 from uq.analysis.policy import Named
 from uq.analysis.precision import (
     FASTEST,
     Headline,
     Round,
-    dropping,
     headline,
     needed,
-    order_of_inputs,
     precision_findings,
     settled,
 )
@@ -71,7 +71,7 @@ def test_the_headline_numbers_are_those_of_the_contract() -> None:
 
 def test_dependent_inputs_and_groups_have_headlines_too() -> None:
     for (model, _), largest, names in (
-        (linear_model("two"), "x1", {"first_overall", "total_overall", "shapley_overall"}),
+        (linear_model("two"), "x1", {"first_overall", "shapley_overall"}),
         (group_model(), "x2", {"first_overall", "total_overall", "first_group_overall", "total_group_overall"}),
     ):
         design = design_of(model, 1, 64)
@@ -80,7 +80,7 @@ def test_dependent_inputs_and_groups_have_headlines_too() -> None:
         assert {each.name for each in found if each.kind == "indices"} == names
         # What is refused does not keep a precision from being reached.
         assert settled(found, Asked(indices=0.5))
-        assert order_of_inputs(found, ask.inputs)["ranking/y0"][0] == [largest]
+        assert order_of_inputs(found, singly(ask.inputs))["ranking/y0"][0] == [largest]
 
 
 def test_settled_when_every_half_width_is_small_enough() -> None:
@@ -125,29 +125,36 @@ def test_an_inert_input_is_precise_by_the_rule_of_three() -> None:
 
 def test_inputs_are_ordered_and_dropped_only_as_far_as_intervals_allow() -> None:
     found = at_rows(MODEL, 256)
-    assert order_of_inputs(found, MODEL.inputs)["ranking/T"] == [["q"], ["p"], ["r"]]
-    dropped = dropping(found, MODEL.inputs)
+    assert order_of_inputs(found, singly(MODEL.inputs))["ranking/T"] == [["q"], ["p"], ["r"]]
+    dropped = dropping(found, singly(MODEL.inputs))
     assert dropped.must_not == ("p", "q")
     assert dropped.may == ("r",)
     assert dropped.open == ()
     coarse = at_rows(MODEL, 16)
-    assert "r" not in dropping(coarse, MODEL.inputs).may
-    assert dropping((), MODEL.inputs).open == MODEL.inputs
+    assert "r" not in dropping(coarse, singly(MODEL.inputs)).may
+    assert dropping((), singly(MODEL.inputs)).open == MODEL.inputs
 
 
-def index_finding(value: list[float], half: list[float], reason: str = "") -> Finding:
+def index_finding(value: list[float], half: list[float], few: tuple[int, ...] = ()) -> Finding:
+    """A ranking; with `few` that of a limit, by as many times, of which all but the last have numbers."""
     v, h = np.array(value), np.array(half)
-    named = Named("total_overall", ("input",), "total")
-    variables = named.variables(Estimate(v, v - h, v + h), reason)
-    first = Named("first_overall", ("input",), "first").variables(Estimate(v, v - h, v + h), reason)
-    return Finding("ranking/T", {**first, **variables})
+    variables = {}
+    for kind in ("first", "total"):
+        if not few:
+            variables |= Named(f"{kind}_overall", ("input",), kind).variables(Estimate(v, v - h, v + h))
+            continue
+        ends = (np.stack([*(np.full(len(v), 0.5) for _ in few[1:]), each], axis=1) for each in (v, v - h, v + h))
+        variables |= Named(f"{kind}_by", ("input", "by"), kind).variables(Estimate(*ends), TOO_FEW if any(few) else NOISE)
+    if few:
+        variables["few_by"] = Variable(("by",), np.array(few, dtype=np.int8), "few")
+    return Finding("ranking/T", variables)
 
 
 ASK = MODEL.ask()
 
 
-def round_of(solves: int, half: list[float], value: list[float] | None = None, reason: str = "") -> Round:
-    return Round(solves, solves, headline([index_finding(value or [0.5] * len(half), half, reason)], ASK, solves))
+def round_of(solves: int, half: list[float], value: list[float] | None = None, few: tuple[int, ...] = ()) -> Round:
+    return Round(solves, solves, headline([index_finding(value or [0.5] * len(half), half, few)], ASK, solves))
 
 
 def test_solves_needed_are_conservative_until_more_is_measured() -> None:
@@ -164,13 +171,59 @@ def test_solves_needed_are_conservative_until_more_is_measured() -> None:
 
 
 def test_what_cannot_be_foretold_is_named() -> None:
-    few = [round_of(1000, [np.nan] * 3, [np.nan] * 3, TOO_FEW)]
+    few = [round_of(1000, [np.nan] * 3, [np.nan] * 3, (0, 1))]
     found = needed(few, Asked(indices=0.02))
-    assert found.unknown == ("ranking/T first_overall", "ranking/T total_overall")
+    assert found.unknown == ("ranking/T first_by", "ranking/T total_by")
     assert found.solves == 1000
-    noise = [round_of(1000, [np.nan] * 3, [np.nan] * 3, NOISE)]
+    noise = [round_of(1000, [np.nan] * 3, [np.nan] * 3)]
     assert needed(noise, Asked(indices=0.02)).unknown == ()
     assert not settled(noise[0].headlines, Asked(indices=0.02))
+
+
+def test_a_time_before_the_last_that_too_few_passed_holds_nothing_up() -> None:
+    """What is missing at the last time for another reason does not come with more members, whatever an earlier time wants."""
+    lost = round_of(1000, [np.nan, 0.01, 0.01], [np.nan, 0.5, 0.2], (1, 0))
+    assert [each.undefined.tolist() for each in lost.headlines] == [[True, False, False]] * 2
+    assert settled(lost.headlines, Asked(indices=0.02))
+    assert needed([lost], Asked(indices=0.02)).unknown == ()
+    assert not settled(round_of(1000, [np.nan] * 3, [np.nan] * 3, (1, 1)).headlines, Asked(indices=0.02))
+
+
+def test_dependent_inputs_are_settled_while_an_earlier_time_is_rare() -> None:
+    """By t = 0 hardly anybody has passed: no total index is asked for, and none is waited for."""
+    model, _ = linear_model("two")
+    rare = replace(
+        model, values=lambda x, times: (x.sum(axis=1)[:, None] * np.where(times > 0, 1, 0.02))[:, None], threshold=0.3, by=(0.0, 1.0)
+    )
+    design = design_of(rare, 1, 256)
+    ask = rare.complete(design)
+    findings = {each.group: each for each in rare.tallied(design, ask, design.blocks(0, 256, 256)).findings(ask)}
+    flags = number(findings["ranking/hot"], "few_by").tolist()
+    assert flags == [1, 0]
+    found = headline([findings["ranking/hot"]], ask, design.members)
+    assert {each.name for each in found} == {"first_by", "shapley_by"}
+    assert not any(each.undefined.any() for each in found)
+    assert settled(found, Asked(indices=0.5))
+
+
+def test_inputs_drawn_together_have_one_place_in_the_order() -> None:
+    """x1 and x2 are one unit: neither has a share, and what they have together is large, so that they must not be dropped."""
+    joint = replace(
+        Dependent(np.zeros(3), np.eye(3) + 0.5 * np.eye(3)[[1, 0, 2]] * [1, 1, 0], linear([2.0, 1.0, 0.1])),
+        units=((0, 1), (2,)),
+        groups=(InputGroup("x1+x2", (0, 1)),),
+    )
+    design = design_of(joint, 1, 256)
+    ask = joint.complete(design)
+    findings = {each.group: each for each in joint.tallied(design, ask, design.blocks(0, 256, 256)).findings(ask)}
+    ranked = ranked_in(findings["ranking/y0"], ask.inputs)
+    assert [(each.name, each.inputs) for each in ranked[:2]] == [("x1+x2", ("x1", "x2")), ("x3", ("x3",))]
+    found = headline(findings.values(), ask, design.members)
+    assert order_of_inputs(found, ranked)["ranking/y0"][0] == ["x1+x2"]
+    assert dropping(found, ranked).must_not[0] == "x1+x2"
+    assert {"x1", "x2"}.isdisjoint(dropping(found, ranked).open)
+    shapley = by_name(found)["ranking/y0", "shapley_overall"]
+    assert shapley.undefined.tolist()[:2] == [True, True]
 
 
 def test_the_estimate_of_a_pilot_is_about_right() -> None:

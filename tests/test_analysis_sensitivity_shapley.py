@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import tracemalloc
 from dataclasses import replace
 from itertools import permutations
 from typing import Any
@@ -17,6 +18,7 @@ from uq.analysis.finding import Finding
 from uq.analysis.policy import TOO_MANY_LOST
 from uq.analysis.ranking import DEPENDENT, DRAWN_TOGETHER, NOISE, Shares
 from uq.analysis.shapley import Walks
+from uq.design.sets import shapley_sets
 
 ROWS = 256
 # Student's t with 15 degrees of freedom is beyond 2.5 times its 95 % factor once in 14 000 times (two-sided).
@@ -179,8 +181,27 @@ def test_all_orders_are_all_sets() -> None:
     model = Dependent(np.zeros(4), np.eye(4), linear([1.0] * 4))
     by_sets = Walks.of(model.ask())
     by_orders = Walks.of(replace(model, orders=tuple(permutations(range(4))), sets=every_set(((0,), (1,), (2,), (3,)))).ask())
-    assert by_orders.sets.mean(axis=0) == pytest.approx(by_sets.sets[0], abs=1e-15)
-    assert by_orders.full.mean(axis=0) == pytest.approx(by_sets.full[0], abs=1e-15)
+    rng = np.random.default_rng(5)
+    costs, variances = rng.random((16, 14, 3)), 1 + rng.random((16, 3))
+    for one, other in ((by_sets, by_orders), (by_sets.shared(((0, 2), (3,))), by_orders.shared(((0, 2), (3,))))):
+        assert one.effects(costs, variances, 0.95).value == pytest.approx(other.effects(costs, variances, 0.95).value, abs=1e-14)
+
+
+def test_hundreds_of_units_take_no_more_memory_than_their_costs() -> None:
+    # y is a sum of 300 independent inputs with weights 1, 2, 3 in turn: the cost of a set is the sum of squares in it, and the effect of
+    # an input its square over all of them, whatever the orders. Weights for every order, unit and set would take 740 MB.
+    many = 300
+    made = shapley_sets([(unit,) for unit in range(many)], 3)
+    squares = (1.0 + np.arange(many) % 3) ** 2
+    ask = replace(Dependent(np.zeros(many), np.eye(many), linear([1.0] * many), sets=made.sets, orders=made.orders).ask(), units=None)
+    costs = np.array([squares[list(taken)].sum() for taken in made.sets])
+    tracemalloc.start()
+    found = Walks.of(ask).effects(np.tile(costs[:, None], (4, 1, 1)), np.full((4, 1), squares.sum()), 0.95)
+    peak = tracemalloc.get_traced_memory()[1]
+    tracemalloc.stop()
+    assert len(made.orders) == 32
+    assert found.value[:, 0] == pytest.approx(squares / squares.sum())
+    assert peak < 50e6
 
 
 def test_random_orders_say_how_much_their_choice_matters() -> None:

@@ -10,6 +10,7 @@ from hypothesis import strategies as st
 from uq.design.blocks import Block
 from uq.design.design import Design
 from uq.design.sets import MOST_SUBSETS, one_by_one, random_orders, shapley_sets
+from uq.errors import ValueMistake
 from uq.inputs.dependence import Dependence
 from uq.inputs.distributions import Gamma, Lognormal, Normal, Uniform
 from uq.inputs.inputs import Input, Inputs
@@ -56,8 +57,8 @@ def test_all_proper_subsets_of_few_units():
 def test_random_orders_of_many_units(count, seed):
     made = shapley_sets([(unit,) for unit in range(count)], seed)
     assert made == shapley_sets([(unit,) for unit in range(count)], seed)
-    assert len(made.sets) <= MOST_SUBSETS
-    assert len(made.orders) == 2 * max(1, 511 // (count - 1))
+    assert len(made.sets) <= max(MOST_SUBSETS, 32 * (count - 1))
+    assert len(made.orders) == 2 * max(16, 511 // (count - 1))
     for order, other in zip(made.orders[::2], made.orders[1::2], strict=True):
         assert sorted(order) == list(range(count))
         assert other == order[::-1]
@@ -73,6 +74,17 @@ def test_orders_are_random():
     assert len(orders) == 46
     assert 8 <= sum(order.index(0) < order.index(1) for order in orders) <= 38
     assert orders != random_orders(12, 6)[::2]
+
+
+def test_so_many_correlated_inputs_that_their_weights_take_too_much_memory_are_refused():
+    units = [(unit,) for unit in range(300)]
+    with pytest.raises(ValueMistake, match=r"300 inputs of which 300 .*at most 512 MB.*13778 MB.*leave \"ranking\"") as told:
+        shapley_sets(units, 0, linked=300)
+    assert told.value.key == "ask"
+    assert len(shapley_sets(units, 0, linked=5).orders) == 32
+    assert len(shapley_sets(units[:100], 0, linked=100).sets) > 3000
+    with pytest.raises(ValueMistake):
+        shapley_sets(units[:102], 0, linked=102)
 
 
 def test_mixed_rows_take_their_set_from_b():

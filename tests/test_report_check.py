@@ -91,6 +91,10 @@ def test_it_says_what_a_run_takes(study: Study) -> None:
     other = CheckFacts(512, 16, 512, 1, 900, 3700.0)
     assert "Time: about 1 h 1 min on 1 thread (guessed from another model)" in words(check_text(study, other))
     assert "Memory: about 900 bytes." in check_text(study, other)
+    assert "Time: about 12 days on" in words(check_text(study, CheckFacts(512, 16, 512, 1, 900, 1e6)))
+    timed = words(check_text(study, CheckFacts(None, 16, None, 1, 900)))
+    assert "As many members as fit into the time that it may take, in 16 replicates; one round in any case." in timed
+    assert "None" not in timed
     assert "Time: not known yet on this machine" in check_text(study, CheckFacts(512, 16, 512, 1, 900))
 
 

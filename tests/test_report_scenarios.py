@@ -115,7 +115,7 @@ def test_what_is_settled_and_what_the_rest_would_take(tmp_path: Path) -> None:
     assert "quantiles, of the 5-95 % width 0.05 0.024 all 15 settled Widest of the probabilities: Alarm temperature passed." in told
     assert "Order of the inputs: first place settled in 3 of 4 rankings, whole order in none of 4." in told
     assert "May be dropped (share surely below 0.01 in all that is ranked): none." in told
-    assert "The precision asked was not reached: the members that it may use were used up." in told
+    assert "The precision asked was not reached: it has all the members that it may use." in told
     assert "It is expected after about 120000 solves (49152 so far), which is about 65536 members." in told
     assert f"Next: uq show {result.folder} --json uq extend {result.folder} --members 65536 uq compare {result.folder} OTHER" in told
 
@@ -130,25 +130,33 @@ def test_a_precision_that_was_reached(tmp_path: Path) -> None:
 def test_what_cannot_be_foretold_is_said(tmp_path: Path) -> None:
     reached = PrecisionReached(False, "minutes", math.nan, ("ranking/alarm_passed total_by",))
     told = words(summary(precise(tmp_path, reached, indices=0.01)))
-    assert "not reached: the time that it may take was over. Nothing can be foretold yet of ranking/alarm_passed total_by." in told
+    assert "not reached: another round would have taken longer than the time that is left." in told
+    assert "Nothing can be foretold yet of ranking/alarm_passed total_by." in told
+
+
+# What is judged where a measurement has a deviation of its own: not whether it lies between the quantiles that are printed.
+WIDENED = "lie between the outermost quantiles of what would be measured, the deviation of a measurement counted"
 
 
 @pytest.mark.parametrize(
     ("inside", "low", "high", "said"),
     [
-        (1.0, 1.0, 1.0, "3 of 3 observations of Tank temperature lie between the outermost quantiles; 90 % of them are expected there."),
         (
-            2 / 3,
-            1 / 3,
             1.0,
-            "2 of 3 observations of Tank temperature lie between the outermost quantiles (between 1 and 3, as intervals go)",
+            0.29,
+            1.0,
+            f"3 of 3 observations of Tank temperature {WIDENED} (as a share 29 to 100 %, were each by itself); 90 % are expected",
         ),
+        (1 / 3, 0.01, 0.89, "90 % are expected there. That is fewer than expected: look at the model, its inputs and the measurements."),
         (np.nan, np.nan, np.nan, "of Tank temperature nothing can be said"),
     ],
 )
 def test_measured_shares(tmp_path: Path, inside: float, low: float, high: float, said: str) -> None:
     result = made_result(tmp_path, findings=[*made_findings(), measured(inside, low, high)])
-    assert f"Measured: {said}" in words(summary(result))
+    told = words(summary(result))
+    assert "Measured: " in told
+    assert said in told
+    assert ("fewer than expected" in told) == (high < 0.9)
 
 
 def test_the_headline_question_comes_first(tmp_path: Path) -> None:

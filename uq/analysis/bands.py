@@ -9,13 +9,16 @@ import numpy as np
 from numpy.typing import NDArray
 
 from uq.analysis.ask import Ask, Counts, Floats, Quantity
-from uq.analysis.estimate import Estimate, ratio, standard_deviation
+from uq.analysis.estimate import Estimate
+from uq.analysis.few import Looked, told
 from uq.analysis.finding import Finding, Variable
 from uq.analysis.histograms import BinnedCourses, Histograms
 from uq.analysis.kept import Courses, Kept
 from uq.analysis.moments import Moments
 from uq.analysis.policy import LARGEST_LOSS, TOO_MANY_LOST, WITHHELD, Counted, Named, stacked
 from uq.analysis.quantiles import Levels, outermost
+from uq.analysis.skewed import mean as mean_of
+from uq.analysis.skewed import standard_deviation
 
 # `map`, or something like it that uses several threads.
 Apply = Callable[[Callable[[int], Counted], Iterable[int]], Iterable[Counted]]
@@ -42,12 +45,12 @@ class Moment:
 
 
 def mean_and_deviation(moments: Moments, centre: Floats, confidence: float) -> MeanAndDeviation:
-    """From the sums of shifted values; mean: Student's t over replicates, deviation: jackknife."""
+    """From the sums of shifted values; intervals as in `uq.analysis.skewed`."""
     sums = moments.pieces.by_replicate()
     rows: Counts = moments.pieces.rows - sums["lost"]
     counted = 2 * rows
-    mean = ratio(sums["first"], counted, confidence)
-    deviation = standard_deviation(sums["first"], sums["second"], counted, confidence)
+    mean = mean_of(sums["first"], counted, confidence).times(moments.unit)
+    deviation = standard_deviation(sums["first"], sums["second"], counted, confidence).times(moments.unit)
     lost = sums["lost"].sum(axis=0)
     too_many = lost > LARGEST_LOSS * moments.pieces.rows * len(rows)
     shifted = Estimate(*(end + centre for end in (mean.value, mean.low, mean.high)))
@@ -74,13 +77,14 @@ def findings(ask: Ask, tallies: Watched, nominal: Floats | None, apply: Apply) -
     levels = Levels(ask.quantiles, ask.confidence)
     found = all_quantiles(tallies.courses.values, many * times, levels, apply)
     moment = mean_and_deviation(tallies.moments, ask.centre.reshape(-1), ask.confidence)
+    shares = Looked(tallies.courses.values, tallies.moments, ask.centre.reshape(-1)).largest_shares(moment.deviation)
     size = simultaneous_size(ask, tallies.courses.deviations)
     groups = []
     for place, quantity in enumerate(ask.watched):
         here = slice(place * times, (place + 1) * times)
         variables = _quantiles(quantity, ask, found.map(lambda array, here=here: array[here].T))  # type: ignore[misc]
         withheld = np.asarray(found.lost[here].any(axis=1) & (ask.failures == "refuse"))
-        variables |= moment_variables(Moment(quantity, ("time",)), moment, here, withheld)
+        variables |= told(moment_variables(Moment(quantity, ("time",)), moment, here, withheld), shares[here])
         if nominal is not None:
             course = np.asarray(nominal[place], dtype=np.float64)[ask.grid]
             variables["nominal"] = Variable(("time",), course, "the run with all inputs at their median", quantity.unit)

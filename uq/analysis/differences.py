@@ -12,28 +12,19 @@ from typing import Any
 import numpy as np
 from numpy.typing import NDArray
 
+from uq.analysis import jackknife
 from uq.analysis.ask import Ask, Counts, Floats, LimitAsked, Quantity
 from uq.analysis.estimate import Estimate
 from uq.analysis.finding import Finding, Variable
 from uq.analysis.histograms import Histograms
-from uq.analysis.jackknife import (
-    Jackknifed,
-    Passed,
-    Way,
-    deviation_of,
-    paired,
-    paired_shares,
-    ratio_of,
-    unpaired,
-    unpaired_shares,
-)
+from uq.analysis.jackknife import Jackknifed, Passed, Way, deviation_of, ratio_of
 from uq.analysis.kept import Kept
 from uq.analysis.moments import Moments
 from uq.analysis.pieces import Array
 from uq.analysis.policy import LARGEST_LOSS, TOO_MANY_LOST, WITHHELD, Counted, Named, stacked
 from uq.analysis.quantiles import Levels
 from uq.analysis.tallies import Tallies
-from uq.analysis.without import Cell, Members, binned_cell, kept_cell
+from uq.analysis.without import Cell, Members, binned_cell, kept_cell, same_values
 from uq.design.design import Design
 
 Places = NDArray[np.intp]
@@ -50,20 +41,24 @@ class Run:
 
 @dataclass(frozen=True)
 class Draws:
-    """Whether two runs share draws, said in words; how estimates and how shares are subtracted then."""
+    """Whether two runs share draws, said in words; how quantiles, how means and deviations, and how shares are subtracted then."""
 
     name: str
     words: str
     way: Way
+    moments: Way
     shares: Callable[[Passed, Passed, float], Estimate]
 
 
-SHARED = Draws("paired", "intervals from paired replicates: both use the same draws of the inputs they share", paired, paired_shares)
+SHARED = Draws(
+    "paired",
+    "intervals from paired replicates: both use the same draws of the inputs they share",
+    *(jackknife.paired, jackknife.paired_moments, jackknife.paired_shares),
+)
 OWN = Draws(
     "unpaired",
     "intervals from unpaired replicates, wider than with the same draws: the inputs do not share draws",
-    unpaired,
-    unpaired_shares,
+    *(jackknife.unpaired, jackknife.unpaired_moments, jackknife.unpaired_shares),
 )
 
 
@@ -169,9 +164,10 @@ class _Moments:
         sums = moments.pieces.by_replicate()
         rows: Counts = moments.pieces.rows - sums["lost"]
         lost = sums["lost"].sum(axis=0)
-        mean = ratio_of(sums["first"], 2 * rows).plus(centre)
+        mean = ratio_of(sums["first"], 2 * rows).times(moments.unit).plus(centre)
         too_many = np.asarray(lost > LARGEST_LOSS * moments.pieces.rows * len(rows))
-        return cls(mean, deviation_of(sums["first"], sums["second"], 2 * rows), np.asarray(lost > 0), too_many)
+        deviation = deviation_of(sums["first"], sums["second"], 2 * rows).times(moments.unit)
+        return cls(mean, deviation, np.asarray(lost > 0), too_many)
 
 
 def _mean_and_sd(pair: _Pair, moments: list[_Moments], cells: list[Places], named: Quantity, dims: tuple[str, ...]) -> dict[str, Variable]:
@@ -188,7 +184,7 @@ def _mean_and_sd(pair: _Pair, moments: list[_Moments], cells: list[Places], name
     means, deviations = [cut(each.mean, at) for each, at in both], [cut(each.deviation, at) for each, at in both]
     variables: dict[str, Variable] = {}
     for name, words, each in (("mean", "means", means), ("sd", "standard deviations", deviations)):
-        found = pair.difference(each[0], each[1]).where(~too_many & ~withheld)
+        found = pair.draws.moments(each[0], each[1], pair.ask.confidence).where(~too_many & ~withheld)
         if not dims:
             found = Estimate(found.value[0], found.low[0], found.high[0])
         variables |= Named(name, dims, f"difference of {words} of {label}", unit).variables(found, reason)
@@ -212,8 +208,13 @@ class _Cells:
 
 def _quantiles(pair: _Pair, one: _Cells, other: _Cells) -> Counted:
     """Differences of quantiles [cell, level]."""
-    found = pair.apply(lambda place: _quantile_difference(pair, one.read(place), other.read(place)), range(len(one.cells)))
-    return stacked(list(found))
+
+    def difference(place: int) -> Counted:
+        if same_values((one.values, one.cells[place]), (other.values, other.cells[place])):
+            return Counted.complete(Estimate(*(np.zeros((1, len(pair.ask.quantiles))) for _ in range(3))))
+        return _quantile_difference(pair, one.read(place), other.read(place))
+
+    return stacked(list(pair.apply(difference, range(len(one.cells)))))
 
 
 def _quantile_difference(pair: _Pair, *parts: tuple[Cell, Counts]) -> Counted:

@@ -29,6 +29,11 @@ class Estimate:
         """The same, nan where not `known`."""
         return Estimate(*(np.where(known, end, np.nan) for end in (self.value, self.low, self.high)))
 
+    def times(self, unit: Floats) -> Estimate:
+        """The same in another unit: each number times that many."""
+        with np.errstate(over="ignore", invalid="ignore"):
+            return Estimate(self.value * unit, self.low * unit, self.high * unit)
+
 
 def about(value: Floats, half: Floats) -> Estimate:
     """A value with the interval value - half .. value + half."""
@@ -64,21 +69,3 @@ def rounding_sd(counted: Numbers) -> Floats:
     """
     with np.errstate(divide="ignore"):
         return np.asarray(1 / (np.sqrt(12.0) * counted.mean(axis=0)))
-
-
-def standard_deviation(first: Floats, second: Floats, counted: Numbers, confidence: float) -> Estimate:
-    """The standard deviation of all values, from sums of shifted values and of their squares [replicate, ..] over `counted` values each.
-
-    Interval: delete-one-replicate jackknife with Student's t (Efron and Stein 1981, doi:10.1214/aos/1176345462). Never below 0.
-    """
-    with np.errstate(invalid="ignore", divide="ignore", over="ignore"):
-        value = _deviation(first.sum(axis=0), second.sum(axis=0), counted.sum(axis=0))
-        without = _deviation(first.sum(axis=0) - first, second.sum(axis=0) - second, counted.sum(axis=0) - counted)
-        replicates = len(first)
-        spread = np.sqrt((replicates - 1) / replicates * ((without - without.mean(axis=0)) ** 2).sum(axis=0))
-        half = t_quantile(confidence, replicates) * spread
-        return Estimate(value, np.maximum(value - half, 0.0), value + half)
-
-
-def _deviation(first: Floats, second: Floats, counted: Numbers) -> Floats:
-    return np.asarray(np.sqrt(np.maximum(second - first**2 / counted, 0.0) / (counted - 1)))

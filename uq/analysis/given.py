@@ -21,6 +21,7 @@ from numpy.typing import NDArray
 
 from uq.analysis.ask import Ask, Classes, Floats
 from uq.analysis.estimate import Estimate, about, t_quantile
+from uq.analysis.moments import InUnits, outcome_units, watched_units
 from uq.analysis.pieces import Array, Pieces, reversed_rows, tree_sum
 from uq.analysis.sample import Sample
 from uq.analysis.sobol import over_time
@@ -50,7 +51,8 @@ def pilot_classes(ask: Ask, x: Floats, replicates: int) -> Ask:
 
 @dataclass(frozen=True, eq=False)
 class ByClass:
-    """Sums by replicate over A and B members of one kind of output, shifted by its centre, 0 where it has no value.
+    """Sums by replicate over A and B members of one kind of output, shifted by its centre and divided by its
+    unit (`moments.InUnits`), 0 where it has no value.
 
     count, x, xx [input, class]: members, their inputs (shifted and divided by scale) and squares; y, xy [input, class, cell]: outputs and
     products; square [cell]: squares of outputs.
@@ -59,13 +61,13 @@ class ByClass:
     pieces: Pieces
 
     @classmethod
-    def of(cls, ask: Ask, sample: Sample, outputs: tuple[Floats, Floats], centre: Floats) -> ByClass:
+    def of(cls, ask: Ask, sample: Sample, outputs: tuple[Floats, Floats], scale: InUnits) -> ByClass:
         """The sums of one block from the outputs of its A and of its B members, [row, cell] each."""
         classes = ask.classes
         if classes is None:
             raise ValueError("the inputs are not cut into classes: `given.pilot_classes` comes first")
         # A and B members of a row are neighbours, so that rows are leaves of the tree as everywhere.
-        y = _interleaved(*outputs) - centre
+        y = (_interleaved(*outputs) - scale.centre) / scale.unit
         y[~np.isfinite(y)] = 0.0
         x = (_interleaved(sample.x.a, sample.x.b) - classes.centre) / classes.scale
         edges = (classes.edges - classes.centre[:, None]) / classes.scale[:, None]
@@ -92,12 +94,12 @@ def watched_by_class(ask: Ask, sample: Sample) -> ByClass:
     """Of the watched quantities at the output times."""
     values = sample.values
     chosen = tuple((part if ask.grid_is_all else part[..., ask.grid]).reshape(len(part), -1) for part in (values.a, values.b))
-    return ByClass.of(ask, sample, (chosen[0], chosen[1]), ask.centre.reshape(-1))
+    return ByClass.of(ask, sample, (chosen[0], chosen[1]), watched_units(ask))
 
 
 def outcomes_by_class(ask: Ask, sample: Sample) -> ByClass:
     """Of the outcomes."""
-    return ByClass.of(ask, sample, (sample.outcomes.a, sample.outcomes.b), ask.outcome_centre)
+    return ByClass.of(ask, sample, (sample.outcomes.a, sample.outcomes.b), outcome_units(ask))
 
 
 def limits_by_class(ask: Ask, sample: Sample) -> ByClass:
@@ -110,7 +112,7 @@ def limits_by_class(ask: Ask, sample: Sample) -> ByClass:
         return np.where(gone & ~came, np.nan, came).reshape(len(came), -1)
 
     a, b = indicators(sample.conditions.a), indicators(sample.conditions.b)
-    return ByClass.of(ask, sample, (a, b), np.zeros(a.shape[1]))
+    return ByClass.of(ask, sample, (a, b), InUnits(np.zeros(a.shape[1]), np.ones(a.shape[1])))
 
 
 def _interleaved(a: Array, b: Array) -> Array:

@@ -1,8 +1,9 @@
 """Estimates with the same estimates without each replicate, and differences of two of them with intervals.
 
-Delete-one-replicate jackknife (Efron and Stein 1981, doi:10.1214/aos/1176345462) with Student's t. Where both use the same draws, what is
-left out of one is left out of the other, and the error that both share cancels; where they do not, their variances add and the degrees of
-freedom are those of Welch 1947, doi:10.1093/biomet/34.1-2.28.
+Delete-one-replicate jackknife (Efron and Stein 1981, doi:10.1214/aos/1176345462) with Student's t, for means and deviations allowing for
+skewed errors (`uq.analysis.skewed`). Where both use the same draws, what is left out of one is left out of the other, and the error that
+both share cancels; where they do not, their variances add and the degrees of freedom are those of Welch 1947,
+doi:10.1093/biomet/34.1-2.28.
 """
 
 from __future__ import annotations
@@ -16,19 +17,25 @@ from scipy.special import stdtrit
 from uq.analysis.ask import Counts, Floats
 from uq.analysis.estimate import Estimate, Numbers, t_quantile
 from uq.analysis.probabilities import FEW_PER_REPLICATE, clopper_pearson, probability
+from uq.analysis.skewed import Errors, around, leverage, power_of_two, variances
 
 
 @dataclass(frozen=True, eq=False)
 class Jackknifed:
-    """An estimate [..] and the same without each replicate [replicate, ..]; `least`: its variance is at least that."""
+    """An estimate [..] and the same without each replicate [replicate, ..]; `least`: its standard error is at least that."""
 
     value: Floats
     without: Floats
     least: Floats | float = 0.0
 
-    def variance(self) -> Floats:
-        """The jackknife's variance of the value."""
+    def error(self) -> Floats:
+        """The jackknife's standard error of the value."""
         return np.maximum(spread(self.without), self.least)
+
+    def times(self, unit: Floats) -> Jackknifed:
+        """The same in another unit: each number times that many."""
+        with np.errstate(over="ignore", invalid="ignore"):
+            return Jackknifed(self.value * unit, self.without * unit, self.least * unit)
 
     def plus(self, shift: Floats) -> Jackknifed:
         """The same with something certain added."""
@@ -36,10 +43,8 @@ class Jackknifed:
 
 
 def spread(without: Floats) -> Floats:
-    """Variance of an estimate from its values without each replicate [replicate, ..]."""
-    replicates = len(without)
-    with np.errstate(invalid="ignore"):
-        return np.asarray((replicates - 1) / replicates * ((without - without.mean(axis=0)) ** 2).sum(axis=0))
+    """Standard error of an estimate from its values without each replicate [replicate, ..]."""
+    return Errors.of(leverage(without)).se
 
 
 # How two estimates are subtracted (the second less the first) with an interval of some confidence.
@@ -50,18 +55,50 @@ def paired(one: Jackknifed, other: Jackknifed, confidence: float) -> Estimate:
     """Other less one, both from the same draws."""
     with np.errstate(invalid="ignore"):
         away = other.without - one.without
-        variance = np.maximum(spread(away), one.least + other.least)
-        return _about(other.value - one.value, t_quantile(confidence, len(away)) * np.sqrt(variance))
+        error = np.maximum(spread(away), np.hypot(one.least, other.least))
+        return _about(other.value - one.value, t_quantile(confidence, len(away)) * error)
 
 
 def unpaired(one: Jackknifed, other: Jackknifed, confidence: float) -> Estimate:
     """Other less one, from draws of their own (Welch)."""
-    parts = [(each.variance(), len(each.without) - 1) for each in (one, other)]
+    here, there = one.error(), other.error()
+    factor = welch((here, len(one.without)), (there, len(other.without)), confidence)
+    with np.errstate(invalid="ignore"):
+        error = np.hypot(here, there)
+        return _about(other.value - one.value, np.where(error > 0, factor, 0.0) * error)
+
+
+def paired_moments(one: Jackknifed, other: Jackknifed, confidence: float) -> Estimate:
+    """Other less one, both from the same draws, of means or deviations: the interval allows for skewness (`skewed`)."""
+    with np.errstate(invalid="ignore"):
+        return _open(around(other.value - one.value, leverage(other.without - one.without), confidence))
+
+
+def unpaired_moments(one: Jackknifed, other: Jackknifed, confidence: float) -> Estimate:
+    """Other less one, from draws of their own (Welch), of means or deviations: the interval allows for skewness (`skewed`)."""
+    here, there = (Errors.of(leverage(each.without)) for each in (one, other))
+    factor = welch((here.se, len(one.without)), (there.se, len(other.without)), confidence)
+    below, above = there.less(here).ends(factor)
+    with np.errstate(invalid="ignore"):
+        value = other.value - one.value
+        return _open(Estimate(value, value - below, value + above))
+
+
+def welch(one: tuple[Floats, int], other: tuple[Floats, int], confidence: float) -> Floats:
+    """Student's t for the difference of two independent estimates, from the standard error and the replicates of each."""
+    largest = power_of_two(np.fmax(one[0], other[0]))
     with np.errstate(invalid="ignore", divide="ignore"):
+        parts = [((each / largest) ** 2, replicates - 1) for each, replicates in (one, other)]
         total = parts[0][0] + parts[1][0]
         freedom = total**2 / sum(variance**2 / each for variance, each in parts)
-        factor = np.where(total > 0, stdtrit(np.where(freedom > 0, freedom, 1.0), 0.5 + confidence / 2), 0.0)
-        return _about(other.value - one.value, factor * np.sqrt(total))
+        return np.asarray(stdtrit(np.where(freedom > 0, freedom, 1.0), 0.5 + confidence / 2))
+
+
+def _open(found: Estimate) -> Estimate:
+    """Ends that are no numbers are infinite."""
+    known = ~np.isnan(found.value)
+    low, high = (np.where(np.isnan(end) & known, far, end) for end, far in ((found.low, -np.inf), (found.high, np.inf)))
+    return Estimate(found.value, low, high)
 
 
 def _about(value: Floats, half: Floats) -> Estimate:
@@ -79,13 +116,8 @@ def ratio_of(numerator: Numbers, denominator: Numbers) -> Jackknifed:
 
 def deviation_of(first: Floats, second: Floats, counted: Numbers) -> Jackknifed:
     """The standard deviation of all values, from sums of shifted values and of their squares over `counted` values [replicate, ..]."""
-
-    def deviation(one: Floats, two: Floats, many: Numbers) -> Floats:
-        with np.errstate(invalid="ignore", divide="ignore"):
-            return np.asarray(np.sqrt(np.maximum(two - one**2 / many, 0.0) / (many - 1)))
-
-    one, two, many = first.sum(axis=0), second.sum(axis=0), counted.sum(axis=0)
-    return Jackknifed(deviation(one, two, many), deviation(one - first, two - second, many - counted))
+    variance, without = variances(first, second, counted)
+    return Jackknifed(np.sqrt(variance), np.sqrt(without))
 
 
 @dataclass(frozen=True, eq=False)

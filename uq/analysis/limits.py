@@ -40,7 +40,9 @@ def _limit(ask: Ask, limit: LimitAsked, counts: dict[str, Counts], members: int)
     variables |= _first_time(ask, limit, counts)
     variables["by"] = Variable(("by",), np.asarray(limit.by, dtype=np.float64), "time by which", ask.time_unit)
     variables |= Named("ever_by", ("by",), f"probability that it has been true by then: {label}").counted(ever_by, ask.failures)
-    return Finding(f"limits/{limit.name}", variables, {"when": limit.when, **_verdict(ask, limit, variables, ever_by)})
+    # Whoever failed had perhaps passed before; a study that refuses failed members has no verdict on a time at which there are any.
+    failed = bool(counts["unsure"][:, : by[-1] + 1].any()) if len(by) else False
+    return Finding(f"limits/{limit.name}", variables, {"when": limit.when, **_verdict(ask, limit, variables, failed)})
 
 
 def _first_time(ask: Ask, limit: LimitAsked, counts: dict[str, Counts]) -> dict[str, Variable]:
@@ -76,11 +78,15 @@ def _ends(estimate: Estimate) -> tuple[Array, Array, Array]:
     return estimate.value, estimate.low, estimate.high
 
 
-def _verdict(ask: Ask, limit: LimitAsked, variables: dict[str, Variable], ever_by: Counted) -> dict[str, object]:
-    """Met where the upper end at the last `by` is at most the accepted probability, not met where the lower end is above it."""
+def _verdict(ask: Ask, limit: LimitAsked, variables: dict[str, Variable], failed: bool) -> dict[str, object]:
+    """Met where the upper end at the last `by` is at most the accepted probability, not met where the lower end is above it.
+
+    failed: whether any member had failed by then, or was not known to have passed or not; then a policy of refusal gives none.
+    """
     if limit.accept is None or not limit.by:
         return {}
+    if ask.failures == "refuse" and failed:
+        return {"accept": limit.accept, "reason": WITHHELD}
     low, high = (float(variables[name].data[-1]) for name in ("ever_by_low", "ever_by_high"))
     verdict = "met" if high <= limit.accept else "not met" if low > limit.accept else "not settled"
-    withheld = {"reason": WITHHELD} if ask.failures == "refuse" and bool(ever_by.lost[-1]) else {}
-    return {"accept": limit.accept, "verdict": verdict, **withheld}
+    return {"accept": limit.accept, "verdict": verdict}

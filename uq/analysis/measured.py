@@ -20,6 +20,7 @@ from uq.analysis.estimate import Estimate, ratio, rounding_sd
 from uq.analysis.finding import Finding, Variable
 from uq.analysis.pieces import Pieces, reversed_rows, tree_sum
 from uq.analysis.policy import WITHHELD, Counted, Named
+from uq.analysis.probabilities import clopper_pearson
 from uq.analysis.quantiles import outermost
 from uq.analysis.sample import Sample
 
@@ -105,18 +106,20 @@ def _finding(ask: Ask, observed: Observed, found: Counted) -> Finding:
     variables |= Named("below", shown, words).counted(found, ask.failures)
     low, high = min(ask.quantiles), max(ask.quantiles)
     ends = Estimate(*(variables[f"below{end}"].data for end in ("", "_low", "_high")))
-    inside = Estimate(
-        np.asarray(_mean((ends.value >= low) & (ends.value <= high), ends.value)),
-        np.asarray(_mean((ends.low >= low) & (ends.high <= high), ends.value)),
-        np.asarray(_mean((ends.high >= low) & (ends.low <= high), ends.value)),
-    )
+    inside = _share_of((ends.value >= low) & (ends.value <= high), ends.value, ask.confidence)
+    surely = _share_of((ends.low >= low) & (ends.high <= high), ends.value, ask.confidence)
+    perhaps = _share_of((ends.high >= low) & (ends.low <= high), ends.value, ask.confidence)
+    inside = Estimate(inside.value, surely.low, perhaps.high)
     share = float(f"{outermost(ask.quantiles):.9g}")
     words = f"share of the observations between the outermost quantiles of the forecast, measurement error included: {label}"
     reason = WITHHELD if ask.failures == "refuse" and found.lost.any() else ""
-    variables |= Named("share_inside", (), words, "1", {"share": share}).variables(inside, reason)
+    comment = "interval: exact binomial, as if observations were independent; those that may lie inside or not count to either side"
+    variables |= Named("share_inside", (), words, "1", {"share": share, "comment": comment}).variables(inside, reason)
     return Finding(f"measured/{quantity.name}", variables)
 
 
-def _mean(flags: Flags, known: Floats) -> float:
-    """The share of true ones; nan where not all are known."""
-    return float(np.nan) if np.isnan(known).any() or not len(known) else float(flags.mean())
+def _share_of(flags: Flags, known: Floats, confidence: float) -> Estimate:
+    """The share of true ones among observations, with the exact binomial interval; nan where not all are known."""
+    if np.isnan(known).any() or not len(known):
+        return Estimate(*(np.array(np.nan) for _ in range(3)))
+    return clopper_pearson(np.array(int(flags.sum())), np.array(len(flags)), confidence)

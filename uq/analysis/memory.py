@@ -14,7 +14,8 @@ def held_bytes(ask: Ask, replicates: int) -> int:
     cells += len(ask.outcomes) if ask.asks("outcomes") or ask.asks("ranking") else 0
     mixed = len(ask.mixed) if ask.asks("ranking") else 0
     places = len(ask.limits) * (len(ask.judged) + 1) if ask.limits else 0
-    sums = 8 * replicates * (cells * (3 + 3 * mixed) + places * (8 + 3 * mixed) + 2 * len(ask.outcomes) + 16)
+    each = 1 if ask.dependent else 3
+    sums = 8 * replicates * (cells * (3 + each * mixed) + places * (8 + 3 * mixed) + 2 * len(ask.outcomes) + 16)
     if ask.keeps:
         return kept_bytes(ask, ask.members) + sums
     # As many histograms as there are kept values of one member.

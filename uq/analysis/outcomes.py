@@ -8,6 +8,7 @@ import numpy as np
 
 from uq.analysis.ask import Ask, Counts
 from uq.analysis.bands import Moment, mean_and_deviation, moment_variables
+from uq.analysis.few import Looked, told
 from uq.analysis.finding import Finding
 from uq.analysis.histograms import Histograms
 from uq.analysis.kept import Kept
@@ -62,6 +63,7 @@ def findings(ask: Ask, tallies: Taken) -> tuple[Finding, ...]:
     gone: Counts = np.broadcast_to(counts["failed"][:, None], without.shape)
     found = tallies.kept.quantiles(0, len(ask.outcomes), Levels(ask.quantiles, ask.confidence), without.T)
     moment = mean_and_deviation(tallies.moments, ask.outcome_centre, ask.confidence)
+    shares = Looked(tallies.kept, tallies.moments, ask.outcome_centre).largest_shares(moment.deviation)
     missing = probability_both_ways(without, gone, members, ask.confidence)
     groups = []
     for place, quantity in enumerate(ask.outcomes):
@@ -69,7 +71,7 @@ def findings(ask: Ask, tallies: Taken) -> tuple[Finding, ...]:
         here = found.at(place)
         variables = Named("quantiles", ("quantile",), f"quantiles of {label}", quantity.unit).counted(here, ask.failures)
         withheld = np.asarray(here.lost.any() and ask.failures == "refuse")
-        variables |= moment_variables(Moment(quantity, ()), moment, place, withheld)
+        variables |= told(moment_variables(Moment(quantity, ()), moment, place, withheld), shares[place])
         variables |= Named("missing", (), f"share of members without a value of {label}").counted(missing.at(place), ask.failures)
         groups.append(Finding(f"outcomes/{quantity.name}", variables))
     return tuple(groups)

@@ -96,7 +96,15 @@ class Named:
         if found.error is not None and found.share is not None:
             binned = {"bin_error": _largest(found.error), "bin_error_share": _largest(found.share)}
             named = replace(self, attributes={**(self.attributes or {}), **binned})
-        return _POLICIES[policy](named, found, reason)
+        return {**_POLICIES[policy](named, found, reason), **self._binned(found)}
+
+    def _binned(self, found: Counted) -> dict[str, Variable]:
+        """What every number may be off because values were counted into bins; nothing where they were kept."""
+        if found.error is None or found.share is None:
+            return {}
+        off = f"may be off by so much, since values were counted into bins: {self.long_name}"
+        share = Variable(self.dims, np.asarray(found.share, dtype=np.float64), f"as a share of the width from 5 to 95 %, {off}", "1")
+        return {f"{self.name}_bin_error": self._one(found.error, off), f"{self.name}_bin_error_share": share}
 
     def _one(self, data: Floats, long_name: str, further: Mapping[str, Any] | None = None) -> Variable:
         return Variable(self.dims, np.asarray(data, dtype=np.float64), long_name, self.unit, {**(self.attributes or {}), **(further or {})})

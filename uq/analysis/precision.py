@@ -1,13 +1,12 @@
 """How precise the headline numbers are, whether that is enough, and how many solves would be.
 
 Headline numbers: probabilities at `by`; quantiles of outcomes, and of watched quantities at the last time; overall indices, indices of
-outcomes, and of limits at the last `by`. Three things settle separately: the values, the order of the inputs, which inputs may be dropped
-(Sarrazin, Pianosi and Wagener 2016, doi:10.1016/j.envsoft.2016.02.005).
+outcomes, and of limits at the last `by`. What else settles, the order of the inputs and which may be dropped, is in `uq.analysis.places`.
 """
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Mapping, Sequence
+from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 from typing import Literal, Protocol
 
@@ -16,14 +15,10 @@ from numpy.typing import NDArray
 
 from uq.analysis.ask import Ask, Floats
 from uq.analysis.finding import Finding, Variable
-from uq.analysis.order import ordered
-from uq.analysis.ranking import TOO_FEW
 
 Kind = Literal["quantiles", "probabilities", "indices"]
 Flags = NDArray[np.bool_]
 
-# An input may be dropped where the upper end of its total index (with dependence its Shapley effect) is below this in everything ranked.
-NEGLIGIBLE = 0.01
 # The 5-95 % width of a normal law in standard deviations, for quantities of which these two quantiles are not asked or are equal.
 _NORMAL_WIDTH = 3.2897072539
 # Something that was the same in each of N independent rows differs in at most 3/N of them at 95 % (the rule of three).
@@ -128,18 +123,24 @@ def _of_limits(finding: Finding, ask: Ask, members: int) -> list[Headline]:
 
 
 def _of_ranking(finding: Finding, ask: Ask, members: int) -> list[Headline]:
-    """Overall indices, those of an outcome, those of a limit at its last time; ends that coincide are opened by the rule of three."""
+    """Overall indices, those of an outcome, those of a limit at its last time; ends that coincide are opened by the rule of three.
+
+    Where inputs depend on each other there are no total indices: nothing is asked of them.
+    """
     ending = next((each for each in ("_overall", "_by") if f"first{each}" in finding.variables), "")
+    dependent = f"shapley{ending}" in finding.variables
+    # A limit that too few members passed may be ranked when there are more; nothing else that is missing.
+    flags = finding.variables.get("few_by") if ending == "_by" else None
+    few = flags is not None and flags.data.size > 0 and bool(flags.data[-1])
     found = []
     for kind in ("first", "total", "shapley", "first_group", "total_group", "shapley_group"):
-        variable = finding.variables.get(kind + ending)
+        variable = None if dependent and kind.startswith("total") else finding.variables.get(kind + ending)
         if variable is None or (ending == "_by" and variable.data.shape[-1] == 0):
             continue
         ends = (np.asarray(finding.variables[f"{kind}{ending}{end}"].data) for end in ("", "_low", "_high"))
         value, low, high = (each[..., -1] if ending == "_by" else each for each in ends)
         least = np.where(high > low, 0.0, _RULE_OF_THREE / max(members // 2, 1))
-        # A limit that too few members passed may be ranked when there are more; nothing else that is missing.
-        undefined = np.isnan(value) & (TOO_FEW not in str(variable.attributes.get("reason", "")))
+        undefined = np.isnan(value) & ((not few) | refused(finding, kind))
         found.append(
             Headline(
                 finding.group, kind + ending, "indices", variable.dims[:1], value, low - least, high + least, np.ones(value.shape),
@@ -147,6 +148,12 @@ def _of_ranking(finding: Finding, ask: Ask, members: int) -> list[Headline]:
             )
         )  # fmt: skip
     return found
+
+
+def refused(finding: Finding, kind: str) -> Flags:
+    """Of one kind of share, where an input has none because it is drawn with others, which have one together [input]."""
+    together = finding.variables.get("drawn_with")
+    return np.asarray(together.data != "") if kind == "shapley" and together is not None else np.zeros(1, dtype=np.bool_)
 
 
 _READERS = {"bands": _of_bands, "outcomes": _of_outcomes, "limits": _of_limits, "ranking": _of_ranking}
@@ -157,56 +164,6 @@ def settled(headlines: Sequence[Headline], asked: Asked) -> bool:
     wanted = [each for each in headlines if getattr(asked, each.kind) is not None]
     defined = sum(int((~each.undefined).sum()) for each in wanted)
     return defined > 0 and all(bool((each.reached(asked) | each.undefined).all()) for each in wanted)
-
-
-@dataclass(frozen=True)
-class Share:
-    """An input's share in one ranking."""
-
-    input: str
-    value: float
-    low: float
-    high: float
-
-
-def shares(headlines: Sequence[Headline], inputs: Sequence[str]) -> dict[str, list[Share]]:
-    """By ranking the share of every input: its total index, with dependence its Shapley effect; rankings without any are left out."""
-    found: dict[str, list[Share]] = {}
-    for each in headlines:
-        if each.kind == "indices" and each.dims == ("input",) and each.name.startswith(("total", "shapley")) and not each.undefined.all():
-            ends = zip(inputs, each.value, each.low, each.high, strict=True)
-            found[each.group] = [Share(name, float(value), float(low), float(high)) for name, value, low, high in ends]
-    return found
-
-
-def order_of_inputs(headlines: Sequence[Headline], inputs: Sequence[str]) -> Mapping[str, list[list[str]]]:
-    """By ranking the inputs in an order only as fine as the intervals allow: groups of inputs, within a group it is not settled."""
-    return {
-        ranking: [[share.input for share in group] for group in ordered(every, lambda share: share)]
-        for ranking, every in shares(headlines, inputs).items()
-    }
-
-
-@dataclass(frozen=True)
-class Dropping:
-    """Inputs that may be dropped (fixed anywhere in their range), that must not be, and of which it is not settled."""
-
-    may: tuple[str, ...]
-    must_not: tuple[str, ...]
-    open: tuple[str, ...]
-
-
-def dropping(headlines: Sequence[Headline], inputs: Sequence[str], negligible: float = NEGLIGIBLE) -> Dropping:
-    """An input may be dropped where its share is surely below `negligible` in every ranking, must not where it surely is not in one."""
-    rankings = shares(headlines, inputs).values()
-    may, must_not = [], []
-    for place, name in enumerate(inputs):
-        every = [ranking[place] for ranking in rankings]
-        if any(share.low >= negligible for share in every):
-            must_not.append(name)
-        elif every and all(share.high < negligible for share in every):
-            may.append(name)
-    return Dropping(tuple(may), tuple(must_not), tuple(name for name in inputs if name not in {*may, *must_not}))
 
 
 @dataclass(frozen=True, eq=False)

@@ -40,6 +40,8 @@ Flags = NDArray[np.bool_]
 class Shares:
     """Numerators of indices of every mixed row [replicate, set, cell], variances [replicate, cell]; lost: cells with too many rows lost.
 
+    unit [cell]: outputs are in it.
+
     With dependence there is no first-order numerator; `first` is then of no sets, and `total` is the cost of a set in Shapley effects.
     """
 
@@ -47,6 +49,7 @@ class Shares:
     total: Floats
     variances: Floats
     lost: Flags
+    unit: Floats
 
     @classmethod
     def of(cls, moments: Moments, dependent: bool) -> Shares:
@@ -59,20 +62,21 @@ class Shares:
             total = total_numerator(sums["square"], rows[:, None])
             first = total[:, :0] if dependent else first_numerator(sums["product"], sums["difference"], mean, rows[:, None])
             variances = variance(sums["first"], sums["second"], mean, rows)
-        return cls(first, total, variances, _too_many(sums["lost"], asked))
+        return cls(first, total, variances, _too_many(sums["lost"], asked), moments.unit)
 
     def cells(self, here: slice | NDArray[np.intp]) -> Shares:
         """Some of the cells."""
-        return Shares(self.first[..., here], self.total[..., here], self.variances[..., here], self.lost[..., here])
+        return Shares(self.first[..., here], self.total[..., here], self.variances[..., here], self.lost[here], self.unit[here])
 
     def overall(self, times: Floats) -> Shares:
         """Integrated over time, one cell; lost where any time is."""
         first, total, variances = (over_time(each, times)[..., None] for each in (self.first, self.total, self.variances))
-        return Shares(first, total, variances, np.asarray(self.lost.any(keepdims=True)))
+        return Shares(first, total, variances, np.asarray(self.lost.any(keepdims=True)), self.unit[:1])
 
     def noise(self, floor: float) -> Flags:
         """Cells whose variance is at or below the square of the floor, or is no number."""
-        return np.asarray(~(self.variances.mean(axis=0) > floor**2))
+        with np.errstate(over="ignore"):
+            return np.asarray(~(self.variances.mean(axis=0) > (floor / self.unit) ** 2))
 
 
 def _too_many(lost: Counts, rows: int) -> Flags:
@@ -143,11 +147,15 @@ def limit_findings(ask: Ask, passings: Passings, by_class: ByClass | None = None
         variables = _variables(ask, ranked.cells(grid), few[grid], _Words(label, "", ("time",), TOO_FEW))
         variables["by"] = Variable(("by",), np.asarray(limit.by, dtype=np.float64), "time by which", ask.time_unit)
         variables |= _variables(ask, ranked.cells(by), few[by], _Words(label, "_by", ("by",), TOO_FEW))
+        variables["few_by"] = Variable(
+            ("by",), (few & ~shares.lost)[by].astype(np.int8), "whether shares by then want more members", attributes=_FLAGS
+        )
         groups.append(_finding(ask, limit.name, variables))
     return tuple(groups)
 
 
 _WITH_B = ("both", "b_and_m")
+_FLAGS = {"flag_values": np.array([0, 1], dtype=np.int8), "flag_meanings": "enough_or_not_to_be_had too_few"}
 _COUNTS = {True: ("lost", "a", "b", "m", "a_and_m"), False: ("lost", "a", "b", "m", "a_and_m", *_WITH_B)}
 
 
@@ -167,7 +175,7 @@ def _of_limit(counts: dict[str, Array], asked: int) -> tuple[Shares, Flags]:
         variances = variance(a + b, a + b, mean, rows)
     passed, members = (a + b).sum(axis=0), 2 * rows.sum(axis=0)
     few = np.minimum(passed, members - passed) < FEWEST
-    return Shares(first, total, variances, _too_many(lost, asked)), np.asarray(few)
+    return Shares(first, total, variances, _too_many(lost, asked), np.ones(few.shape)), np.asarray(few)
 
 
 @dataclass(frozen=True)
@@ -195,7 +203,19 @@ def _finding(ask: Ask, name: str, variables: dict[str, Variable]) -> Finding:
     if ask.groups:
         names = np.array([group.name for group in ask.groups], dtype=str)
         variables["group"] = Variable(("group",), names, "inputs ranked together, or drawn together")
+    if any(together := _drawn_together(ask)):
+        variables["drawn_with"] = Variable(("input",), np.array(together, dtype=str), "group that an input is drawn in, if any")
     return Finding(f"ranking/{name}", variables)
+
+
+def _drawn_together(ask: Ask) -> list[str]:
+    """By input the name of the group that stands for all that is drawn with it; "" where it is drawn by itself."""
+    names = {group.places: group.name for group in ask.groups}
+    found = [""] * len(ask.inputs)
+    for unit in ask.shared_out:
+        for place in unit if len(unit) > 1 else ():
+            found[place] = names.get(tuple(sorted(unit)), "")
+    return found
 
 
 def _variables(ask: Ask, ranked: Ranked, quiet: Flags, words: _Words) -> dict[str, Variable]:

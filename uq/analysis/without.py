@@ -70,8 +70,8 @@ class Cell:
             slope = (np.maximum(high, value) - np.minimum(low, value)) / (2 * half)
             moved = value - (share.without - share.without.mean(axis=0)) * slope
             # Where replicates agree to less than one value what remains is that they are whole.
-            whole = spread(share.without) * len(counted) < rounding**2
-            least = np.where(whole, (rounding * slope) ** 2 / len(counted), 0.0)
+            whole = spread(share.without) * np.sqrt(len(counted)) < rounding
+            least = np.where(whole, rounding * slope / np.sqrt(len(counted)), 0.0)
         return Jackknifed(value, moved, least)
 
 
@@ -93,6 +93,17 @@ def kept_cell(kept: Kept, cell: int) -> Cell:
         return np.stack([(values <= each).sum(axis=1) for each in largest], axis=1)
 
     return Cell(missing, values.shape[1], Ways(at, at, at, hits))
+
+
+def same_values(one: tuple[Kept | Histograms, int], other: tuple[Kept | Histograms, int]) -> bool:
+    """Whether two cells are known to have the same value in every member; never where a member has none, which may have been anything."""
+    here, there = (_by_row(held, cell) if isinstance(held, Kept) else None for held, cell in (one, other))
+    return here is not None and there is not None and np.array_equal(here, there)
+
+
+def _by_row(kept: Kept, cell: int) -> Floats:
+    """The values of a cell [A or B, replicate and row], whatever the blocks: a piece has its A members, then its B members."""
+    return np.concatenate([kept.pieces[key][cell].reshape(2, -1) for key in sorted(kept.pieces)], axis=1)
 
 
 def binned_cell(histograms: Histograms, cell: int) -> Cell:

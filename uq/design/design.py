@@ -23,6 +23,11 @@ LEAST_MEMBERS = 512
 FIRST_ROUND = 64
 
 
+def rounded_up(members: int) -> int:
+    """The members of a design with at least so many: a power of two, at least LEAST_MEMBERS."""
+    return 1 << (max(members, LEAST_MEMBERS) - 1).bit_length()
+
+
 class Draws(Protocol):
     """What turns points into inputs; the design does not know how."""
 
@@ -72,10 +77,10 @@ class Design:
     @classmethod
     def for_members(cls, names: Sequence[str], seed: int, members: int, ranked: bool, sets: Sets | None = None) -> Design:
         """The design with at least so many A and B rows: `members` rounded up to a power of two, at least 512; `sets` as in the class."""
-        rows = -(-max(members, LEAST_MEMBERS) // (2 * REPLICATES))
+        rows = rounded_up(members) // (2 * REPLICATES)
         if rows > MOST_ROWS:
             raise ValueMistake(f"{members} members", f"at most {2 * REPLICATES * MOST_ROWS}", key="members")
-        return cls(tuple(names), seed, 1 << (rows - 1).bit_length(), REPLICATES, ranked, sets)
+        return cls(tuple(names), seed, rows, REPLICATES, ranked, sets)
 
     @property
     def members(self) -> int:

@@ -99,6 +99,11 @@ class Inputs:
         alone = {place: (place,) for place in range(len(names)) if place not in inside}
         return tuple(Unit("+".join(names[each] for each in places), places) for _, places in sorted((joint | alone).items()))
 
+    @property
+    def linked(self) -> int:
+        """How many inputs hang together by correlations, directly or through others, at most."""
+        return max((len(copula.places) for copula in self._copulas), default=0)
+
     @cached_property
     def groups(self) -> Mapping[str, tuple[int, ...]]:
         """The labels of groups, in the order of their first inputs, each with the places of its inputs."""

@@ -82,12 +82,17 @@ def _first(head: Headline, limit: LimitAnswer) -> str:
         return min([estimate.low, *below[-1:]])
 
     name = "median" if middle[0] == 0.5 else f"{per_cent(middle[0])} point"
-    text = f"where it is passed, the {name} of the first time is between {head.clock.between(before(middle[1]), middle[1].high)}"
+    text = f"where it is passed, the {name} of the first time is {_span(head, before(middle[1]), middle[1].high)}"
     if low[0] < middle[0] < high[0]:
-        ends = head.clock.between(before(Estimate(low[1].value, low[1].value)), high[1].value)
-        text += f", and {per_cent(high[0] - low[0])} of first times are between {ends}"
+        ends = _span(head, before(Estimate(low[1].value, low[1].value)), high[1].value)
+        text += f", and {per_cent(high[0] - low[0])} of first times are {ends}"
     apart = head.clock.apart(head.times)
     return text + (f" (output times being {apart})" if apart else "")
+
+
+def _span(head: Headline, low: float, high: float) -> str:
+    """Between two moments; a single one is the start, before which nothing is judged."""
+    return f"between {head.clock.between(low, high)}" if low < high else f"at the start, {head.clock.at(high)}"
 
 
 def expected_section(head: Headline) -> list[Part]:

@@ -67,7 +67,10 @@ class LimitAnswer:
 
 @dataclass(frozen=True)
 class QuantityAnswer:
-    """Of one watched quantity at its last time, or of one outcome (time is nan): quantiles by level, mean, deviation, the nominal run."""
+    """Of one watched quantity at its last time, or of one outcome (time is nan): quantiles by level, mean, deviation, the nominal run.
+
+    cautions: what is said of a mean or a deviation that rests on few members.
+    """
 
     name: str
     label: str
@@ -79,6 +82,7 @@ class QuantityAnswer:
     nominal: float
     missing: Estimate
     reason: str
+    cautions: tuple[str, ...] = ()
 
     @property
     def spread(self) -> float:
@@ -102,18 +106,25 @@ class Shares:
 
 @dataclass(frozen=True)
 class Driver:
-    """An input and its shares."""
+    """An input and its shares; or inputs that are drawn together (`members`), under one name."""
 
     input: InputRow
     shares: Shares
+    members: tuple[InputRow, ...] = ()
+
+    @property
+    def rows(self) -> tuple[InputRow, ...]:
+        """The inputs behind it."""
+        return self.members or (self.input,)
 
 
 @dataclass(frozen=True)
 class RankingAnswer:
     """What drives one thing: `of` is bands (overall), outcomes or limits (at `time`, the last `by`); drivers in the order of the study.
 
-    groups: the shares of inputs taken together, by the name of the group. shapley: whether shares are Shapley effects; then
-    `no_total` says why there is no total share.
+    places: what has a place in the order: the inputs, or in place of those drawn together what they are together. groups: the shares of
+    other inputs taken together, by the name of the group. shapley: whether shares are Shapley effects; then `no_total` says why there is no
+    total share.
     """
 
     name: str
@@ -125,6 +136,7 @@ class RankingAnswer:
     groups: tuple[tuple[str, Shares], ...] = ()
     shapley: bool = False
     no_total: str = ""
+    places: tuple[Driver, ...] = ()
 
 
 @dataclass(frozen=True)
@@ -139,7 +151,10 @@ class Pair:
 
 @dataclass(frozen=True)
 class MeasuredAnswer:
-    """Observations of one quantity: how many, the share of them between the outermost quantiles, and the share expected there."""
+    """Observations of one quantity: how many, the share of them between the outermost quantiles, and the share expected there.
+
+    widened: whether the measurement's own deviation is added to the members before, so that the band is wider than theirs.
+    """
 
     name: str
     label: str
@@ -148,6 +163,16 @@ class MeasuredAnswer:
     share_inside: Estimate
     expected: float
     reason: str
+    widened: bool = False
+
+
+@dataclass(frozen=True)
+class BinnedAnswer:
+    """A quantity whose values were counted into bins: by level what its quantiles may be off at most, at any time, as a share of the width
+    from 5 to 95 %."""
+
+    label: str
+    shares: tuple[tuple[float, float], ...]
 
 
 @dataclass(frozen=True)
@@ -188,26 +213,30 @@ class KindReached:
 
 @dataclass(frozen=True)
 class PrecisionAnswer:
-    """What came of the precision asked: by kind, whether all of it was reached, else what ended the run and what it would take."""
+    """What came of the precision asked: by kind, whether all of it was reached, else what ended the run and what it would take.
+
+    solves_allowed: those that it might spend, all scenarios counted.
+    """
 
     reached: bool
     stopped: str
     solves_needed: float
     unknown: str
     rounds: int
+    solves_allowed: int | None
     kinds: tuple[KindReached, ...]
 
 
 @dataclass(frozen=True)
 class SettledAnswer:
     """What the shares settle: of so many rankings in how many the first place and the whole order; inputs that may be dropped, and of
-    which it is open (None where nothing is ranked)."""
+    which it is open (None where nothing is ranked). Of inputs that are drawn together this holds of all of them at once."""
 
     rankings: int
     first: int
     whole: int
-    may: tuple[InputRow, ...]
-    open: tuple[InputRow, ...]
+    may: tuple[Driver, ...]
+    open: tuple[Driver, ...]
 
 
 @dataclass(frozen=True)
@@ -235,3 +264,4 @@ class Headline:
     precision: PrecisionAnswer | None = None
     settled: SettledAnswer | None = None
     widest: tuple[QuantityAnswer, ...] = ()
+    binned: tuple[BinnedAnswer, ...] = ()

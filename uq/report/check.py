@@ -14,7 +14,7 @@ from uq.report.rounding import alone, place_of, power_of, written
 from uq.report.spoken import duration, moment, threads, unit_after
 from uq.report.summary import opening
 from uq.store.inputs_group import dependence_words
-from uq.study.plan import MOST_MEMBERS, PRECISION_OF
+from uq.study.plan import PRECISION_OF
 
 if TYPE_CHECKING:
     from uq.inputs.inputs import Input, Inputs
@@ -37,12 +37,13 @@ EXPECTED = {
 
 @dataclass(frozen=True)
 class CheckFacts:
-    """What a run would take: members (rounded up), replicates, solves of all scenarios, seconds on so many threads (None where nothing was
-    ever measured; `same_model`: measured on this very model), bytes of memory. pilot: what a few members told, where they were solved."""
+    """What a run would take, with a precision at most: members (rounded up) and solves of all scenarios (None where only the time bounds
+    them), replicates, seconds on so many threads (None where nothing was ever measured; `same_model`: measured on this very model), bytes
+    of memory. pilot: what a few members told, where they were solved."""
 
-    members: int
+    members: int | None
     replicates: int
-    solves: int
+    solves: int | None
     threads: int
     memory: int
     seconds: float | None = None
@@ -86,7 +87,7 @@ def _precision(plan: Plan) -> Iterable[str]:
     asked = [(kind, getattr(plan.precision, kind)) for kind in PRECISION_OF]
     half = ", ".join(f"{kind} {alone(value)}" + WIDTH_OF.get(kind, "") for kind, value in asked if value is not None)
     yield f"Precision, as half-width of the intervals: {half}."
-    bounds = [] if plan.members >= MOST_MEMBERS else [f"{plan.members} members"]
+    bounds = [] if plan.members_open else [f"{plan.members} members"]
     if plan.at_most is not None:
         bounds += [] if plan.at_most.solves is None else [f"{plan.at_most.solves} solves"]
         bounds += [] if plan.at_most.minutes is None else [f"{alone(plan.at_most.minutes)} minutes"]
@@ -202,10 +203,15 @@ def _cost(study: Study, facts: CheckFacts) -> list[str]:
     count = len(study.scenarios)
     scenarios = f", {count} scenario{'s' if count > 1 else ''} counted" if count else ""
     lines = [f"{at_most}{facts.members} members in {facts.replicates} replicates, {at_most}{facts.solves} solves{scenarios}."]
+    if facts.members is None:
+        lines = [f"As many members as fit into the time that it may take, in {facts.replicates} replicates; one round in any case."]
     if facts.seconds is None:
         lines.append("Time: not known yet on this machine; the first run measures it.")
     else:
         on = "measured on this model" if facts.same_model else "guessed from another model"
+        minutes = study.plan.at_most.minutes if study.plan.at_most else None
+        if minutes is not None and facts.seconds >= 60 * minutes:
+            on = "what it may take; a round that would take longer is not begun, but the first always is"
         lines.append(f"Time: {at_most or 'about '}{duration(facts.seconds)} on {threads(facts.threads)} ({on}).")
     lines.append(f"Memory: about {_bytes(facts.memory)}.")
     if facts.pilot is None and study.plan.precision is not None:
@@ -224,7 +230,9 @@ def _pilot(study: Study, facts: CheckFacts) -> list[str]:
     if pilot.needed is not None:
         seconds = pilot.needed.solves * per_solve / facts.threads
         about = f"about {count(pilot.needed.solves)} solves, {duration(seconds)} on {threads(facts.threads)}"
-        if pilot.needed.solves > pilot.solves:
+        if pilot.needed.solves > pilot.possible:
+            lines.append("The precision asked cannot be reached: it would take more members than a run can have.")
+        elif pilot.needed.solves > pilot.solves:
             more = " That is more than the run may use." if pilot.needed.solves > pilot.asked else ""
             lines.append(f"The precision asked is expected after {about}.{more}")
         elif not pilot.needed.unknown:

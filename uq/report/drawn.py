@@ -3,14 +3,27 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from typing import Any
 
 import numpy as np
 
 from uq.analysis.finding import Finding, Variable
-from uq.report.answers import Answers, Driver, Estimate, InputRow, LimitAnswer, MeasuredAnswer, QuantityAnswer, RankingAnswer, Shares
+from uq.analysis.places import ranked_in
+from uq.report.answers import (
+    Answers,
+    BinnedAnswer,
+    Driver,
+    Estimate,
+    InputRow,
+    LimitAnswer,
+    MeasuredAnswer,
+    QuantityAnswer,
+    RankingAnswer,
+    Shares,
+)
+from uq.report.spoken import MOST_LISTED, listed
 
 Findings = Mapping[str, Finding]
 Variables = Mapping[str, Variable]
@@ -46,11 +59,11 @@ def estimate(variables: Variables, name: str, at: At = ()) -> Estimate:
     return Estimate(*(float(variables[each].data[at]) if each in variables else math.nan for each in names))
 
 
-def answers(found: Findings, axes: Axes, prefix: str = "") -> Answers:
-    """What is answered in the groups limits, bands and outcomes below a prefix such as "scenarios/early/"."""
+def answers(found: Findings, axes: Axes, prefix: str = "", place: int = -1) -> Answers:
+    """What is answered in the groups limits, bands and outcomes below a prefix such as "scenarios/early/"; place: the time of the bands."""
     return Answers(
         limits=tuple(_limit(name, finding, axes) for name, finding in room(found, f"{prefix}limits")),
-        watched=tuple(_quantity(name, finding, axes, (-1,)) for name, finding in room(found, f"{prefix}bands")),
+        watched=tuple(_quantity(name, finding, axes, (place,)) for name, finding in room(found, f"{prefix}bands")),
         outcomes=tuple(_quantity(name, finding, axes, ()) for name, finding in room(found, f"{prefix}outcomes")),
     )
 
@@ -100,7 +113,16 @@ def _quantity(name: str, finding: Finding, axes: Axes, at: tuple[int, ...]) -> Q
         nominal=estimate(variables, "nominal", at).value,
         missing=estimate(variables, "missing"),
         reason=_reason(finding, "quantiles"),
+        cautions=tuple(_cautions(variables)),
     )
+
+
+def _cautions(variables: Variables) -> Iterator[str]:
+    """What the file says of a mean and a deviation that rest on few members (a mean never without its deviation)."""
+    said = {name: variables[name].attributes.get("caution") for name in ("mean", "sd") if name in variables}
+    if said.get("sd"):
+        others = "its mean and all shares of its variance" if said["mean"] else "all shares of its variance"
+        yield f"its standard deviation, like {others}, {said['sd']}"
 
 
 def _at_levels(variables: Variables, name: str, axes: Axes, last: tuple[int, ...]) -> tuple[tuple[float, Estimate], ...]:
@@ -123,9 +145,30 @@ def ranking(name: str, finding: Finding, found: Findings, inputs: tuple[InputRow
     shapley = f"shapley{ending}" in variables
     drivers = tuple(Driver(each, shares(place)) for place, each in enumerate(inputs)) if f"total{ending}" in variables else ()
     groups = tuple((str(group), shares(place, "_group")) for place, group in enumerate(data(finding, "group")))
-    reason = _reason(finding, f"{'shapley' if shapley else 'total'}{ending}")
+    places = placed(finding, drivers, groups)
+    reason = _reason(finding, f"{'first' if shapley else 'total'}{ending}")
     no_total = _reason(finding, f"total{ending}") if shapley else ""
-    return RankingAnswer(name, said.get("label", name), of, time, drivers, reason, groups, shapley, no_total)
+    return RankingAnswer(name, said.get("label", name), of, time, drivers, reason, groups, shapley, no_total, places)
+
+
+def placed(finding: Finding, drivers: Sequence[Driver], groups: Sequence[tuple[str, Shares]]) -> tuple[Driver, ...]:
+    """What has a place in the order of a ranking: every input, or all that are drawn together as one."""
+    every = {driver.input.name: driver for driver in drivers}
+    found = []
+    for one in ranked_in(finding, list(every)):
+        members = tuple(every[name].input for name in one.inputs)
+        found.append(every[one.name] if one.of == "input" else Driver(_together(one.name, members), groups[one.place][1], members))
+    return tuple(found)
+
+
+def _together(name: str, members: Sequence[InputRow]) -> InputRow:
+    """Inputs that are drawn together, as they are called: by the group that the study makes of them, if it does."""
+    *others, last = (row.label for row in members)
+    labels = f"{listed(others)} and {last}" if len(members) <= MOST_LISTED else listed([*others, last])
+    label = f"group {name} (drawn together)" if all(row.group == name for row in members) else f"joint sample of {labels}"
+    known = [row.evidence for row in members]
+    evidence = None if None in known else min((each for each in known if each is not None), default=None)
+    return InputRow(name, label, "", "", "", members[0].kind if len({row.kind for row in members}) == 1 else "", evidence)
 
 
 def measured(name: str, finding: Finding) -> MeasuredAnswer:
@@ -140,7 +183,18 @@ def measured(name: str, finding: Finding) -> MeasuredAnswer:
         share_inside=estimate(finding.variables, "share_inside"),
         expected=expected,
         reason=_reason(finding, "share_inside"),
+        widened=bool(np.any(data(finding, "sd") > 0)),
     )
+
+
+def binned(found: Findings, axes: Axes) -> Iterator[BinnedAnswer]:
+    """Quantities whose values were counted into bins."""
+    for path in ("bands", "outcomes"):
+        for name, finding in room(found, path):
+            shares = data(finding, "quantiles_bin_error_share")
+            if shares.size:
+                largest = [float(np.max(each[~np.isnan(each)], initial=0.0)) for each in shares.reshape(len(axes.levels), -1)]
+                yield BinnedAnswer(finding.attributes.get("label", name), tuple(zip(axes.levels, largest, strict=True)))
 
 
 def _reason(finding: Finding, name: str) -> str:

@@ -85,8 +85,8 @@ def in_order(head: Headline) -> list[RankingAnswer]:
 
 
 def known_drivers(ranking: RankingAnswer) -> list[Driver]:
-    """The inputs that have a share."""
-    return [driver for driver in ranking.drivers if not driver.shares.share.missing]
+    """The inputs that have a share; those that are drawn together have one together."""
+    return [driver for driver in ranking.places if not driver.shares.share.missing]
 
 
 def _has_shares(ranking: RankingAnswer) -> bool:
@@ -139,7 +139,7 @@ def _ranked(head: Headline, ranking: RankingAnswer) -> list[Row]:
             rows.append((f"  {tie.places:<5}{_together(tie, ranking)}",))
             shown = MOST_ROWS
     if len(rest) == 1 and not share_of(rest[0]).high < NEGLIGIBLE:
-        return [*rows, _row(rest[0], f"{len(ranking.drivers)}."), *_groups(ranking)]
+        return [*rows, _row(rest[0], f"{len(ranking.places)}."), *_groups(ranking)]
     if rest:
         rows.append((f"  {_others(head, rest, ranking)}",))
     return rows + _groups(ranking)
@@ -155,8 +155,10 @@ def _together(tie: _Tie, ranking: RankingAnswer) -> str:
 
 
 def _groups(ranking: RankingAnswer) -> list[Row]:
-    """Shares of inputs taken together, largest first."""
-    known = sorted((each for each in ranking.groups if not each[1].share.missing), key=lambda each: -each[1].share.value)
+    """Shares of inputs taken together that have no place of their own, largest first."""
+    placed = {driver.input.name for driver in ranking.places if driver.members}
+    groups = [each for each in ranking.groups if each[0] not in placed and not each[1].share.missing]
+    known = sorted(groups, key=lambda each: -each[1].share.value)
     rows: list[Row] = [(f"  group {plain(name)}", *_share(shares.share), *_share(shares.first), "") for name, shares in known[:MOST_GROUPS]]
     return rows + ([(f"  {len(known) - MOST_GROUPS} more groups in the file",)] if len(known) > MOST_GROUPS else [])
 
@@ -183,13 +185,13 @@ def _others(head: Headline, rest: list[Driver], ranking: RankingAnswer) -> str:
     warned = {row.name for row in weak_inputs(head)}
     highest = max(share_of(driver).high for driver in rest)
     count = "1 other input" if len(rest) == 1 else f"{len(rest)} other inputs"
-    bound = at_most(min(highest, 1.0)) if highest > 0 else "0"
+    bound = f"at most {at_most(min(highest, 1.0))}" if highest > 0 else "0"
     kind = "Shapley effect" if ranking.shapley else "total"
-    named = [driver for driver in rest if driver.input.name in warned]
+    named = [driver for driver in rest if warned & {row.name for row in driver.rows}]
     named += [driver for driver in rest if driver not in named and not share_of(driver).high < NEGLIGIBLE]
     names = listed((plain(driver.input.label) for driver in named), max(MOST_LISTED, len(warned)))
     told = f": {names}" if len(named) == len(rest) else f", among them {names}" if named else ""
-    return f"{count}, {kind} {'' if len(rest) == 1 else 'of each '}at most {bound}{told}"
+    return f"{count}, {kind} {'' if len(rest) == 1 else 'of each '}{bound}{told}"
 
 
 def _briefly(ranking: RankingAnswer, full: RankingAnswer) -> str:
@@ -202,7 +204,7 @@ def _briefly(ranking: RankingAnswer, full: RankingAnswer) -> str:
         return "the first place is not settled"
     if settled == _settled(whole)[: len(settled)] and len(settled) > 1:
         return f"the same first {COUNTED[len(settled)]}"
-    labels = {driver.input.name: plain(driver.input.label) for driver in ranking.drivers}
+    labels = {driver.input.name: plain(driver.input.label) for driver in ranking.places}
     told = "first " + ", then ".join(quoted(labels[name]) for name in settled)
     return told + ("; the order of the others is not settled" if len(settled) < min(MOST_PLACES, len(mine)) else "")
 

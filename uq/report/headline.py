@@ -9,7 +9,7 @@ import numpy as np
 
 from uq.analysis.finding import Finding
 from uq.report.answers import Headline, InputRow, Pair, ScenarioAnswer
-from uq.report.drawn import Axes, Findings, answers, data, measured, ranking, room, widest
+from uq.report.drawn import Axes, Findings, answers, binned, data, measured, ranking, room, widest
 from uq.report.precise import precision, settled
 from uq.report.spoken import clock_of
 from uq.report.withheld import kept_back, ranking_kept_back, refused_from
@@ -46,6 +46,7 @@ def headline(result: Result) -> Headline:
         precision=precision(found, inputs, axes, result.attributes),
         settled=settled(found, inputs, axes, result.attributes) if since == math.inf else None,
         widest=widest(found, axes),
+        binned=tuple(binned(found, axes)),
     )
 
 

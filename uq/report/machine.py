@@ -32,6 +32,7 @@ def result_json(result: Result) -> dict[str, Any]:
     versions, ...). time_unit. limits, bands, outcomes, ranking: by name, as the groups of result.nc, each with the headline numbers of
     results-format: `ever_by` (one entry per `by`), `quantiles` (one entry per level), `first` and `total` (one entry per input). Every
     estimate is {"value", "low", "high"}, with "if_low", "if_high" where members failed. reason: why numbers are missing, else empty.
+    cautions: what is said of a mean or a deviation that rests on few members; left out where nothing is.
     inputs: what the study says of each. failures: solves by status. warnings: of the study. scales_fell_back: states without a scale
     from the pilot.
     dependence: pairs of inputs that go together, rank correlation `asked` and `achieved`. measured: by quantity `share_inside`, the share
@@ -104,7 +105,7 @@ def _quantity(answer: QuantityAnswer) -> dict[str, Any]:
     else:
         told |= {"missing": _estimate(answer.missing)}
     told |= {"quantiles": _levels(answer.quantiles), "mean": _estimate(answer.mean), "sd": _estimate(answer.sd)}
-    return {**told, "reason": answer.reason}
+    return {**told, "reason": answer.reason, **({"cautions": list(answer.cautions)} if answer.cautions else {})}
 
 
 def _levels(pairs: tuple[tuple[float, Estimate], ...]) -> list[dict[str, float | None]]:
@@ -160,7 +161,8 @@ def _settled(head: Headline) -> dict[str, Any] | None:
     answer = head.settled
     if answer is None:
         return None
-    names = {"may_be_dropped": [row.name for row in answer.may], "open": [row.name for row in answer.open]}
+    every = {"may_be_dropped": answer.may, "open": answer.open}
+    names = {key: [row.name for driver in drivers for row in driver.rows] for key, drivers in every.items()}
     return {"rankings": answer.rankings, "first": answer.first, "whole": answer.whole, **names}
 
 

@@ -10,7 +10,7 @@ from uq.report.answers import Answers, Estimate, Headline, LimitAnswer, Quantity
 from uq.report.chances import RARE, chance
 from uq.report.failed import behind
 from uq.report.plain import Part, Table, Text, plain
-from uq.report.rounding import finest_of, rounded
+from uq.report.rounding import Rounded, finest_of, rounded
 from uq.report.spoken import Clock, per_cent, unit_after
 
 Row = tuple[str, ...]
@@ -76,16 +76,20 @@ def _quantiles(clock: Clock, own: QuantityAnswer, change: QuantityAnswer) -> Ite
     at = "" if math.isnan(own.time) else f" at {clock.at(own.time)}"
     yield (f"  {plain(own.label)}{at}{unit_after(own.unit, ', ')}",)
     known, levels = dict(own.quantiles), [level for level, _ in change.quantiles]
+    # A level that the other was not asked for has a difference all the same, since its members are at hand.
+    silent = Rounded("not asked")
     if len(levels) > MOST_LEVELS:
         levels = [levels[0], min(levels[1:-1], key=lambda level: abs(level - 0.5)), levels[-1]]
     for level, difference in change.quantiles:
         if level in levels:
             each = known.get(level, Estimate())
-            texts = rounded(each.value, each.low, each.high, finest_of(each.value, own.spread))
+            texts = rounded(each.value, each.low, each.high, finest_of(each.value, own.spread)) if level in known else silent
             yield f"    {per_cent(level)} point", texts.value, texts.interval, *_difference(difference, own.spread)
 
 
 def _difference(estimate: Estimate, spread: float = math.nan) -> tuple[str, str]:
+    if estimate.value == estimate.low == estimate.high == 0:
+        return "none", ""
     texts = rounded(estimate.value, estimate.low, estimate.high, finest_of(estimate.value, spread))
     sign = "+" if estimate.value > 0 else ""
     return sign + texts.value, texts.interval

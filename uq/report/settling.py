@@ -6,7 +6,7 @@ import math
 import shlex
 from collections.abc import Iterable
 
-from uq.analysis.precision import NEGLIGIBLE
+from uq.analysis.places import NEGLIGIBLE
 from uq.report.answers import Headline, KindReached, PrecisionAnswer, SettledAnswer
 from uq.report.plain import Part, Table, Text, plain
 from uq.report.rounding import alone
@@ -17,11 +17,6 @@ NAMES = {
     "probabilities": "probabilities",
     "quantiles": "quantiles, of the 5-95 % width",
     "indices": "shares of the variance",
-}
-STOPPED = {
-    "members": "the members that it may use were used up",
-    "solves": "the solves that it may use were used up",
-    "minutes": "the time that it may take was over",
 }
 
 
@@ -77,30 +72,48 @@ def _dropped(settled: SettledAnswer | None) -> Iterable[str]:
     if settled is None:
         return
     bound = f"share surely below {alone(NEGLIGIBLE)} in all that is ranked"
-    may = listed(plain(row.label) for row in settled.may)
+    may = listed(plain(driver.input.label) for driver in settled.may)
     yield f"May be dropped ({bound}): {may}." if may else f"May be dropped ({bound}): none."
     if settled.open:
-        yield f"Not settled whether they may: {listed(plain(row.label) for row in settled.open)}."
+        yield f"Not settled whether they may: {listed(plain(driver.input.label) for driver in settled.open)}."
 
 
 def _not_reached(head: Headline, precision: PrecisionAnswer | None) -> Iterable[str]:
     if precision is None or precision.reached:
         return
-    yield f"The precision asked was not reached: {STOPPED.get(precision.stopped, 'the run was ended before')}."
+    yield f"The precision asked was not reached: {stopped(head, precision)}."
     solves, spent = precision.solves_needed, int(head.facts["solves"])
     if math.isfinite(solves) and solves > spent:
-        yield f"It is expected after about {alone(solves, 2)} solves ({spent} so far), which is about {more_members(head)} members."
+        members = more_members(head)
+        expected = f"It is expected after about {alone(solves, 2)} solves ({spent} so far), which is about {members} members."
+        yield expected if members else "It cannot be reached: that would take more members than a run can have."
     if precision.unknown:
         yield f"Nothing can be foretold yet of {plain(precision.unknown)}."
 
 
+def stopped(head: Headline, precision: PrecisionAnswer) -> str:
+    """Why no further round was begun: what the last one has left is not enough for another, which doubles the members."""
+    spent = int(head.facts["solves"]) + sum(int(each.facts.get("solves", 0)) for each in head.scenarios)
+    if precision.stopped == "members":
+        return "it has all the members that it may use"
+    if precision.stopped == "minutes":
+        return "another round would have taken longer than the time that is left"
+    allowed = precision.solves_allowed
+    if precision.stopped != "solves" or allowed is None:
+        return "the run was ended before"
+    if spent > allowed:
+        return f"the first round alone takes {spent} solves, and it may spend {allowed}"
+    return f"another round would take it beyond the {allowed} solves that it may spend ({spent} spent)"
+
+
 def more_members(head: Headline) -> int:
-    """Members with which to go on: those that the precision asked is expected to take, else twice as many; a power of two."""
+    """Members with which to go on, a power of two times those so far: those that the precision asked is expected to take, else twice as
+    many; 0 where that is more than a run can have."""
     members, solves = int(head.facts["members"]), int(head.facts["solves"])
     needed = head.precision.solves_needed if head.precision and not head.precision.reached else math.nan
     times = needed / solves if math.isfinite(needed) and needed > solves else 2.0
-    doublings = max(1, math.ceil(math.log2(times)))
-    return min(members * int(2**doublings), max(int(MOST_MEMBERS), members))
+    more = members * 2 ** max(1, math.ceil(math.log2(times)))
+    return int(more) if more <= MOST_MEMBERS else 0
 
 
 def next_commands(head: Headline, folder: str, extensible: bool) -> list[str]:
@@ -108,5 +121,8 @@ def next_commands(head: Headline, folder: str, extensible: bool) -> list[str]:
     place = plain(shlex.quote(folder))
     lines = [f"uq show {place} --json"]
     if extensible:
-        lines += [f"uq extend {place} --members {more_members(head)}", f"uq compare {place} OTHER"]
+        # With a bound on the solves more members alone would change nothing.
+        members = 0 if head.precision and head.precision.stopped == "solves" else more_members(head)
+        lines += [f"uq extend {place} --members {members}"] if members else []
+        lines.append(f"uq compare {place} OTHER")
     return [f"{'Next: ' if number == 0 else '      '}{line}" for number, line in enumerate(lines)]

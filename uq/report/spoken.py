@@ -103,11 +103,13 @@ def threads(count: int) -> str:
 
 
 def duration(seconds: float) -> str:
-    """A time span as a reader says it: "0.4 s", "41 s", "3 min 20 s", "2 h 5 min"."""
+    """A time span as a reader says it: "0.4 s", "41 s", "3 min 20 s", "2 h 5 min", "12 days"."""
     if seconds < 60:
         return f"{alone(seconds, 2)} s"
     whole = round(seconds)
     hours, minutes, rest = whole // 3600, whole // 60 % 60, whole % 60
+    if hours >= 96:
+        return f"{alone(seconds / 86400, 2)} days"
     return f"{hours} h {minutes} min" if hours else f"{minutes} min {rest} s"
 
 

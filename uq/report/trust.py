@@ -6,8 +6,9 @@ import math
 from collections.abc import Iterable
 
 from uq.report.answers import Headline, InputRow, Pair, RankingAnswer
+from uq.report.chances import in_per_cent
 from uq.report.plain import Part, Text, plain
-from uq.report.rounding import alone
+from uq.report.rounding import alone, at_most
 from uq.report.spoken import listed, per_cent, quoted
 from uq.solve.batch import Status
 from uq.solve.statuses import describe
@@ -15,6 +16,8 @@ from uq.store.facts import method_words
 
 # "One person's range" and worse.
 WEAK = 1
+# An error by counting into bins that is no larger, as a share of the 5-95 % width, is not told for every quantity.
+COARSE = 1e-3
 # A total share that reaches this makes an input influential.
 INFLUENTIAL = 0.1
 
@@ -35,6 +38,8 @@ def trust_section(head: Headline) -> list[Part]:
         *_inputs(head),
         *_dependence(head),
         *_measured(head),
+        *_binned(head),
+        *_few(head),
         *(f"Warning: {text}" for text in head.warnings),
     )
     return ["How far to trust this", *(Text(plain(text), "  ", "    ") for text in told)]
@@ -44,6 +49,30 @@ def _intervals(head: Headline) -> Iterable[str]:
     yield (
         f"Intervals ({per_cent(head.facts['confidence'])}) show the effect of the finite number of members only, not errors of the model, "
         "of the inputs, of the output times or of the solver."
+    )
+
+
+def _few(head: Headline) -> Iterable[str]:
+    """Means and deviations that rest on few members."""
+    for each in (*head.watched, *head.outcomes):
+        for text in each.cautions:
+            yield f"Few members: {quoted(each.label)}, {text}."
+
+
+def _binned(head: Headline) -> Iterable[str]:
+    """That values were counted into bins, and of which quantiles that can be seen."""
+    if not head.binned:
+        return
+    coarse = []
+    for answer in head.binned:
+        levels = [(level, share) for level, share in answer.shares if share > COARSE]
+        if levels:
+            told = (f"{per_cent(level)} point up to {at_most(share) if math.isfinite(share) else 'all'}" for level, share in levels)
+            coarse.append(f"{quoted(answer.label)}, {', '.join(told)}")
+    but = f", but for these, in shares of that width: {'; '.join(coarse)}" if coarse else ""
+    yield (
+        "Histograms: there were more values than `keep` in [plan] allows, so that they were counted into bins. Quantiles are right to "
+        f"{alone(COARSE)} of the width from 5 to 95 %{but}."
     )
 
 
@@ -59,8 +88,8 @@ def _judged(head: Headline) -> Iterable[str]:
 def failed_members(head: Headline) -> Iterable[str]:
     """How many members there are and how many failed, how that is counted, and why they did."""
     facts = head.facts
-    asked, members, failed = (int(facts[name]) for name in ("members_asked", "members", "members_failed"))
-    more = f" ({asked} asked)" if asked != members else ""
+    members, failed, asked = int(facts["members"]), int(facts["members_failed"]), facts.get("members_asked")
+    more = "" if asked in (None, members) else f" ({asked} asked)" if head.precision is None else f" (at most {asked} asked)"
     if not failed and not head.failed:
         yield f"Members: {members}{more}, none failed."
         return
@@ -74,7 +103,7 @@ def failed_members(head: Headline) -> Iterable[str]:
 def _solver(head: Headline) -> Iterable[str]:
     tolerance = alone(head.facts["accuracy"])
     method = method_words(str(head.facts["method"]))
-    yield f"Solver: {method}, relative tolerance {tolerance}; its error is not compared with the bands yet."
+    yield f"Solver: {method}, relative tolerance {tolerance}; its error is not estimated."
     if head.fell_back:
         yield f"Scale: the pilot gave none for {listed(head.fell_back)}; the absolute tolerance there is a guess."
 
@@ -152,12 +181,15 @@ def _measured(head: Headline) -> Iterable[str]:
         if inside.missing:
             yield f"Measured: of {each.label} nothing can be said ({each.reason or 'members failed'})."
             continue
-        low, high = round(inside.low * count), round(inside.high * count)
-        open_ = f" (between {low} and {high}, as intervals go)" if low < high else ""
-        expected = "" if math.isnan(each.expected) else f"; {alone(100 * each.expected)} % of them are expected there"
+        ends = in_per_cent(inside).interval
+        share = f" (as a share {ends} %, were each by itself)" if ends else ""
+        expected = "" if math.isnan(each.expected) else f"; {alone(100 * each.expected)} % are expected there"
         what = f"{round(inside.value * count)} of {count} observations of {each.label}"
-        yield f"Measured: {what} lie between the outermost quantiles{open_}{expected}."
+        where = "of what would be measured, the deviation of a measurement counted" if each.widened else "of the forecast"
+        # An end of the interval below what is expected is the test whether so few can be chance.
+        few = " That is fewer than expected: look at the model, its inputs and the measurements." if inside.high < each.expected else ""
+        yield f"Measured: {what} lie between the outermost quantiles {where}{share}{expected}.{few}"
 
 
 def _influential(ranking: RankingAnswer) -> Iterable[str]:
-    return (driver.input.name for driver in ranking.drivers if driver.shares.share.value >= INFLUENTIAL)
+    return (row.name for driver in ranking.places if driver.shares.share.value >= INFLUENTIAL for row in driver.rows)

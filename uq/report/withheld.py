@@ -47,4 +47,4 @@ def ranking_kept_back(answer: RankingAnswer, since: float) -> RankingAnswer:
     """A ranking without its shares where it covers that time; those of outcomes and of whole courses always do."""
     if since == math.inf or answer.time < since:
         return answer
-    return replace(answer, drivers=(), groups=(), reason=WITHHELD)
+    return replace(answer, drivers=(), groups=(), places=(), reason=WITHHELD)

@@ -123,15 +123,26 @@ def _outward(answer: QuantityAnswer, end: int, direction: str) -> str:
 
 def _of_driver(head: Headline, ranking: RankingAnswer) -> str:
     groups = ordered(known_drivers(ranking), share_of)
-    if not groups or len(ranking.drivers) == 1:
+    if not groups or len(ranking.places) == 1:
         return ""
     of = _uncertain(head, ranking)
     if len(groups[0]) == 1:
-        return _of_first(of, groups[0][0], ranking)
+        return _capital(_of_first(of, groups[0][0], ranking), groups[0][0])
     if len(groups) == 1 or len(groups[0]) > MOST_NAMED:
         return f"Which input has the largest share in {of} is not settled."
-    *names, last = (quoted(plain(driver.input.label)) for driver in groups[0])
-    return f"{', '.join(names)} and {last} have the largest shares in {of}; their order is not settled."
+    *names, last = (_called(driver) for driver in groups[0])
+    return _capital(f"{', '.join(names)} and {last} have the largest shares in {of}; their order is not settled.", groups[0][0])
+
+
+def _called(driver: Driver) -> str:
+    """An input as it is called within a sentence; inputs that are drawn together have an article."""
+    name = quoted(plain(driver.input.label))
+    return f"the {name}" if driver.members else name
+
+
+def _capital(sentence: str, first: Driver) -> str:
+    """A sentence that begins with a driver; names stay as the study writes them."""
+    return sentence[:1].upper() + sentence[1:] if first.members else sentence
 
 
 def _uncertain(head: Headline, ranking: RankingAnswer) -> str:
@@ -144,7 +155,7 @@ def _uncertain(head: Headline, ranking: RankingAnswer) -> str:
 
 def _of_first(of: str, driver: Driver, ranking: RankingAnswer) -> str:
     """What the largest share means: the first-order index is the part of the variance that knowing the input would take away on average."""
-    name, first = quoted(plain(driver.input.label)), driver.shares.first
+    name, first = _called(driver), driver.shares.first
     largest = "has the largest share"
     if ranking.shapley:
         largest += f", a Shapley effect of {_per_cent(driver.shares.shapley)},"

@@ -8,6 +8,7 @@ from dataclasses import dataclass, replace
 import numpy as np
 
 from uq.analysis.ask import Ask
+from uq.analysis.clocks import on_clock_of
 from uq.analysis.differences import Draws, Run, differences, draws_of
 from uq.analysis.finding import Finding
 from uq.analysis.precision import precision_findings
@@ -63,10 +64,20 @@ def side_of(study: Study, saved: Saved) -> Side:
 
 
 def compared(one: Side, other: Side, crew: Crew) -> tuple[Draws, tuple[Finding, ...]]:
-    """The second less the first, and whether they share draws."""
-    draws = draws_of(one.design, other.design)
+    """The second less the first at the times of the first, and whether they share draws.
+
+    What has no time in common is left out; so is all that has times where those of one cannot be told in the unit of the other.
+    """
+    draws, ask = draws_of(one.design, other.design), on_clock_of(one.ask, other.ask)
     with threads(crew.spread.workers, crew.observer) as pool:
-        return draws, differences(Run(one.ask, one.tallies), Run(other.ask, other.tallies), draws, pool.map)
+        found = differences(Run(one.ask, one.tallies), Run(ask or other.ask, other.tallies), draws, pool.map)
+    return draws, tuple(each for each in found if each.group.startswith("outcomes/") or (ask and _has_times(one.ask, each)))
+
+
+def _has_times(ask: Ask, finding: Finding) -> bool:
+    """Whether the two of a comparison have a time in common: an output time, or one by which a limit is quoted."""
+    times, by = finding.variables.get("time"), finding.variables.get("by")
+    return (len(ask.times) if times is None else len(times.data)) > 0 or (by is not None and len(by.data) > 0)
 
 
 def drawn(branch: Branch, rows: int) -> Iterator[Finding]:

@@ -22,7 +22,7 @@ def facts_of(study: Study, run: Running, standing: Standing, start: Start) -> Ru
     code, design = forecast.compiled.code, forecast.design
     return RunFacts(
         seed=design.seed,
-        members_asked=study.plan.members,
+        members_asked=None if study.plan.members_open else study.plan.members,
         members=2 * design.replicates * standing.rows,
         members_failed=count.failed_members,
         solves=count.solves,
@@ -56,7 +56,7 @@ def precision_of(run: Running, standing: Standing) -> PrecisionReached | None:
         return None
     reached = standing.ended == "reached"
     expected = needed(standing.rounds, asked)
-    return PrecisionReached(reached, "" if reached else standing.ended, expected.solves, expected.unknown)
+    return PrecisionReached(reached, "" if reached else standing.ended, expected.solves, expected.unknown, run.aims.solves)
 
 
 def made_with() -> dict[str, str]:

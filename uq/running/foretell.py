@@ -10,6 +10,7 @@ import numpy as np
 
 from uq.analysis.precision import Headline, Needed, Round, headline, needed
 from uq.design.design import LEAST_MEMBERS
+from uq.design.sobol import MOST_ROWS
 from uq.running.branch import STUDY, forecasts_of
 from uq.running.course import to_the_end
 from uq.running.keeping import Forgetful
@@ -17,7 +18,7 @@ from uq.running.meter import Meter
 from uq.running.observer import Observer
 from uq.running.resume import gone_on_with
 from uq.running.rounds import Crew, Spread, answered
-from uq.running.setup import design_of
+from uq.running.setup import design_of, most_rows, scenario_designs, solves_of_row
 from uq.running.start import Start
 from uq.study.study import Study
 
@@ -39,8 +40,8 @@ class Expected:
 class Foretold:
     """What the pilot says. members, solves, failed, seconds: of the pilot itself, one core; scenarios are not in it.
 
-    asked: solves of the run as it is asked. needed: where a precision is asked, the solves it will take; expected: the half-widths expected
-    at the members asked.
+    asked: solves of the run as it is asked, with a precision as many as it may use. needed: where a precision is asked, the solves it will
+    take; expected: the half-widths expected at the solves asked. possible: the most solves that any run of this study can have.
     """
 
     members: int
@@ -50,6 +51,7 @@ class Foretold:
     asked: int
     needed: Needed | None
     expected: tuple[Expected, ...]
+    possible: float = math.inf
 
 
 def foretold(study: Study, spread: Spread, observer: Observer, clock: Callable[[], float]) -> Foretold:
@@ -61,7 +63,7 @@ def foretold(study: Study, spread: Spread, observer: Observer, clock: Callable[[
     base, part = running.branches[0], standing.parts[STUDY]
     said = headline(answered(base, part, crew), base.forecast.ask, part.members)
     now = Round(part.members, part.count.solves, said)
-    asked = design_of(study).solves
+    asked = _asked(study, part.count.seconds / max(part.count.solves, 1) / spread.workers)
     wanted = study.plan.precision
     return Foretold(
         members=now.members,
@@ -71,7 +73,19 @@ def foretold(study: Study, spread: Spread, observer: Observer, clock: Callable[[
         asked=asked,
         needed=None if wanted is None else needed([now], wanted),
         expected=tuple(expected(said, now.solves / asked)),
+        possible=float(MOST_ROWS * solves_of_row([base.forecast.design])),
     )
+
+
+def _asked(study: Study, seconds_per_solve: float) -> int:
+    """The solves of the study itself that its plan allows: by members, by solves, and by the time that they take on all threads."""
+    own, rows = design_of(study), most_rows(study)
+    minutes = study.plan.at_most.minutes if study.plan.at_most else None
+    bounds = [] if rows is None else [rows * solves_of_row([own])]
+    if minutes is not None:
+        share = solves_of_row([own]) / solves_of_row([own, *scenario_designs(study)])
+        bounds.append(int(60 * minutes / seconds_per_solve * share) if seconds_per_solve > 0 else own.solves)
+    return max(min(bounds), own.rounds()[0][1] * solves_of_row([own]))
 
 
 def expected(headlines: Sequence[Headline], share: float) -> Iterator[Expected]:

@@ -2,12 +2,14 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterator
+from collections.abc import Callable, Iterable, Iterator, Sequence
+from itertools import islice
 from typing import Literal, cast
 
 import numpy as np
 
-from uq.analysis.ask import Ask, InputGroup, Measured, kept_bytes
+from uq.analysis.ask import Ask, InputGroup, Measured
+from uq.analysis.memory import held_bytes
 from uq.design.design import Design
 from uq.design.sets import Sets, ShapleySets, one_by_one, shapley_sets
 from uq.inputs.inputs import Inputs
@@ -21,10 +23,13 @@ from uq.study.study import Study
 PROGRAM_BYTES = 250 * 10**6
 
 
-def ask_of(study: Study, design: Design | None = None) -> Ask:
-    """What the tallies are told, but for what only the pilot can say."""
-    design = design or design_of(study)
-    inputs, shapley = study.inputs, shapley_of(study, study.inputs)
+def ask_of(study: Study, design: Design | None = None, inputs: Inputs | None = None) -> Ask:
+    """What the tallies are told, but for what only the pilot can say.
+
+    inputs: those of the design, where they are not the study's own (`same_places`): all places of inputs are places among them.
+    """
+    inputs = inputs or study.inputs
+    design, shapley = design or design_of(study, inputs), shapley_of(study, inputs)
     return Ask(
         time_unit=study.time.unit,
         solved_times=study.times.solved,
@@ -32,7 +37,7 @@ def ask_of(study: Study, design: Design | None = None) -> Ask:
         watched=study.watched,
         outcomes=study.outcome_quantities,
         limits=study.limits_asked,
-        inputs=design.names,
+        inputs=inputs.names,
         questions=study.plan.ask,
         quantiles=study.plan.quantiles,
         confidence=study.plan.confidence,
@@ -76,7 +81,7 @@ def shapley_of(study: Study, inputs: Inputs) -> ShapleySets | None:
     """What Shapley effects need; None where nothing is ranked or inputs are independent."""
     if not inputs.dependent or "ranking" not in study.plan.ask:
         return None
-    return shapley_sets([unit.places for unit in inputs.units], study.plan.seed)
+    return shapley_sets([unit.places for unit in inputs.units], study.plan.seed, inputs.linked)
 
 
 def sets_of(study: Study, inputs: Inputs) -> Sets:
@@ -105,17 +110,59 @@ def same_places(base: Inputs, other: Inputs) -> Inputs:
 
 
 def memory_of(study: Study, threads: int) -> int:
-    """About how many bytes a run takes: the program, the values kept, and what every thread works on."""
-    kept = min(kept_bytes(ask_of(study), design_of(study).members), study.plan.keep)
-    return PROGRAM_BYTES + kept * (1 + len(study.scenarios)) + 4 * threads * BLOCK_BYTES
+    """About how many bytes a run takes: the program, the tallies of all branches, what every thread works on, and the answers.
+
+    Half to twice what was measured (`tests/test_run_memory.py`).
+    """
+    designs, asks = zip(*((design, ask_of(of, design, inputs)) for of, design, inputs in every_branch(study)), strict=True)
+    held = sum(held_bytes(ask, design.replicates) for design, ask in zip(designs, asks, strict=True))
+    if study.plan.precision is not None:
+        # Nobody knows where it ends: values are kept first, as many as may be.
+        held = max(held, study.plan.keep)
+    # The answers are worked out cell by cell, on every thread one, from three arrays as long as there are values of it.
+    longest = 3 * 8 * max((ask.members for ask in asks if ask.keeps), default=0)
+    return PROGRAM_BYTES + held + threads * max(4 * min(BLOCK_BYTES, longest_block(designs, asks)), longest)
+
+
+def longest_block(designs: Sequence[Design], asks: Sequence[Ask]) -> int:
+    """Bytes of the values of the longest block that a run could have, if it were not too long for the memory near a processor."""
+    blocks = zip(designs, asks, strict=True)
+    return max(8 * design.parts * design.rows * max(len(ask.watched), 1) * len(ask.solved_times) for design, ask in blocks)
+
+
+def every_branch(study: Study) -> Iterator[tuple[Study, Design, Inputs]]:
+    """The study itself and its scenarios, each with its design and the inputs of that."""
+    yield study, design_of(study), study.inputs
+    for scenario in study.scenarios:
+        inputs = same_places(study.inputs, scenario.study.inputs)
+        yield scenario.study, design_of(scenario.study, inputs), inputs
 
 
 def meter_of(study: Study, observer: Observer, clock: Callable[[], float]) -> Meter:
-    """The meter of a run that has all its rounds, scenarios counted."""
-    return Meter(design_of(study).solves + sum(scenario_solves(study)), observer, clock)
+    """The meter of a run, scenarios counted: of all its rounds, with a precision of the first one, since nobody knows how many follow."""
+    designs = [design_of(study), *scenario_designs(study)]
+    rows = designs[0].rows if study.plan.precision is None else designs[0].rounds()[0][1]
+    return Meter(rows * solves_of_row(designs), observer, clock)
 
 
-def scenario_solves(study: Study) -> Iterator[int]:
-    """The solves of every scenario."""
-    for scenario in study.scenarios:
-        yield design_of(scenario.study, same_places(study.inputs, scenario.study.inputs)).solves
+def solves_of_row(designs: Iterable[Design]) -> int:
+    """The solves of one row of every replicate, of all designs together."""
+    return sum(design.parts * design.replicates for design in designs)
+
+
+def most_rows(study: Study) -> int | None:
+    """The rows of every replicate that members and solves allow at most, at the end of a round; None where nothing but time bounds them.
+
+    The first round is solved whatever it takes.
+    """
+    plan, designs = study.plan, [design_of(study), *scenario_designs(study)]
+    solves = plan.at_most.solves if plan.at_most else None
+    if plan.precision is None or solves is None:
+        return None if plan.members_open else designs[0].rows
+    stops = [stop for _, stop in designs[0].rounds()]
+    return max((stop for stop in stops if stop * solves_of_row(designs) <= solves), default=stops[0])
+
+
+def scenario_designs(study: Study) -> Iterator[Design]:
+    """The design of every scenario."""
+    return (design for _, design, _ in islice(every_branch(study), 1, None))
