@@ -6,6 +6,7 @@ Numbers come out of compiled solving at a relative tolerance of 1e-12; those exp
 from __future__ import annotations
 
 import math
+from dataclasses import replace
 from typing import NamedTuple
 
 import numpy as np
@@ -15,6 +16,7 @@ from tests.small_studies import mistakes
 from uq.model.build import build
 from uq.solve.batch import Settings, Status
 from uq.solve.compile import compile_code
+from uq.solve.scales import pilot_scales
 from uq.solve.solve import solve
 from uq.study.read import parse_study
 from uq.study.study import Study
@@ -290,6 +292,23 @@ def test_a_study_in_si_units_and_the_same_in_awkward_ones_agree() -> None:
     np.testing.assert_allclose(found[1][1], found[0][1], rtol=1e-9)
     np.testing.assert_array_equal(found[1][2], found[0][2])
     assert 0 < np.mean(found[0][2]) < 1
+
+
+@pytest.mark.parametrize(("unit", "bound"), [("K", 1e-9), ("degF", 1e-6)])
+def test_at_the_usual_accuracy_they_agree_too(unit: str, bound: float) -> None:
+    """The steps are the same in all units that differ by a factor, that of the time among them. Where a state is counted from another zero
+    (degF) they are not: the absolute tolerance is accuracy x the size of a state; there the two agree to the accuracy asked."""
+    awkward = AWKWARD.replace('unit = "degF"', f'unit = "{unit}"', 1)
+    found = []
+    u = np.random.default_rng(20261202).uniform(size=(16, len(parse_study(SI).inputs.items)))
+    for study in (parse_study(SI), parse_study(awkward)):
+        compiled, x = compile_code(build(study.equations)), study.inputs.values(u)
+        settings = Settings(1e-6, np.ones(2), study.lowest, study.highest)
+        scales, _ = pilot_scales(compiled, x, study.times.solved, study.time.start, settings)
+        batch = solve(compiled, x, study.times.solved, study.time.start, replace(settings, scales=scales))
+        factor, shift = parse_unit(study.watched[0].unit).conversion(parse_unit(parse_study(SI).watched[0].unit))
+        found.append(batch.values[:, 0] * factor + shift)
+    assert np.max(np.abs(found[0] - found[1])) < bound * np.max(np.abs(found[0]))
 
 
 TANK = study_of(

@@ -53,130 +53,139 @@ entry:
   %v46 = fmul <8 x double> %v45, splat (double 0x3FF0000000000000)
   %v47 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v46)
   %v48 = fcmp olt <8 x double> %v41, splat (double 0x3EE4F8B588E368F1)
-  %v49 = fcmp olt <8 x double> %v47, splat (double 0x3EE4F8B588E368F1)
-  %v50 = or <8 x i1> %v48, %v49
-  %v51 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
-  %v52 = fmul <8 x double> splat (double 0x3F847AE147AE147B), %v41
-  %v53 = fdiv <8 x double> %v52, %v47
-  %v54 = select <8 x i1> %v50, <8 x double> %v51, <8 x double> %v53
-  %v55 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
-  %v56 = getelementptr inbounds <8 x double>, ptr %settings, i64 2
-  %v57 = load <8 x double>, ptr %v56, align 64
-  %v58 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v55, <8 x double> %v57)
-  %v59 = fcmp ogt <8 x double> %v54, %v58
-  %v60 = select <8 x i1> %v59, <8 x double> %v54, <8 x double> %v58
-  %v61 = fcmp olt <8 x double> %v60, %v31
-  %v62 = select <8 x i1> %v61, <8 x double> %v60, <8 x double> %v31
-  %v63 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v62, <8 x double> %v27, <8 x double> %v2)
-  %v64 = fadd <8 x double> %v7, %v62
-  %v65 = fsub <8 x double> %v64, %v13
-  %v66 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v65, <8 x double> %v18)
-  %v67 = fcmp ogt <8 x double> %v63, splat (double 0x0000000000000000)
-  %v68 = select <8 x i1> %v67, <8 x double> %v63, <8 x double> splat (double 0x0000000000000000)
-  %v69 = fcmp uno <8 x double> %v63, %v63
-  %v70 = select <8 x i1> %v69, <8 x double> %v63, <8 x double> %v68
-  %v71 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v70)
-  %v72 = fneg <8 x double> %v11
-  %v73 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v72, <8 x double> %v71, <8 x double> %v66)
-  %v74 = fdiv <8 x double> %v73, %v9
-  %v75 = fsub <8 x double> %v74, %v27
-  %v76 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v2)
-  %v77 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v33, <8 x double> %v76, <8 x double> %v36)
-  %v78 = fdiv <8 x double> %v75, %v77
-  %v79 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v78, <8 x double> %v78, <8 x double> splat (double 0x0000000000000000))
-  %v80 = fmul <8 x double> %v79, splat (double 0x3FF0000000000000)
-  %v81 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v80)
-  %v82 = fdiv <8 x double> %v81, %v62
-  %v83 = fcmp ogt <8 x double> %v47, %v82
-  %v84 = select <8 x i1> %v83, <8 x double> %v47, <8 x double> %v82
-  %v85 = fcmp olt <8 x double> %v84, splat (double 0x73D658E3AB795204)
-  %v86 = select <8 x i1> %v85, <8 x double> %v84, <8 x double> splat (double 0x73D658E3AB795204)
-  %v87 = fcmp ogt <8 x double> %v86, splat (double 0x0C06E93F5DA2824C)
-  %v88 = select <8 x i1> %v87, <8 x double> %v86, <8 x double> splat (double 0x0C06E93F5DA2824C)
-  %v89 = bitcast <8 x double> %v88 to <8 x i64>
-  %v90 = lshr <8 x i64> %v89, splat (i64 52)
-  %v91 = or <8 x i64> %v90, splat (i64 4841369599423283200)
-  %v92 = bitcast <8 x i64> %v91 to <8 x double>
-  %v93 = fsub <8 x double> %v92, splat (double 0x43300000000003FF)
-  %v94 = and <8 x i64> %v89, splat (i64 4503599627370495)
-  %v95 = or <8 x i64> %v94, splat (i64 4607182418800017408)
-  %v96 = bitcast <8 x i64> %v95 to <8 x double>
-  %v97 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v96, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
-  %v98 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v97, <8 x double> %v96, <8 x double> splat (double 0x3FF96E7C9A8551E4))
-  %v99 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v98, <8 x double> %v96, <8 x double> splat (double 0xC00BEB4578B01506))
-  %v100 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v99, <8 x double> %v96, <8 x double> splat (double 0x401431010187BF7D))
-  %v101 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v100, <8 x double> %v96, <8 x double> splat (double 0xC0064DAC40654ADD))
-  %v102 = fadd <8 x double> %v93, %v101
-  %v103 = fmul <8 x double> %v102, splat (double 0xBFC999999999999A)
-  %v104 = fadd <8 x double> %v103, splat (double 0xBFF542A5A12E1C5A)
-  %v105 = fadd <8 x double> %v104, splat (double 0x4338000000000000)
-  %v106 = fsub <8 x double> %v105, splat (double 0x4338000000000000)
-  %v107 = fsub <8 x double> %v104, %v106
-  %v108 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v107, <8 x double> splat (double 0x3FACA1CEF240FA9C))
-  %v109 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v108, <8 x double> %v107, <8 x double> splat (double 0x3FCEBFA4C61D8623))
-  %v110 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v109, <8 x double> %v107, <8 x double> splat (double 0x3FE62E0C17657753))
-  %v111 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v110, <8 x double> %v107, <8 x double> splat (double 0x3FF0000000000000))
-  %v112 = bitcast <8 x double> %v105 to <8 x i64>
-  %v113 = shl <8 x i64> %v112, splat (i64 52)
-  %v114 = bitcast <8 x double> %v111 to <8 x i64>
-  %v115 = add <8 x i64> %v114, %v113
-  %v116 = bitcast <8 x i64> %v115 to <8 x double>
-  %v117 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
-  %v118 = fmul <8 x double> %v62, splat (double 0x3F50624DD2F1A9FC)
-  %v119 = fcmp ogt <8 x double> %v117, %v118
-  %v120 = select <8 x i1> %v119, <8 x double> %v117, <8 x double> %v118
-  %v121 = fcmp ole <8 x double> %v84, splat (double 0x3CD203AF9EE75616)
-  %v122 = select <8 x i1> %v121, <8 x double> %v120, <8 x double> %v116
-  %v123 = fmul <8 x double> splat (double 0x4059000000000000), %v62
-  %v124 = fcmp olt <8 x double> %v123, %v122
-  %v125 = select <8 x i1> %v124, <8 x double> %v123, <8 x double> %v122
-  %v126 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
-  %v127 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v126, <8 x double> %v57)
-  %v128 = fcmp ogt <8 x double> %v125, %v127
-  %v129 = select <8 x i1> %v128, <8 x double> %v125, <8 x double> %v127
-  %v130 = fcmp olt <8 x double> %v129, %v31
-  %v131 = select <8 x i1> %v130, <8 x double> %v129, <8 x double> %v31
-  %v132 = fcmp ord <8 x double> %v82, %v82
-  %v133 = select <8 x i1> %v132, <8 x double> %v131, <8 x double> %v62
-  %v134 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
-  store <8 x double> %v133, ptr %v134, align 64
-  %v135 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
-  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v135, align 64
-  %v136 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
-  store <8 x double> splat (double 0x0000000000000000), ptr %v136, align 64
-  %v137 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
-  store <8 x double> splat (double 0x0000000000000000), ptr %v137, align 64
-  %v138 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
-  store <8 x double> splat (double 0x0000000000000000), ptr %v138, align 64
-  %v139 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
-  store <8 x double> splat (double 0x0000000000000000), ptr %v139, align 64
-  %v140 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
-  store <8 x double> splat (double 0x0000000000000000), ptr %v140, align 64
-  %v141 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v141, align 64
-  %v142 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
-  store <8 x double> %v7, ptr %v142, align 64
-  %v143 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v143, align 64
-  %v144 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
-  %v145 = load <8 x double>, ptr %v144, align 64
-  %v146 = fcmp olt <8 x double> %v2, %v145
-  %v147 = or <8 x i1> zeroinitializer, %v146
-  %v148 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
-  %v149 = load <8 x double>, ptr %v148, align 64
-  %v150 = fcmp ogt <8 x double> %v2, %v149
-  %v151 = or <8 x i1> %v147, %v150
-  %v152 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v2, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
-  %v153 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v27, <8 x double> splat (double 0x0000000000000000), <8 x double> %v152)
-  %v154 = fcmp uno <8 x double> %v153, %v153
-  %v155 = select <8 x i1> %v151, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
-  %v156 = select <8 x i1> %v154, <8 x double> splat (double 0x4008000000000000), <8 x double> %v155
-  %v157 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
-  store <8 x double> %v156, ptr %v157, align 64
-  %v158 = or <8 x i1> %v151, %v154
-  %v159 = bitcast <8 x i1> %v158 to i8
-  %v160 = zext i8 %v159 to i64
-  ret i64 %v160
+  %v49 = fmul <8 x double> %v47, %v31
+  %v50 = fcmp olt <8 x double> %v49, splat (double 0x3EE4F8B588E368F1)
+  %v51 = or <8 x i1> %v48, %v50
+  %v52 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
+  %v53 = fmul <8 x double> splat (double 0x3F847AE147AE147B), %v41
+  %v54 = fdiv <8 x double> %v53, %v47
+  %v55 = select <8 x i1> %v51, <8 x double> %v52, <8 x double> %v54
+  %v56 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
+  %v57 = getelementptr inbounds <8 x double>, ptr %settings, i64 2
+  %v58 = load <8 x double>, ptr %v57, align 64
+  %v59 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v56, <8 x double> %v58)
+  %v60 = fcmp ogt <8 x double> %v55, %v59
+  %v61 = select <8 x i1> %v60, <8 x double> %v55, <8 x double> %v59
+  %v62 = fcmp olt <8 x double> %v61, %v31
+  %v63 = select <8 x i1> %v62, <8 x double> %v61, <8 x double> %v31
+  %v64 = fdiv <8 x double> %v41, %v47
+  %v65 = fcmp olt <8 x double> %v64, %v31
+  %v66 = select <8 x i1> %v65, <8 x double> %v64, <8 x double> %v31
+  %v67 = select <8 x i1> %v51, <8 x double> %v31, <8 x double> %v66
+  %v68 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v63, <8 x double> %v27, <8 x double> %v2)
+  %v69 = fadd <8 x double> %v7, %v63
+  %v70 = fsub <8 x double> %v69, %v13
+  %v71 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v16, <8 x double> %v70, <8 x double> %v18)
+  %v72 = fcmp ogt <8 x double> %v68, splat (double 0x0000000000000000)
+  %v73 = select <8 x i1> %v72, <8 x double> %v68, <8 x double> splat (double 0x0000000000000000)
+  %v74 = fcmp uno <8 x double> %v68, %v68
+  %v75 = select <8 x i1> %v74, <8 x double> %v68, <8 x double> %v73
+  %v76 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v75)
+  %v77 = fneg <8 x double> %v11
+  %v78 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v77, <8 x double> %v76, <8 x double> %v71)
+  %v79 = fdiv <8 x double> %v78, %v9
+  %v80 = fsub <8 x double> %v79, %v27
+  %v81 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v2)
+  %v82 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v33, <8 x double> %v81, <8 x double> %v36)
+  %v83 = fdiv <8 x double> %v80, %v82
+  %v84 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v83, <8 x double> %v83, <8 x double> splat (double 0x0000000000000000))
+  %v85 = fmul <8 x double> %v84, splat (double 0x3FF0000000000000)
+  %v86 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v85)
+  %v87 = fdiv <8 x double> %v86, %v63
+  %v88 = fmul <8 x double> %v47, %v67
+  %v89 = fmul <8 x double> %v87, %v67
+  %v90 = fmul <8 x double> %v89, %v67
+  %v91 = fcmp ogt <8 x double> %v88, %v90
+  %v92 = select <8 x i1> %v91, <8 x double> %v88, <8 x double> %v90
+  %v93 = fcmp olt <8 x double> %v92, splat (double 0x73D658E3AB795204)
+  %v94 = select <8 x i1> %v93, <8 x double> %v92, <8 x double> splat (double 0x73D658E3AB795204)
+  %v95 = fcmp ogt <8 x double> %v94, splat (double 0x0C06E93F5DA2824C)
+  %v96 = select <8 x i1> %v95, <8 x double> %v94, <8 x double> splat (double 0x0C06E93F5DA2824C)
+  %v97 = bitcast <8 x double> %v96 to <8 x i64>
+  %v98 = lshr <8 x i64> %v97, splat (i64 52)
+  %v99 = or <8 x i64> %v98, splat (i64 4841369599423283200)
+  %v100 = bitcast <8 x i64> %v99 to <8 x double>
+  %v101 = fsub <8 x double> %v100, splat (double 0x43300000000003FF)
+  %v102 = and <8 x i64> %v97, splat (i64 4503599627370495)
+  %v103 = or <8 x i64> %v102, splat (i64 4607182418800017408)
+  %v104 = bitcast <8 x i64> %v103 to <8 x double>
+  %v105 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v104, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
+  %v106 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v105, <8 x double> %v104, <8 x double> splat (double 0x3FF96E7C9A8551E4))
+  %v107 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v106, <8 x double> %v104, <8 x double> splat (double 0xC00BEB4578B01506))
+  %v108 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v107, <8 x double> %v104, <8 x double> splat (double 0x401431010187BF7D))
+  %v109 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v108, <8 x double> %v104, <8 x double> splat (double 0xC0064DAC40654ADD))
+  %v110 = fadd <8 x double> %v101, %v109
+  %v111 = fmul <8 x double> %v110, splat (double 0xBFC999999999999A)
+  %v112 = fadd <8 x double> %v111, splat (double 0xBFF542A5A12E1C5A)
+  %v113 = fadd <8 x double> %v112, splat (double 0x4338000000000000)
+  %v114 = fsub <8 x double> %v113, splat (double 0x4338000000000000)
+  %v115 = fsub <8 x double> %v112, %v114
+  %v116 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v115, <8 x double> splat (double 0x3FACA1CEF240FA9C))
+  %v117 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v116, <8 x double> %v115, <8 x double> splat (double 0x3FCEBFA4C61D8623))
+  %v118 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v117, <8 x double> %v115, <8 x double> splat (double 0x3FE62E0C17657753))
+  %v119 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v118, <8 x double> %v115, <8 x double> splat (double 0x3FF0000000000000))
+  %v120 = bitcast <8 x double> %v113 to <8 x i64>
+  %v121 = shl <8 x i64> %v120, splat (i64 52)
+  %v122 = bitcast <8 x double> %v119 to <8 x i64>
+  %v123 = add <8 x i64> %v122, %v121
+  %v124 = bitcast <8 x i64> %v123 to <8 x double>
+  %v125 = fmul <8 x double> %v67, %v124
+  %v126 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
+  %v127 = fmul <8 x double> %v63, splat (double 0x3F50624DD2F1A9FC)
+  %v128 = fcmp ogt <8 x double> %v126, %v127
+  %v129 = select <8 x i1> %v128, <8 x double> %v126, <8 x double> %v127
+  %v130 = fcmp ole <8 x double> %v92, splat (double 0x3CD203AF9EE75616)
+  %v131 = select <8 x i1> %v130, <8 x double> %v129, <8 x double> %v125
+  %v132 = fmul <8 x double> splat (double 0x4059000000000000), %v63
+  %v133 = fcmp olt <8 x double> %v132, %v131
+  %v134 = select <8 x i1> %v133, <8 x double> %v132, <8 x double> %v131
+  %v135 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
+  %v136 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v135, <8 x double> %v58)
+  %v137 = fcmp ogt <8 x double> %v134, %v136
+  %v138 = select <8 x i1> %v137, <8 x double> %v134, <8 x double> %v136
+  %v139 = fcmp olt <8 x double> %v138, %v31
+  %v140 = select <8 x i1> %v139, <8 x double> %v138, <8 x double> %v31
+  %v141 = fcmp ord <8 x double> %v87, %v87
+  %v142 = select <8 x i1> %v141, <8 x double> %v140, <8 x double> %v63
+  %v143 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
+  store <8 x double> %v142, ptr %v143, align 64
+  %v144 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
+  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v144, align 64
+  %v145 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
+  store <8 x double> splat (double 0x0000000000000000), ptr %v145, align 64
+  %v146 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
+  store <8 x double> splat (double 0x0000000000000000), ptr %v146, align 64
+  %v147 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
+  store <8 x double> splat (double 0x0000000000000000), ptr %v147, align 64
+  %v148 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
+  store <8 x double> splat (double 0x0000000000000000), ptr %v148, align 64
+  %v149 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
+  store <8 x double> splat (double 0x0000000000000000), ptr %v149, align 64
+  %v150 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v150, align 64
+  %v151 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  store <8 x double> %v7, ptr %v151, align 64
+  %v152 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v152, align 64
+  %v153 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
+  %v154 = load <8 x double>, ptr %v153, align 64
+  %v155 = fcmp olt <8 x double> %v2, %v154
+  %v156 = or <8 x i1> zeroinitializer, %v155
+  %v157 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
+  %v158 = load <8 x double>, ptr %v157, align 64
+  %v159 = fcmp ogt <8 x double> %v2, %v158
+  %v160 = or <8 x i1> %v156, %v159
+  %v161 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v2, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
+  %v162 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v27, <8 x double> splat (double 0x0000000000000000), <8 x double> %v161)
+  %v163 = fcmp uno <8 x double> %v162, %v162
+  %v164 = select <8 x i1> %v160, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
+  %v165 = select <8 x i1> %v163, <8 x double> splat (double 0x4008000000000000), <8 x double> %v164
+  %v166 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
+  store <8 x double> %v165, ptr %v166, align 64
+  %v167 = or <8 x i1> %v160, %v163
+  %v168 = bitcast <8 x i1> %v167 to i8
+  %v169 = zext i8 %v168 to i64
+  ret i64 %v169
 }
 
 define i64 @uq_rates(ptr noalias %lanes, ptr noalias readonly %settings) #0 {

@@ -53,128 +53,137 @@ entry:
   %v46 = fmul <8 x double> %v45, splat (double 0x3FF0000000000000)
   %v47 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v46)
   %v48 = fcmp olt <8 x double> %v41, splat (double 0x3EE4F8B588E368F1)
-  %v49 = fcmp olt <8 x double> %v47, splat (double 0x3EE4F8B588E368F1)
-  %v50 = or <8 x i1> %v48, %v49
-  %v51 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
-  %v52 = fmul <8 x double> splat (double 0x3F847AE147AE147B), %v41
-  %v53 = fdiv <8 x double> %v52, %v47
-  %v54 = select <8 x i1> %v50, <8 x double> %v51, <8 x double> %v53
-  %v55 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
-  %v56 = getelementptr inbounds <8 x double>, ptr %settings, i64 2
-  %v57 = load <8 x double>, ptr %v56, align 64
-  %v58 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v55, <8 x double> %v57)
-  %v59 = fcmp ogt <8 x double> %v54, %v58
-  %v60 = select <8 x i1> %v59, <8 x double> %v54, <8 x double> %v58
-  %v61 = fcmp olt <8 x double> %v60, %v31
-  %v62 = select <8 x i1> %v61, <8 x double> %v60, <8 x double> %v31
-  %v63 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v62, <8 x double> %v27, <8 x double> %v2)
-  %v64 = fadd <8 x double> %v7, %v62
-  %v65 = fsub <8 x double> %v64, %v11
-  %v66 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v18, <8 x double> %v65, <8 x double> %v16)
-  %v67 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v66, <8 x double> %v65, <8 x double> %v14)
-  %v68 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v67, <8 x double> %v65, <8 x double> %v22)
-  %v69 = call <8 x double> @table.loss(<8 x double> %v63)
-  %v70 = fsub <8 x double> %v68, %v63
-  %v71 = fneg <8 x double> %v69
-  %v72 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v9, <8 x double> %v70, <8 x double> %v71)
-  %v73 = fsub <8 x double> %v72, %v27
-  %v74 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v2)
-  %v75 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v33, <8 x double> %v74, <8 x double> %v36)
-  %v76 = fdiv <8 x double> %v73, %v75
-  %v77 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v76, <8 x double> %v76, <8 x double> splat (double 0x0000000000000000))
-  %v78 = fmul <8 x double> %v77, splat (double 0x3FF0000000000000)
-  %v79 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v78)
-  %v80 = fdiv <8 x double> %v79, %v62
-  %v81 = fcmp ogt <8 x double> %v47, %v80
-  %v82 = select <8 x i1> %v81, <8 x double> %v47, <8 x double> %v80
-  %v83 = fcmp olt <8 x double> %v82, splat (double 0x73D658E3AB795204)
-  %v84 = select <8 x i1> %v83, <8 x double> %v82, <8 x double> splat (double 0x73D658E3AB795204)
-  %v85 = fcmp ogt <8 x double> %v84, splat (double 0x0C06E93F5DA2824C)
-  %v86 = select <8 x i1> %v85, <8 x double> %v84, <8 x double> splat (double 0x0C06E93F5DA2824C)
-  %v87 = bitcast <8 x double> %v86 to <8 x i64>
-  %v88 = lshr <8 x i64> %v87, splat (i64 52)
-  %v89 = or <8 x i64> %v88, splat (i64 4841369599423283200)
-  %v90 = bitcast <8 x i64> %v89 to <8 x double>
-  %v91 = fsub <8 x double> %v90, splat (double 0x43300000000003FF)
-  %v92 = and <8 x i64> %v87, splat (i64 4503599627370495)
-  %v93 = or <8 x i64> %v92, splat (i64 4607182418800017408)
-  %v94 = bitcast <8 x i64> %v93 to <8 x double>
-  %v95 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v94, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
-  %v96 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v95, <8 x double> %v94, <8 x double> splat (double 0x3FF96E7C9A8551E4))
-  %v97 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v96, <8 x double> %v94, <8 x double> splat (double 0xC00BEB4578B01506))
-  %v98 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v97, <8 x double> %v94, <8 x double> splat (double 0x401431010187BF7D))
-  %v99 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v98, <8 x double> %v94, <8 x double> splat (double 0xC0064DAC40654ADD))
-  %v100 = fadd <8 x double> %v91, %v99
-  %v101 = fmul <8 x double> %v100, splat (double 0xBFC0000000000000)
-  %v102 = fadd <8 x double> %v101, splat (double 0xBFEA934F0979A371)
-  %v103 = fadd <8 x double> %v102, splat (double 0x4338000000000000)
-  %v104 = fsub <8 x double> %v103, splat (double 0x4338000000000000)
-  %v105 = fsub <8 x double> %v102, %v104
-  %v106 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v105, <8 x double> splat (double 0x3FACA1CEF240FA9C))
-  %v107 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v106, <8 x double> %v105, <8 x double> splat (double 0x3FCEBFA4C61D8623))
-  %v108 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v107, <8 x double> %v105, <8 x double> splat (double 0x3FE62E0C17657753))
-  %v109 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v108, <8 x double> %v105, <8 x double> splat (double 0x3FF0000000000000))
-  %v110 = bitcast <8 x double> %v103 to <8 x i64>
-  %v111 = shl <8 x i64> %v110, splat (i64 52)
-  %v112 = bitcast <8 x double> %v109 to <8 x i64>
-  %v113 = add <8 x i64> %v112, %v111
-  %v114 = bitcast <8 x i64> %v113 to <8 x double>
-  %v115 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
-  %v116 = fmul <8 x double> %v62, splat (double 0x3F50624DD2F1A9FC)
-  %v117 = fcmp ogt <8 x double> %v115, %v116
-  %v118 = select <8 x i1> %v117, <8 x double> %v115, <8 x double> %v116
-  %v119 = fcmp ole <8 x double> %v82, splat (double 0x3CD203AF9EE75616)
-  %v120 = select <8 x i1> %v119, <8 x double> %v118, <8 x double> %v114
-  %v121 = fmul <8 x double> splat (double 0x4059000000000000), %v62
-  %v122 = fcmp olt <8 x double> %v121, %v120
-  %v123 = select <8 x i1> %v122, <8 x double> %v121, <8 x double> %v120
-  %v124 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
-  %v125 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v124, <8 x double> %v57)
-  %v126 = fcmp ogt <8 x double> %v123, %v125
-  %v127 = select <8 x i1> %v126, <8 x double> %v123, <8 x double> %v125
-  %v128 = fcmp olt <8 x double> %v127, %v31
-  %v129 = select <8 x i1> %v128, <8 x double> %v127, <8 x double> %v31
-  %v130 = fcmp ord <8 x double> %v80, %v80
-  %v131 = select <8 x i1> %v130, <8 x double> %v129, <8 x double> %v62
-  %v132 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
-  store <8 x double> %v131, ptr %v132, align 64
-  %v133 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
-  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v133, align 64
-  %v134 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
-  store <8 x double> splat (double 0x0000000000000000), ptr %v134, align 64
-  %v135 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
-  store <8 x double> splat (double 0x0000000000000000), ptr %v135, align 64
-  %v136 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
-  store <8 x double> splat (double 0x0000000000000000), ptr %v136, align 64
-  %v137 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
-  store <8 x double> splat (double 0x0000000000000000), ptr %v137, align 64
-  %v138 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
-  store <8 x double> splat (double 0x0000000000000000), ptr %v138, align 64
-  %v139 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v139, align 64
-  %v140 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
-  store <8 x double> %v7, ptr %v140, align 64
-  %v141 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v141, align 64
-  %v142 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
-  %v143 = load <8 x double>, ptr %v142, align 64
-  %v144 = fcmp olt <8 x double> %v2, %v143
-  %v145 = or <8 x i1> zeroinitializer, %v144
-  %v146 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
-  %v147 = load <8 x double>, ptr %v146, align 64
-  %v148 = fcmp ogt <8 x double> %v2, %v147
-  %v149 = or <8 x i1> %v145, %v148
-  %v150 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v2, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
-  %v151 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v27, <8 x double> splat (double 0x0000000000000000), <8 x double> %v150)
-  %v152 = fcmp uno <8 x double> %v151, %v151
-  %v153 = select <8 x i1> %v149, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
-  %v154 = select <8 x i1> %v152, <8 x double> splat (double 0x4008000000000000), <8 x double> %v153
-  %v155 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
-  store <8 x double> %v154, ptr %v155, align 64
-  %v156 = or <8 x i1> %v149, %v152
-  %v157 = bitcast <8 x i1> %v156 to i8
-  %v158 = zext i8 %v157 to i64
-  ret i64 %v158
+  %v49 = fmul <8 x double> %v47, %v31
+  %v50 = fcmp olt <8 x double> %v49, splat (double 0x3EE4F8B588E368F1)
+  %v51 = or <8 x i1> %v48, %v50
+  %v52 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
+  %v53 = fmul <8 x double> splat (double 0x3F847AE147AE147B), %v41
+  %v54 = fdiv <8 x double> %v53, %v47
+  %v55 = select <8 x i1> %v51, <8 x double> %v52, <8 x double> %v54
+  %v56 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
+  %v57 = getelementptr inbounds <8 x double>, ptr %settings, i64 2
+  %v58 = load <8 x double>, ptr %v57, align 64
+  %v59 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v56, <8 x double> %v58)
+  %v60 = fcmp ogt <8 x double> %v55, %v59
+  %v61 = select <8 x i1> %v60, <8 x double> %v55, <8 x double> %v59
+  %v62 = fcmp olt <8 x double> %v61, %v31
+  %v63 = select <8 x i1> %v62, <8 x double> %v61, <8 x double> %v31
+  %v64 = fdiv <8 x double> %v41, %v47
+  %v65 = fcmp olt <8 x double> %v64, %v31
+  %v66 = select <8 x i1> %v65, <8 x double> %v64, <8 x double> %v31
+  %v67 = select <8 x i1> %v51, <8 x double> %v31, <8 x double> %v66
+  %v68 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v63, <8 x double> %v27, <8 x double> %v2)
+  %v69 = fadd <8 x double> %v7, %v63
+  %v70 = fsub <8 x double> %v69, %v11
+  %v71 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v18, <8 x double> %v70, <8 x double> %v16)
+  %v72 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v71, <8 x double> %v70, <8 x double> %v14)
+  %v73 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v72, <8 x double> %v70, <8 x double> %v22)
+  %v74 = call <8 x double> @table.loss(<8 x double> %v68)
+  %v75 = fsub <8 x double> %v73, %v68
+  %v76 = fneg <8 x double> %v74
+  %v77 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v9, <8 x double> %v75, <8 x double> %v76)
+  %v78 = fsub <8 x double> %v77, %v27
+  %v79 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v2)
+  %v80 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v33, <8 x double> %v79, <8 x double> %v36)
+  %v81 = fdiv <8 x double> %v78, %v80
+  %v82 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v81, <8 x double> %v81, <8 x double> splat (double 0x0000000000000000))
+  %v83 = fmul <8 x double> %v82, splat (double 0x3FF0000000000000)
+  %v84 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v83)
+  %v85 = fdiv <8 x double> %v84, %v63
+  %v86 = fmul <8 x double> %v47, %v67
+  %v87 = fmul <8 x double> %v85, %v67
+  %v88 = fmul <8 x double> %v87, %v67
+  %v89 = fcmp ogt <8 x double> %v86, %v88
+  %v90 = select <8 x i1> %v89, <8 x double> %v86, <8 x double> %v88
+  %v91 = fcmp olt <8 x double> %v90, splat (double 0x73D658E3AB795204)
+  %v92 = select <8 x i1> %v91, <8 x double> %v90, <8 x double> splat (double 0x73D658E3AB795204)
+  %v93 = fcmp ogt <8 x double> %v92, splat (double 0x0C06E93F5DA2824C)
+  %v94 = select <8 x i1> %v93, <8 x double> %v92, <8 x double> splat (double 0x0C06E93F5DA2824C)
+  %v95 = bitcast <8 x double> %v94 to <8 x i64>
+  %v96 = lshr <8 x i64> %v95, splat (i64 52)
+  %v97 = or <8 x i64> %v96, splat (i64 4841369599423283200)
+  %v98 = bitcast <8 x i64> %v97 to <8 x double>
+  %v99 = fsub <8 x double> %v98, splat (double 0x43300000000003FF)
+  %v100 = and <8 x i64> %v95, splat (i64 4503599627370495)
+  %v101 = or <8 x i64> %v100, splat (i64 4607182418800017408)
+  %v102 = bitcast <8 x i64> %v101 to <8 x double>
+  %v103 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v102, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
+  %v104 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v103, <8 x double> %v102, <8 x double> splat (double 0x3FF96E7C9A8551E4))
+  %v105 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v104, <8 x double> %v102, <8 x double> splat (double 0xC00BEB4578B01506))
+  %v106 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v105, <8 x double> %v102, <8 x double> splat (double 0x401431010187BF7D))
+  %v107 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v106, <8 x double> %v102, <8 x double> splat (double 0xC0064DAC40654ADD))
+  %v108 = fadd <8 x double> %v99, %v107
+  %v109 = fmul <8 x double> %v108, splat (double 0xBFC0000000000000)
+  %v110 = fadd <8 x double> %v109, splat (double 0xBFEA934F0979A371)
+  %v111 = fadd <8 x double> %v110, splat (double 0x4338000000000000)
+  %v112 = fsub <8 x double> %v111, splat (double 0x4338000000000000)
+  %v113 = fsub <8 x double> %v110, %v112
+  %v114 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v113, <8 x double> splat (double 0x3FACA1CEF240FA9C))
+  %v115 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v114, <8 x double> %v113, <8 x double> splat (double 0x3FCEBFA4C61D8623))
+  %v116 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v115, <8 x double> %v113, <8 x double> splat (double 0x3FE62E0C17657753))
+  %v117 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v116, <8 x double> %v113, <8 x double> splat (double 0x3FF0000000000000))
+  %v118 = bitcast <8 x double> %v111 to <8 x i64>
+  %v119 = shl <8 x i64> %v118, splat (i64 52)
+  %v120 = bitcast <8 x double> %v117 to <8 x i64>
+  %v121 = add <8 x i64> %v120, %v119
+  %v122 = bitcast <8 x i64> %v121 to <8 x double>
+  %v123 = fmul <8 x double> %v67, %v122
+  %v124 = fmul <8 x double> %v31, splat (double 0x3EB0C6F7A0B5ED8D)
+  %v125 = fmul <8 x double> %v63, splat (double 0x3F50624DD2F1A9FC)
+  %v126 = fcmp ogt <8 x double> %v124, %v125
+  %v127 = select <8 x i1> %v126, <8 x double> %v124, <8 x double> %v125
+  %v128 = fcmp ole <8 x double> %v90, splat (double 0x3CD203AF9EE75616)
+  %v129 = select <8 x i1> %v128, <8 x double> %v127, <8 x double> %v123
+  %v130 = fmul <8 x double> splat (double 0x4059000000000000), %v63
+  %v131 = fcmp olt <8 x double> %v130, %v129
+  %v132 = select <8 x i1> %v131, <8 x double> %v130, <8 x double> %v129
+  %v133 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v7)
+  %v134 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v133, <8 x double> %v58)
+  %v135 = fcmp ogt <8 x double> %v132, %v134
+  %v136 = select <8 x i1> %v135, <8 x double> %v132, <8 x double> %v134
+  %v137 = fcmp olt <8 x double> %v136, %v31
+  %v138 = select <8 x i1> %v137, <8 x double> %v136, <8 x double> %v31
+  %v139 = fcmp ord <8 x double> %v85, %v85
+  %v140 = select <8 x i1> %v139, <8 x double> %v138, <8 x double> %v63
+  %v141 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
+  store <8 x double> %v140, ptr %v141, align 64
+  %v142 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
+  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v142, align 64
+  %v143 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
+  store <8 x double> splat (double 0x0000000000000000), ptr %v143, align 64
+  %v144 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
+  store <8 x double> splat (double 0x0000000000000000), ptr %v144, align 64
+  %v145 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
+  store <8 x double> splat (double 0x0000000000000000), ptr %v145, align 64
+  %v146 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
+  store <8 x double> splat (double 0x0000000000000000), ptr %v146, align 64
+  %v147 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
+  store <8 x double> splat (double 0x0000000000000000), ptr %v147, align 64
+  %v148 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v148, align 64
+  %v149 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  store <8 x double> %v7, ptr %v149, align 64
+  %v150 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v150, align 64
+  %v151 = getelementptr inbounds <8 x double>, ptr %settings, i64 10
+  %v152 = load <8 x double>, ptr %v151, align 64
+  %v153 = fcmp olt <8 x double> %v2, %v152
+  %v154 = or <8 x i1> zeroinitializer, %v153
+  %v155 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
+  %v156 = load <8 x double>, ptr %v155, align 64
+  %v157 = fcmp ogt <8 x double> %v2, %v156
+  %v158 = or <8 x i1> %v154, %v157
+  %v159 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v2, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
+  %v160 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v27, <8 x double> splat (double 0x0000000000000000), <8 x double> %v159)
+  %v161 = fcmp uno <8 x double> %v160, %v160
+  %v162 = select <8 x i1> %v158, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
+  %v163 = select <8 x i1> %v161, <8 x double> splat (double 0x4008000000000000), <8 x double> %v162
+  %v164 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
+  store <8 x double> %v163, ptr %v164, align 64
+  %v165 = or <8 x i1> %v158, %v161
+  %v166 = bitcast <8 x i1> %v165 to i8
+  %v167 = zext i8 %v166 to i64
+  ret i64 %v167
 }
 
 define i64 @uq_rates(ptr noalias %lanes, ptr noalias readonly %settings) #0 {

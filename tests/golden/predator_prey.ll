@@ -70,142 +70,151 @@ entry:
   %v59 = fmul <8 x double> %v58, splat (double 0x3FE0000000000000)
   %v60 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v59)
   %v61 = fcmp olt <8 x double> %v50, splat (double 0x3EE4F8B588E368F1)
-  %v62 = fcmp olt <8 x double> %v60, splat (double 0x3EE4F8B588E368F1)
-  %v63 = or <8 x i1> %v61, %v62
-  %v64 = fmul <8 x double> %v34, splat (double 0x3EB0C6F7A0B5ED8D)
-  %v65 = fmul <8 x double> splat (double 0x3F847AE147AE147B), %v50
-  %v66 = fdiv <8 x double> %v65, %v60
-  %v67 = select <8 x i1> %v63, <8 x double> %v64, <8 x double> %v66
-  %v68 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v16)
-  %v69 = getelementptr inbounds <8 x double>, ptr %settings, i64 2
-  %v70 = load <8 x double>, ptr %v69, align 64
-  %v71 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v68, <8 x double> %v70)
-  %v72 = fcmp ogt <8 x double> %v67, %v71
-  %v73 = select <8 x i1> %v72, <8 x double> %v67, <8 x double> %v71
-  %v74 = fcmp olt <8 x double> %v73, %v34
-  %v75 = select <8 x i1> %v74, <8 x double> %v73, <8 x double> %v34
-  %v76 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v75, <8 x double> %v26, <8 x double> %v4)
-  %v77 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v75, <8 x double> %v29, <8 x double> %v6)
-  %v78 = fmul <8 x double> %v18, %v76
-  %v79 = fmul <8 x double> %v20, %v76
-  %v80 = fneg <8 x double> %v79
-  %v81 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v80, <8 x double> %v77, <8 x double> %v78)
-  %v82 = fmul <8 x double> %v7, %v77
-  %v83 = fmul <8 x double> %v22, %v76
-  %v84 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v83, <8 x double> %v77, <8 x double> %v82)
-  %v85 = fsub <8 x double> %v81, %v26
-  %v86 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v4)
-  %v87 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v86, <8 x double> %v39)
-  %v88 = fdiv <8 x double> %v85, %v87
-  %v89 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v88, <8 x double> %v88, <8 x double> splat (double 0x0000000000000000))
-  %v90 = fsub <8 x double> %v84, %v29
-  %v91 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v6)
-  %v92 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v91, <8 x double> %v45)
+  %v62 = fmul <8 x double> %v60, %v34
+  %v63 = fcmp olt <8 x double> %v62, splat (double 0x3EE4F8B588E368F1)
+  %v64 = or <8 x i1> %v61, %v63
+  %v65 = fmul <8 x double> %v34, splat (double 0x3EB0C6F7A0B5ED8D)
+  %v66 = fmul <8 x double> splat (double 0x3F847AE147AE147B), %v50
+  %v67 = fdiv <8 x double> %v66, %v60
+  %v68 = select <8 x i1> %v64, <8 x double> %v65, <8 x double> %v67
+  %v69 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v16)
+  %v70 = getelementptr inbounds <8 x double>, ptr %settings, i64 2
+  %v71 = load <8 x double>, ptr %v70, align 64
+  %v72 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v69, <8 x double> %v71)
+  %v73 = fcmp ogt <8 x double> %v68, %v72
+  %v74 = select <8 x i1> %v73, <8 x double> %v68, <8 x double> %v72
+  %v75 = fcmp olt <8 x double> %v74, %v34
+  %v76 = select <8 x i1> %v75, <8 x double> %v74, <8 x double> %v34
+  %v77 = fdiv <8 x double> %v50, %v60
+  %v78 = fcmp olt <8 x double> %v77, %v34
+  %v79 = select <8 x i1> %v78, <8 x double> %v77, <8 x double> %v34
+  %v80 = select <8 x i1> %v64, <8 x double> %v34, <8 x double> %v79
+  %v81 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v76, <8 x double> %v26, <8 x double> %v4)
+  %v82 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v76, <8 x double> %v29, <8 x double> %v6)
+  %v83 = fmul <8 x double> %v18, %v81
+  %v84 = fmul <8 x double> %v20, %v81
+  %v85 = fneg <8 x double> %v84
+  %v86 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v85, <8 x double> %v82, <8 x double> %v83)
+  %v87 = fmul <8 x double> %v7, %v82
+  %v88 = fmul <8 x double> %v22, %v81
+  %v89 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v88, <8 x double> %v82, <8 x double> %v87)
+  %v90 = fsub <8 x double> %v86, %v26
+  %v91 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v4)
+  %v92 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v91, <8 x double> %v39)
   %v93 = fdiv <8 x double> %v90, %v92
-  %v94 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v93, <8 x double> %v93, <8 x double> %v89)
-  %v95 = fmul <8 x double> %v94, splat (double 0x3FE0000000000000)
-  %v96 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v95)
-  %v97 = fdiv <8 x double> %v96, %v75
-  %v98 = fcmp ogt <8 x double> %v60, %v97
-  %v99 = select <8 x i1> %v98, <8 x double> %v60, <8 x double> %v97
-  %v100 = fcmp olt <8 x double> %v99, splat (double 0x73D658E3AB795204)
-  %v101 = select <8 x i1> %v100, <8 x double> %v99, <8 x double> splat (double 0x73D658E3AB795204)
-  %v102 = fcmp ogt <8 x double> %v101, splat (double 0x0C06E93F5DA2824C)
-  %v103 = select <8 x i1> %v102, <8 x double> %v101, <8 x double> splat (double 0x0C06E93F5DA2824C)
-  %v104 = bitcast <8 x double> %v103 to <8 x i64>
-  %v105 = lshr <8 x i64> %v104, splat (i64 52)
-  %v106 = or <8 x i64> %v105, splat (i64 4841369599423283200)
-  %v107 = bitcast <8 x i64> %v106 to <8 x double>
-  %v108 = fsub <8 x double> %v107, splat (double 0x43300000000003FF)
-  %v109 = and <8 x i64> %v104, splat (i64 4503599627370495)
-  %v110 = or <8 x i64> %v109, splat (i64 4607182418800017408)
-  %v111 = bitcast <8 x i64> %v110 to <8 x double>
-  %v112 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v111, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
-  %v113 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v112, <8 x double> %v111, <8 x double> splat (double 0x3FF96E7C9A8551E4))
-  %v114 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v113, <8 x double> %v111, <8 x double> splat (double 0xC00BEB4578B01506))
-  %v115 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v114, <8 x double> %v111, <8 x double> splat (double 0x401431010187BF7D))
-  %v116 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v115, <8 x double> %v111, <8 x double> splat (double 0xC0064DAC40654ADD))
-  %v117 = fadd <8 x double> %v108, %v116
-  %v118 = fmul <8 x double> %v117, splat (double 0xBFC999999999999A)
-  %v119 = fadd <8 x double> %v118, splat (double 0xBFF542A5A12E1C5A)
-  %v120 = fadd <8 x double> %v119, splat (double 0x4338000000000000)
-  %v121 = fsub <8 x double> %v120, splat (double 0x4338000000000000)
-  %v122 = fsub <8 x double> %v119, %v121
-  %v123 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v122, <8 x double> splat (double 0x3FACA1CEF240FA9C))
-  %v124 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v123, <8 x double> %v122, <8 x double> splat (double 0x3FCEBFA4C61D8623))
-  %v125 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v124, <8 x double> %v122, <8 x double> splat (double 0x3FE62E0C17657753))
-  %v126 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v125, <8 x double> %v122, <8 x double> splat (double 0x3FF0000000000000))
-  %v127 = bitcast <8 x double> %v120 to <8 x i64>
-  %v128 = shl <8 x i64> %v127, splat (i64 52)
-  %v129 = bitcast <8 x double> %v126 to <8 x i64>
-  %v130 = add <8 x i64> %v129, %v128
-  %v131 = bitcast <8 x i64> %v130 to <8 x double>
-  %v132 = fmul <8 x double> %v34, splat (double 0x3EB0C6F7A0B5ED8D)
-  %v133 = fmul <8 x double> %v75, splat (double 0x3F50624DD2F1A9FC)
-  %v134 = fcmp ogt <8 x double> %v132, %v133
-  %v135 = select <8 x i1> %v134, <8 x double> %v132, <8 x double> %v133
-  %v136 = fcmp ole <8 x double> %v99, splat (double 0x3CD203AF9EE75616)
-  %v137 = select <8 x i1> %v136, <8 x double> %v135, <8 x double> %v131
-  %v138 = fmul <8 x double> splat (double 0x4059000000000000), %v75
-  %v139 = fcmp olt <8 x double> %v138, %v137
-  %v140 = select <8 x i1> %v139, <8 x double> %v138, <8 x double> %v137
-  %v141 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v16)
-  %v142 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v141, <8 x double> %v70)
-  %v143 = fcmp ogt <8 x double> %v140, %v142
-  %v144 = select <8 x i1> %v143, <8 x double> %v140, <8 x double> %v142
-  %v145 = fcmp olt <8 x double> %v144, %v34
-  %v146 = select <8 x i1> %v145, <8 x double> %v144, <8 x double> %v34
-  %v147 = fcmp ord <8 x double> %v97, %v97
-  %v148 = select <8 x i1> %v147, <8 x double> %v146, <8 x double> %v75
-  %v149 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
-  store <8 x double> %v148, ptr %v149, align 64
-  %v150 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
-  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v150, align 64
-  %v151 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
-  store <8 x double> splat (double 0x0000000000000000), ptr %v151, align 64
-  %v152 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
-  store <8 x double> splat (double 0x0000000000000000), ptr %v152, align 64
-  %v153 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
-  store <8 x double> splat (double 0x0000000000000000), ptr %v153, align 64
-  %v154 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
-  store <8 x double> splat (double 0x0000000000000000), ptr %v154, align 64
-  %v155 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
-  store <8 x double> splat (double 0x0000000000000000), ptr %v155, align 64
-  %v156 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v156, align 64
-  %v157 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
-  store <8 x double> %v16, ptr %v157, align 64
-  %v158 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
-  store <8 x double> splat (double 0x3FF0000000000000), ptr %v158, align 64
-  %v159 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
-  %v160 = load <8 x double>, ptr %v159, align 64
-  %v161 = fcmp olt <8 x double> %v4, %v160
-  %v162 = or <8 x i1> zeroinitializer, %v161
-  %v163 = getelementptr inbounds <8 x double>, ptr %settings, i64 13
-  %v164 = load <8 x double>, ptr %v163, align 64
-  %v165 = fcmp ogt <8 x double> %v4, %v164
-  %v166 = or <8 x i1> %v162, %v165
-  %v167 = getelementptr inbounds <8 x double>, ptr %settings, i64 12
-  %v168 = load <8 x double>, ptr %v167, align 64
-  %v169 = fcmp olt <8 x double> %v6, %v168
-  %v170 = or <8 x i1> %v166, %v169
-  %v171 = getelementptr inbounds <8 x double>, ptr %settings, i64 14
-  %v172 = load <8 x double>, ptr %v171, align 64
-  %v173 = fcmp ogt <8 x double> %v6, %v172
-  %v174 = or <8 x i1> %v170, %v173
-  %v175 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v4, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
-  %v176 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> splat (double 0x0000000000000000), <8 x double> %v175)
-  %v177 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v6, <8 x double> splat (double 0x0000000000000000), <8 x double> %v176)
-  %v178 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v29, <8 x double> splat (double 0x0000000000000000), <8 x double> %v177)
-  %v179 = fcmp uno <8 x double> %v178, %v178
-  %v180 = select <8 x i1> %v174, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
-  %v181 = select <8 x i1> %v179, <8 x double> splat (double 0x4008000000000000), <8 x double> %v180
-  %v182 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
-  store <8 x double> %v181, ptr %v182, align 64
-  %v183 = or <8 x i1> %v174, %v179
-  %v184 = bitcast <8 x i1> %v183 to i8
-  %v185 = zext i8 %v184 to i64
-  ret i64 %v185
+  %v94 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v93, <8 x double> %v93, <8 x double> splat (double 0x0000000000000000))
+  %v95 = fsub <8 x double> %v89, %v29
+  %v96 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v6)
+  %v97 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v36, <8 x double> %v96, <8 x double> %v45)
+  %v98 = fdiv <8 x double> %v95, %v97
+  %v99 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v98, <8 x double> %v98, <8 x double> %v94)
+  %v100 = fmul <8 x double> %v99, splat (double 0x3FE0000000000000)
+  %v101 = call <8 x double> @llvm.sqrt.v8f64(<8 x double> %v100)
+  %v102 = fdiv <8 x double> %v101, %v76
+  %v103 = fmul <8 x double> %v60, %v80
+  %v104 = fmul <8 x double> %v102, %v80
+  %v105 = fmul <8 x double> %v104, %v80
+  %v106 = fcmp ogt <8 x double> %v103, %v105
+  %v107 = select <8 x i1> %v106, <8 x double> %v103, <8 x double> %v105
+  %v108 = fcmp olt <8 x double> %v107, splat (double 0x73D658E3AB795204)
+  %v109 = select <8 x i1> %v108, <8 x double> %v107, <8 x double> splat (double 0x73D658E3AB795204)
+  %v110 = fcmp ogt <8 x double> %v109, splat (double 0x0C06E93F5DA2824C)
+  %v111 = select <8 x i1> %v110, <8 x double> %v109, <8 x double> splat (double 0x0C06E93F5DA2824C)
+  %v112 = bitcast <8 x double> %v111 to <8 x i64>
+  %v113 = lshr <8 x i64> %v112, splat (i64 52)
+  %v114 = or <8 x i64> %v113, splat (i64 4841369599423283200)
+  %v115 = bitcast <8 x i64> %v114 to <8 x double>
+  %v116 = fsub <8 x double> %v115, splat (double 0x43300000000003FF)
+  %v117 = and <8 x i64> %v112, splat (i64 4503599627370495)
+  %v118 = or <8 x i64> %v117, splat (i64 4607182418800017408)
+  %v119 = bitcast <8 x i64> %v118 to <8 x double>
+  %v120 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3FA604C059210386), <8 x double> %v119, <8 x double> splat (double 0xBFD9C2C7904CE9BE))
+  %v121 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v120, <8 x double> %v119, <8 x double> splat (double 0x3FF96E7C9A8551E4))
+  %v122 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v121, <8 x double> %v119, <8 x double> splat (double 0xC00BEB4578B01506))
+  %v123 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v122, <8 x double> %v119, <8 x double> splat (double 0x401431010187BF7D))
+  %v124 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v123, <8 x double> %v119, <8 x double> splat (double 0xC0064DAC40654ADD))
+  %v125 = fadd <8 x double> %v116, %v124
+  %v126 = fmul <8 x double> %v125, splat (double 0xBFC999999999999A)
+  %v127 = fadd <8 x double> %v126, splat (double 0xBFF542A5A12E1C5A)
+  %v128 = fadd <8 x double> %v127, splat (double 0x4338000000000000)
+  %v129 = fsub <8 x double> %v128, splat (double 0x4338000000000000)
+  %v130 = fsub <8 x double> %v127, %v129
+  %v131 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3F83CBFA3EF5DF15), <8 x double> %v130, <8 x double> splat (double 0x3FACA1CEF240FA9C))
+  %v132 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v131, <8 x double> %v130, <8 x double> splat (double 0x3FCEBFA4C61D8623))
+  %v133 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v132, <8 x double> %v130, <8 x double> splat (double 0x3FE62E0C17657753))
+  %v134 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v133, <8 x double> %v130, <8 x double> splat (double 0x3FF0000000000000))
+  %v135 = bitcast <8 x double> %v128 to <8 x i64>
+  %v136 = shl <8 x i64> %v135, splat (i64 52)
+  %v137 = bitcast <8 x double> %v134 to <8 x i64>
+  %v138 = add <8 x i64> %v137, %v136
+  %v139 = bitcast <8 x i64> %v138 to <8 x double>
+  %v140 = fmul <8 x double> %v80, %v139
+  %v141 = fmul <8 x double> %v34, splat (double 0x3EB0C6F7A0B5ED8D)
+  %v142 = fmul <8 x double> %v76, splat (double 0x3F50624DD2F1A9FC)
+  %v143 = fcmp ogt <8 x double> %v141, %v142
+  %v144 = select <8 x i1> %v143, <8 x double> %v141, <8 x double> %v142
+  %v145 = fcmp ole <8 x double> %v107, splat (double 0x3CD203AF9EE75616)
+  %v146 = select <8 x i1> %v145, <8 x double> %v144, <8 x double> %v140
+  %v147 = fmul <8 x double> splat (double 0x4059000000000000), %v76
+  %v148 = fcmp olt <8 x double> %v147, %v146
+  %v149 = select <8 x i1> %v148, <8 x double> %v147, <8 x double> %v146
+  %v150 = call <8 x double> @llvm.fabs.v8f64(<8 x double> %v16)
+  %v151 = call <8 x double> @llvm.fma.v8f64(<8 x double> splat (double 0x3CF0000000000000), <8 x double> %v150, <8 x double> %v71)
+  %v152 = fcmp ogt <8 x double> %v149, %v151
+  %v153 = select <8 x i1> %v152, <8 x double> %v149, <8 x double> %v151
+  %v154 = fcmp olt <8 x double> %v153, %v34
+  %v155 = select <8 x i1> %v154, <8 x double> %v153, <8 x double> %v34
+  %v156 = fcmp ord <8 x double> %v102, %v102
+  %v157 = select <8 x i1> %v156, <8 x double> %v155, <8 x double> %v76
+  %v158 = getelementptr inbounds <8 x double>, ptr %lanes, i64 1
+  store <8 x double> %v157, ptr %v158, align 64
+  %v159 = getelementptr inbounds <8 x double>, ptr %lanes, i64 6
+  store <8 x double> splat (double 0xC03A934F0979A371), ptr %v159, align 64
+  %v160 = getelementptr inbounds <8 x double>, ptr %lanes, i64 7
+  store <8 x double> splat (double 0x0000000000000000), ptr %v160, align 64
+  %v161 = getelementptr inbounds <8 x double>, ptr %lanes, i64 8
+  store <8 x double> splat (double 0x0000000000000000), ptr %v161, align 64
+  %v162 = getelementptr inbounds <8 x double>, ptr %lanes, i64 9
+  store <8 x double> splat (double 0x0000000000000000), ptr %v162, align 64
+  %v163 = getelementptr inbounds <8 x double>, ptr %lanes, i64 13
+  store <8 x double> splat (double 0x0000000000000000), ptr %v163, align 64
+  %v164 = getelementptr inbounds <8 x double>, ptr %lanes, i64 14
+  store <8 x double> splat (double 0x0000000000000000), ptr %v164, align 64
+  %v165 = getelementptr inbounds <8 x double>, ptr %lanes, i64 10
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v165, align 64
+  %v166 = getelementptr inbounds <8 x double>, ptr %lanes, i64 4
+  store <8 x double> %v16, ptr %v166, align 64
+  %v167 = getelementptr inbounds <8 x double>, ptr %lanes, i64 5
+  store <8 x double> splat (double 0x3FF0000000000000), ptr %v167, align 64
+  %v168 = getelementptr inbounds <8 x double>, ptr %settings, i64 11
+  %v169 = load <8 x double>, ptr %v168, align 64
+  %v170 = fcmp olt <8 x double> %v4, %v169
+  %v171 = or <8 x i1> zeroinitializer, %v170
+  %v172 = getelementptr inbounds <8 x double>, ptr %settings, i64 13
+  %v173 = load <8 x double>, ptr %v172, align 64
+  %v174 = fcmp ogt <8 x double> %v4, %v173
+  %v175 = or <8 x i1> %v171, %v174
+  %v176 = getelementptr inbounds <8 x double>, ptr %settings, i64 12
+  %v177 = load <8 x double>, ptr %v176, align 64
+  %v178 = fcmp olt <8 x double> %v6, %v177
+  %v179 = or <8 x i1> %v175, %v178
+  %v180 = getelementptr inbounds <8 x double>, ptr %settings, i64 14
+  %v181 = load <8 x double>, ptr %v180, align 64
+  %v182 = fcmp ogt <8 x double> %v6, %v181
+  %v183 = or <8 x i1> %v179, %v182
+  %v184 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v4, <8 x double> splat (double 0x0000000000000000), <8 x double> splat (double 0x0000000000000000))
+  %v185 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v26, <8 x double> splat (double 0x0000000000000000), <8 x double> %v184)
+  %v186 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v6, <8 x double> splat (double 0x0000000000000000), <8 x double> %v185)
+  %v187 = call <8 x double> @llvm.fma.v8f64(<8 x double> %v29, <8 x double> splat (double 0x0000000000000000), <8 x double> %v186)
+  %v188 = fcmp uno <8 x double> %v187, %v187
+  %v189 = select <8 x i1> %v183, <8 x double> splat (double 0x4000000000000000), <8 x double> splat (double 0x0000000000000000)
+  %v190 = select <8 x i1> %v188, <8 x double> splat (double 0x4008000000000000), <8 x double> %v189
+  %v191 = getelementptr inbounds <8 x double>, ptr %lanes, i64 12
+  store <8 x double> %v190, ptr %v191, align 64
+  %v192 = or <8 x i1> %v183, %v188
+  %v193 = bitcast <8 x i1> %v192 to i8
+  %v194 = zext i8 %v193 to i64
+  ret i64 %v194
 }
 
 define i64 @uq_step(ptr noalias %lanes, ptr noalias readonly %settings) #1 {

@@ -50,23 +50,28 @@ def write_start(plan: Plan) -> tuple[str, set[str]]:
 
 
 def first_step(plan: Plan, w: Writer, x: Column, rates: Column) -> str:
-    """The first step length (Hairer, Norsett, Wanner, Solving ODEs I, 2nd ed., II.4, p. 169), at most the first segment, never 0."""
+    """The first step length (Hairer, Norsett, Wanner, Solving ODEs I, 2nd ed., II.4, p. 169), at most the first segment, never 0.
+
+    The published formula holds for a time counted in units in which the problem moves; here it is counted in the problem's own, so that
+    the steps are the same in seconds and in years: in d0 / d1, the time in which the states move by their size, at most the segment.
+    """
     layout, over = plan.layout, plan.over(w)
     time, until = head(w, Head.time), head(w, Head.until)
     left = w.minus(until, time)
     most_of_it = w.smaller(left, w.load(S, Setting.longest)) if plan.bounded else left
     d0, d1 = norm(plan, w, x.get, x), norm(plan, w, rates.get, x)
-    little = w.either(w.compare("olt", d0, constant(1e-5)), w.compare("olt", d1, constant(1e-5)))
+    little = w.either(w.compare("olt", d0, constant(1e-5)), w.compare("olt", w.times(d1, left), constant(1e-5)))
     h0 = w.select(little, w.times(left, constant(SMALLEST_PART)), w.over(w.times(constant(0.01), d0), d1))
     h0 = w.smaller(w.larger(h0, shortest_step(w, time)), most_of_it)
+    own = w.select(little, left, w.smaller(w.over(d0, d1), left))
     euler = over.temporary(L, layout.first_spare)
     over.each(lambda i: euler.put(i, w.fma(h0, rates.get(i), x.get(i))))
     later = over.rates(lambda: w.plus(time, h0), euler, over.temporary(L, layout.first_spare + layout.states))
     d2 = w.over(norm(plan, w, lambda i: w.minus(later.get(i), rates.get(i)), x), h0)
-    most = w.larger(d1, d2)
+    most = w.larger(w.times(d1, own), w.times(w.times(d2, own), own))
     # (0.01 / most)^(1/5) in logarithms; the exponent is one over the order of the pair
     power = w.times(control.write_log2(w, control.within(w, most, 1e-250, 1e250)), constant(-1.0 / plan.pair.order))
-    h1 = control.write_exp2(w, w.plus(power, constant(log2(0.01) / plan.pair.order)))
+    h1 = w.times(own, control.write_exp2(w, w.plus(power, constant(log2(0.01) / plan.pair.order))))
     still = w.larger(w.times(left, constant(SMALLEST_PART)), w.times(h0, constant(1e-3)))
     h1 = w.select(w.compare("ole", most, constant(1e-15)), still, h1)
     step = w.smaller(w.larger(w.smaller(w.times(constant(100.0), h0), h1), shortest_step(w, time)), most_of_it)
