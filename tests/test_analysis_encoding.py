@@ -2,7 +2,10 @@
 
 from __future__ import annotations
 
+import subprocess
+import sys
 from dataclasses import replace
+from pathlib import Path
 
 import numpy as np
 import pytest
@@ -14,6 +17,7 @@ from tests.test_analysis_tree import FAILING, SOUND, same
 from uq.analysis.tallies import Tallies
 from uq.design.design import Design
 
+ROOT = Path(__file__).parent.parent
 ROWS = 16
 PLAIN = Model(("p",), (0.0, 1.0), lambda u, times: gaussian(np.repeat(u, 2, axis=1), times))
 
@@ -74,7 +78,7 @@ def test_a_run_goes_on_beyond_what_is_kept() -> None:
     assert same(journey(ask, held).merge(more).findings(ask), fresh.findings(ask))
 
 
-def test_what_was_decoded_needs_no_other_machine_code() -> None:
+def use_what_was_decoded() -> None:
     """Arrays read from a file may not be written to; kernels are not compiled once more for such."""
     from uq.analysis import compiled, counting
 
@@ -83,7 +87,14 @@ def test_what_was_decoded_needs_no_other_machine_code() -> None:
         ask = complete(FAILING, design, keep_bytes=keep, members=design.members)
         for name in ("centre", "half_width", "outcome_centre"):
             getattr(ask, name).flags.writeable = False
-        left, right = (journey(ask, part) for part in tallied(FAILING, design, ask, design.blocks(0, ROWS, ROWS)))
+        left, right = (journey(ask, part) for part in tallied(FAILING, design, ask, design.blocks(0, ROWS, ROWS // 2))[:2])
         left.merge(right).findings(ask)
-    for kernel in (*compiled.KERNELS, counting.count_1, counting.add_counts_1):
+    for kernel in (*compiled.KERNELS, counting.count_2, counting.add_counts_1):
         assert len(kernel.signatures) == 1, kernel
+
+
+def test_what_was_decoded_needs_no_other_machine_code() -> None:
+    # What a process has compiled depends on all that it did before, other tests included: a new one tells.
+    program = "from tests.test_analysis_encoding import use_what_was_decoded; use_what_was_decoded()"
+    done = subprocess.run([sys.executable, "-c", program], cwd=ROOT, capture_output=True, text=True, check=False)
+    assert done.returncode == 0, done.stderr

@@ -2,6 +2,10 @@
 
 from __future__ import annotations
 
+import subprocess
+import sys
+from pathlib import Path
+
 import numpy as np
 import pytest
 from hypothesis import given, settings
@@ -18,6 +22,7 @@ from uq.design.blocks import Block
 from uq.design.design import Design
 from uq.solve.batch import Truth
 
+ROOT = Path(__file__).parent.parent
 ROWS = 16
 FAILING = Model(
     ("p", "q"),
@@ -242,12 +247,20 @@ def test_a_piece_is_read_as_it_stands() -> None:
         assert np.array_equal(getattr(found.success, name), getattr(whole.success, name)[1:])
 
 
-def test_machine_code_is_at_hand_once_used() -> None:
+def use_all_machine_code() -> None:
+    """Everything that tallies do, with values kept and counted: every kernel is compiled for one kind of arguments."""
     design = Design(FAILING.inputs, 3, ROWS, replicates=4)
     for keep in (10**9, 1):
         ask = complete(FAILING, design, keep_bytes=keep, members=design.members)
         left, right = tallied(FAILING, design, ask, design.blocks(0, ROWS, ROWS // 2))[:2]
         left.merge(right).findings(ask)
-    for kernel in (*compiled.KERNELS, counting.count_1, counting.add_counts_1):
+    for kernel in (*compiled.KERNELS, counting.count_2, counting.add_counts_1):
         assert len(kernel.signatures) == 1, f"{kernel} is compiled again for another kind of argument"
     assert compiled.ready()
+
+
+def test_machine_code_is_at_hand_once_used() -> None:
+    # What a process has compiled depends on all that it did before, other tests included: a new one tells.
+    program = "from tests.test_analysis_tree import use_all_machine_code; use_all_machine_code()"
+    done = subprocess.run([sys.executable, "-c", program], cwd=ROOT, capture_output=True, text=True, check=False)
+    assert done.returncode == 0, done.stderr

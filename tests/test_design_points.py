@@ -1,5 +1,7 @@
 """Points of the design: the same bits however they are asked for, and the structure of scrambled Sobol' points."""
 
+import subprocess
+import sys
 import warnings
 
 import numpy as np
@@ -8,6 +10,7 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 from scipy.stats import qmc
 
+from uq.design import sobol
 from uq.design.blocks import Block
 from uq.design.design import Design
 from uq.design.sobol import DIGITS, Columns, coordinates, direction_numbers, scrambled
@@ -24,6 +27,27 @@ def test_direction_numbers_give_the_public_points_of_scipy():
     ours = coordinates(plain, 0, 2**digits).T[gray]
     public = qmc.Sobol(columns, scramble=False).random_base2(digits)
     assert (ours - 2.0**-53 == public).all()
+
+
+def test_the_table_gives_the_numbers_of_the_public_points(monkeypatch):
+    # scipy walks to a row one by one: many columns of the first rows, and few columns far out.
+    cases = ((0, 3), (1, 1), (2, 7), (31, 16), (600, 16))
+    ours = [direction_numbers(columns, digits) for columns, digits in cases]
+    monkeypatch.setattr(sobol, "_table", lambda: None)
+    theirs = direction_numbers(600, 16)
+    for (columns, digits), found in zip(cases, ours, strict=True):
+        assert (found == theirs[:columns, :digits]).all()
+
+
+def test_few_inputs_need_no_scipy_stats():
+    program = """
+import sys
+from uq.design.blocks import Block
+from uq.design.design import Design
+Design(tuple(f"input_{place}" for place in range(256)), 1, 64).points(Block(0, 0, 2))
+print(any(name.startswith("scipy.stats") for name in sys.modules))
+"""
+    assert subprocess.run([sys.executable, "-c", program], capture_output=True, text=True, check=True).stdout == "False\n"
 
 
 def test_rows_beyond_ten_million_are_those_of_scipy():

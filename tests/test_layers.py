@@ -33,11 +33,11 @@ ROOMS = (
 )
 # Each heavy library has one door (scipy.stats two: distributions, and the direction numbers of Sobol' sequences; numba two, because its
 # cache wants what is compiled together in one file: the stepping kernel, and the inner loops of the statistics, which without them cost as
-# much as the solving).
+# much as the solving; so llvmlite two, for one instruction there that numba has no word for).
 DOORS = {
     "pint": {"units"},
     "numba": {"solve", "analysis"},
-    "llvmlite": {"solve"},
+    "llvmlite": {"solve", "analysis"},
     "scipy.stats": {"inputs", "design"},
     "xarray": {"store"},
     "netCDF4": {"store"},

@@ -3,11 +3,12 @@
 from __future__ import annotations
 
 import numpy as np
+import pytest
 
 from tests.test_run_whole import DECAY
 from uq.running.aims import Aims
 from uq.running.resume import aims_of
-from uq.running.setup import ask_of, design_of, memory_of, same_places, scenario_solves, settings_of
+from uq.running.setup import ask_of, design_of, memory_of, most_rows, same_places, scenario_designs, settings_of
 from uq.study.read import parse_study
 
 FOUR = DECAY.replace(
@@ -73,13 +74,34 @@ def test_a_scenario_keeps_the_places_of_the_study() -> None:
     study = parse_study(text)
     inputs = same_places(study.inputs, study.scenarios[0].study.inputs)
     assert inputs.names == study.inputs.names
-    assert list(scenario_solves(study)) == [design_of(study).solves]
+    assert [design.solves for design in scenario_designs(study)] == [design_of(study).solves]
 
 
 def test_the_plan_says_what_may_be_spent() -> None:
     assert aims_of(parse_study(DECAY)) == Aims()
     study = parse_study(DECAY + "[plan.precision]\nindices = 0.1\n[plan.at_most]\nminutes = 2\n")
     assert aims_of(study) == Aims(study.plan.precision, None, 120.0)
+
+
+@pytest.mark.parametrize(
+    ("more", "rows"),
+    [
+        # Without a ranking a row is two solves; 16 replicates; the first round has 64 rows, and is solved whatever it takes.
+        ("[plan.at_most]\nsolves = 100\n", 64),
+        ("[plan.at_most]\nsolves = 8191\n", 128),
+        ("[plan.at_most]\nsolves = 8192\n", 256),
+        ("[plan.at_most]\nminutes = 2\n", None),
+        ("[plan.at_most]\nminutes = 2\nsolves = 4096\n", 128),
+    ],
+)
+def test_rows_that_a_plan_allows_at_most(more: str, rows: int | None) -> None:
+    text = DECAY.replace("members = 16384\n", "").replace("seed = 7", 'seed = 7\nask = ["limits"]\n[plan.precision]\nprobabilities = 0.1')
+    study = parse_study(text + more)
+    assert study.plan.members_open
+    assert most_rows(study) == rows
+    bounded = study.with_changes({"plan.members": 4096})
+    assert not bounded.plan.members_open
+    assert most_rows(bounded) == min(rows or 128, 128)
 
 
 def test_memory_is_bounded_by_what_may_be_kept() -> None:

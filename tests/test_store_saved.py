@@ -89,10 +89,12 @@ def test_refusals_are_sentences(tmp_path: Path, monkeypatch: pytest.MonkeyPatch)
     with pytest.raises(StorageError, match=r"holds no tallies\.nc, without which a run cannot be gone on with; run the study again"):
         read_tallies(tmp_path, MINE)
     write_tallies(tmp_path, made(), MINE)
-    with pytest.raises(StorageError, match="belongs to another study \\(7f3a7f, not b2c1b2\\)"):
+    with pytest.raises(StorageError, match="does not belong to the result beside it; put back that of its run, or run the study again"):
         read_tallies(tmp_path, OTHER)
-    monkeypatch.setattr(saved_module, "FORMAT", 2)
-    with pytest.raises(StorageError, match="has format 1, and this uq reads format 2: only the version that made a run can go on with it"):
+    monkeypatch.setattr(saved_module, "READ", (3, 4))
+    with pytest.raises(
+        StorageError, match="has format 2, and this uq reads formats 3 and 4: only the version that made a run can go on with it"
+    ):
         read_tallies(tmp_path, MINE)
     monkeypatch.setattr(saved_module, "__version__", "9.9")
     with pytest.raises(StorageError, match=r"was written by uq .*, and this is uq 9\.9"):
@@ -189,7 +191,21 @@ def test_what_is_read_back_is_what_was_meant(tmp_path: Path, monkeypatch: pytest
     assert not list(tmp_path.iterdir())
 
 
+def test_files_of_the_format_before_are_read(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
+    with monkeypatch.context() as patch:
+        patch.setattr(saved_module, "FORMAT", 1)
+        file = write_tallies(tmp_path, made(), MINE)
+    assert len(str(read_attributes(file)["checksum"])) == 64
+    same(read_tallies(tmp_path, MINE), made())
+    content = bytearray(file.read_bytes())
+    place = content.index(np.ascontiguousarray(next(iter(made().arrays.values()))).tobytes())
+    content[place] ^= 1
+    file.write_bytes(content)
+    with pytest.raises(StorageError, match="was changed or damaged"):
+        read_tallies(tmp_path, MINE)
+
+
 def test_the_head_says_whose_it_is(tmp_path: Path) -> None:
     head = read_attributes(write_tallies(tmp_path, made(), MINE))
-    assert (head["format"], head["study_fingerprint"]) == (1, MINE)
+    assert (head["format"], head["study_fingerprint"]) == (2, MINE)
     assert set(head) == {"format", "version_uq", "study_fingerprint", "checksum"}

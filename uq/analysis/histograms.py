@@ -41,15 +41,15 @@ class Bins:
 
     @classmethod
     def of(cls, a: Floats, b: Floats, scale: Scale, per_half_width: Floats = _NONE, sizes: Floats = _NO_SIZES) -> Bins:
-        """From A and B values [row, cell, ..], C order; per_half_width, sizes: see `count_1`."""
-        from uq.analysis.counting import count_1
+        """From A and B values [row, cell, ..], C order; per_half_width, sizes: see `count_2`."""
+        from uq.analysis.counting import count_2
 
         cells = len(scale.centre)
         # Machine code is made for arrays of one kind.
         a, b, centre = (np.require(part, np.float64, ["C", "W"]) for part in (a, b, scale.centre))
         begin, offset = np.empty(cells, dtype=np.int64), np.empty(cells + 1, dtype=np.int64)
         special, ends = np.empty((cells, 6), dtype=np.int64), np.empty((cells, 2))
-        counts = count_1(a, b, centre, 1 / scale.width, special, ends, begin, offset, per_half_width, sizes)
+        counts = count_2(a, b, centre, 1 / scale.width, special, ends, begin, offset, per_half_width, sizes)
         return cls(counts, begin, offset, special, ends)
 
     def merge(self, other: Bins) -> Bins:

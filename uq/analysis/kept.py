@@ -76,8 +76,8 @@ class Courses:
         # Machine code is made for arrays of one kind.
         centre, inverse = np.require(ask.centre.reshape(-1), np.float64, ["C", "W"]), 1 / ask.half_width.reshape(-1)
         values, deviations = np.empty((len(centre), 2 * rows)), np.empty((len(ask.watched), 2 * rows))
-        keep_1(sample.courses.a, 0, centre, inverse, values, deviations)
-        keep_1(sample.courses.b, rows, centre, inverse, values, deviations)
+        for part, at in ((sample.courses.a, 0), (sample.courses.b, rows)):
+            keep_1(np.require(part, np.float64, ["C", "W"]), at, centre, inverse, values, deviations)
         return cls(Kept({key: values}), Kept({key: deviations}))
 
     def merge(self, other: Courses) -> Courses:

@@ -79,7 +79,8 @@ def _judged(ask: Ask, conditions: NDArray[np.int8]) -> tuple[Places, Places, Cou
     """
     from uq.analysis.compiled import first_true_2
 
-    flat = np.ascontiguousarray(conditions).reshape(-1, *conditions.shape[-2:]).view(np.uint8)
+    # Machine code is made for arrays of one kind.
+    flat = np.require(conditions, np.int8, ["C", "W"]).reshape(-1, *conditions.shape[-2:]).view(np.uint8)
     first, lost = np.empty((2, *flat.shape[:2]), dtype=np.intp)
     now, unsure = np.zeros((2, flat.shape[1], len(ask.judged)), dtype=np.int64)
     first_true_2(flat, ask.judged, first, lost, now, unsure)

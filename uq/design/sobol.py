@@ -13,11 +13,14 @@ within its error, and more often for smooth functions of one or two inputs (95-1
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cache
+from importlib.resources import files
 
 import numpy as np
 from numpy.typing import NDArray
 
 Words = NDArray[np.uint64]
+Table = tuple[NDArray[np.int64], NDArray[np.int64]]
 
 # A coordinate is the middle of one of 2^52 cells, an odd multiple of 2^-53: exact in a double over the whole of (0, 1), and symmetrical
 # about 1/2. (With 2^53 cells the middles in the upper half are no doubles: they round to even, and the last one to 1.)
@@ -43,11 +46,52 @@ class Columns:
 def direction_numbers(columns: int, digits: int) -> Words:
     """The direction numbers of the first columns for rows below 2^digits, [column, digit], of `DIGITS` binary digits.
 
-    The primitive polynomials and starting values are those of Joe and Kuo 2008 (doi:10.1137/070709359), read off the public points of
-    scipy: row 2^j is the exclusive-or of direction numbers j and j - 1 there, since rows come in the order of the Gray code.
+    The primitive polynomials and starting values are those of Joe and Kuo 2008 (doi:10.1137/070709359).
     """
-    if columns == 0:
-        return np.zeros((0, digits), dtype=np.uint64)
+    table = _table()
+    numbers = _scipy_numbers(columns, digits) if table is None else _from_table(table, columns, digits)
+    return numbers << np.uint64(DIGITS - _ASKED)
+
+
+@cache
+def _table() -> Table | None:
+    """Primitive polynomials [column], binary digits from the highest power down to 1, and starting values m_1, m_2, ... [column, place].
+
+    From the file that scipy itself reads: to import scipy.stats takes longer than many a run. None where scipy keeps them elsewhere.
+    """
+    try:
+        with (files("scipy") / "stats" / "_sobol_direction_numbers.npz").open("rb") as file, np.load(file) as held:
+            return held["poly"], held["vinit"]
+    except (OSError, KeyError):
+        return None
+
+
+def _from_table(table: Table, columns: int, digits: int) -> Words:
+    """With `_ASKED` binary digits: m_1, m_2, ... obey the recurrence of the primitive polynomial.
+
+    Bratley and Fox 1988, ACM Trans. Math. Softw. 14, 88-100, doi:10.1145/42288.214372, equation 2.
+    """
+    numbers = np.zeros((columns, digits), dtype=np.uint64)
+    for place in range(columns):
+        polynomial = int(table[0][place])
+        degree = polynomial.bit_length() - 1
+        values = table[1][place, :degree].tolist()
+        # The first column has no polynomial: all its values are 1.
+        found = [value << (_ASKED - 1 - digit) for digit, value in enumerate(values or [1] * digits)]
+        for digit in range(len(found), digits):
+            new = found[digit - degree] ^ (found[digit - degree] >> degree)
+            for back in range(1, degree):
+                if polynomial >> (degree - back) & 1:
+                    new ^= found[digit - back]
+            found.append(new)
+        numbers[place] = found[:digits]
+    return numbers
+
+
+def _scipy_numbers(columns: int, digits: int) -> Words:
+    """The same read off the public points of scipy: row 2^j is the exclusive-or of direction numbers j and j - 1 there, since rows come in
+    the order of the Gray code.
+    """
     from scipy.stats import qmc
 
     points = qmc.Sobol(columns, scramble=False, bits=_ASKED)
@@ -58,7 +102,7 @@ def direction_numbers(columns: int, digits: int) -> Words:
             points.fast_forward(2**digit - row)
         numbers[:, digit] = (points.random(1)[0] * 2.0**_ASKED).astype(np.uint64)
         row = 2**digit + 1
-    return np.bitwise_xor.accumulate(numbers, axis=1) << np.uint64(DIGITS - _ASKED)
+    return np.bitwise_xor.accumulate(numbers, axis=1)
 
 
 def scrambled(directions: Words, words: Words) -> Columns:

@@ -43,8 +43,8 @@ class Forecast:
     @property
     def shape(self) -> Shape:
         """What a row of the design stands for."""
-        layout = self.compiled.layout
-        return Shape(self.design.parts, (layout.observed + layout.conditions) * len(self.ask.solved_times))
+        layout, times = self.compiled.layout, len(self.ask.solved_times)
+        return Shape(self.design.parts, layout.observed * times, layout.conditions * times)
 
     @cached_property
     def _columns(self) -> list[int] | None:

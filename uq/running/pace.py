@@ -13,15 +13,17 @@ BLOCKS_PER_THREAD = 4
 
 @dataclass(frozen=True)
 class Shape:
-    """What a row stands for: `solves` of it (A, B and the mixed ones), `values` per solve (observed quantities times solved times)."""
+    """What a row stands for: `solves` of it (A, B and the mixed ones), and per solve `values` (observed quantities times solved times) and
+    `truths` (conditions times solved times)."""
 
     solves: int
     values: int
+    truths: int = 0
 
     @property
     def bytes(self) -> int:
         """Memory for the values of one row while its block is worked on."""
-        return 8 * self.solves * max(self.values, 1)
+        return self.solves * (8 * max(self.values, 1) + self.truths)
 
 
 def block_rows(shape: Shape, seconds_per_solve: float, rows: int, replicates: int, threads: int) -> int:

@@ -20,7 +20,7 @@ from uq.units import Units
 Array = np.ndarray[Any, Any]
 
 # What hangs on an estimate `v`, by the ending of its name.
-BESIDE = ("_low", "_high", "_if_low", "_if_high", "_achieved")
+BESIDE = ("_low", "_high", "_if_low", "_if_high", "_achieved", "_bin_error", "_bin_error_share")
 # CF-1.11 appendix E has these methods, and none for quantiles or probabilities: those carry a comment instead. The name `realization` is
 # a standard name here, as section 7.3.4 allows where the dimension itself is gone.
 METHODS = {"mean": "realization: mean", "sd": "realization: standard_deviation"}

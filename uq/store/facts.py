@@ -32,30 +32,31 @@ class PrecisionReached:
     """Whether the precision asked was reached, or what ended the run before: "members", "solves" or "minutes" that it may spend.
 
     solves_needed: all solves after which it is expected, nan where nobody can say; unknown: the variables ("ranking/L total_by") of
-    which nothing can be foretold.
+    which nothing can be foretold. solves_allowed: those that it may spend, all scenarios counted; None where they are not bounded.
     """
 
     reached: bool
     stopped: str = ""
     solves_needed: float = math.nan
     unknown: tuple[str, ...] = ()
+    solves_allowed: int | None = None
 
 
 @dataclass(frozen=True)
 class RunFacts:
     """The facts of one run.
 
-    seed: of the design, as used. members_asked, members, members_failed: base rows (A and B, all replicates) wanted, solved in whole
-    rounds (failed ones counted), failed. solves, solves_failed: the same with the mixed rows of the ranking. wall_time in seconds,
-    finished with its time zone. scales: absolute tolerance of a state = accuracy x scale, by state; fell_back: the states whose scale
-    was 0.
+    seed: of the design, as used. members_asked, members, members_failed: base rows (A and B, all replicates) wanted (with a precision the
+    most that may be used, None where that is not said), solved in whole rounds (failed ones counted), failed. solves, solves_failed: the
+    same with the mixed rows of the ranking. wall_time in seconds, finished with its time zone. scales: absolute tolerance of a state =
+    accuracy x scale, by state; fell_back: the states whose scale was 0.
     seconds_per_solve: of one core, as measured. versions: see `versions`. processor: its features, as text. command: what was called,
     for the history; earlier: the history of the result that was extended. scenarios: counts by name of scenario; all others here are of the
     study itself. precision: where one was asked.
     """
 
     seed: int
-    members_asked: int
+    members_asked: int | None
     members: int
     members_failed: int
     solves: int

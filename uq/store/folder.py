@@ -12,7 +12,7 @@ from uq.analysis.finding import Finding
 from uq.errors import StorageError
 from uq.store.encode import StoredGroup, encode
 from uq.store.facts import RunFacts
-from uq.store.fingerprint import content_fingerprint
+from uq.store.fingerprint import content_fingerprint, given_fingerprint
 from uq.store.layout import contents
 from uq.store.netcdf import read_attributes, read_groups, write_groups
 from uq.store.progress import PROGRESS
@@ -72,10 +72,15 @@ def write_result(folder: Path, study: Study, findings: Iterable[Finding], facts:
 
 
 def with_fingerprint(groups: tuple[StoredGroup, ...]) -> tuple[StoredGroup, ...]:
-    """The groups, with the content fingerprint and the mark of a whole file in the root."""
+    """The groups, with the content fingerprint, that of what was given, and the mark of a whole file in the root."""
     root, *rest = groups
-    attributes = {**root.attributes, "content_fingerprint": content_fingerprint(groups), "complete": 1}
+    attributes = {**root.attributes, **fingerprints(groups), "complete": 1}
     return (StoredGroup(root.path, root.sizes, root.variables, attributes), *rest)
+
+
+def fingerprints(groups: tuple[StoredGroup, ...]) -> dict[str, str]:
+    """What a file is checked against, as attributes of its root."""
+    return {"content_fingerprint": content_fingerprint(groups), "given_fingerprint": given_fingerprint(groups)}
 
 
 def _refusal(result: Path, fingerprint: str) -> str:
@@ -124,5 +129,5 @@ def _write_bytes(content: bytes, draft: Path) -> None:
 def _write_checked(groups: tuple[StoredGroup, ...], draft: Path) -> None:
     """Writes and reads back: what is on the disk has the fingerprint of what was meant."""
     write_groups(draft, groups)
-    if content_fingerprint(read_groups(draft)) != groups[0].attributes["content_fingerprint"]:
+    if not fingerprints(read_groups(draft)).items() <= groups[0].attributes.items():
         raise OSError("what was read back is not what was written")

@@ -165,6 +165,7 @@ def precision_group(study: Study, facts: RunFacts) -> tuple[Finding, ...]:
         "stopped": reached.stopped,
         "solves_needed": float(reached.solves_needed),
         "unknown": ", ".join(reached.unknown),
+        "solves_allowed": reached.solves_allowed,
     }
     return (Finding("precision", {}, said),)
 

@@ -7,8 +7,8 @@ from pathlib import Path
 
 from uq.errors import StorageError
 from uq.store.encode import StoredGroup
-from uq.store.fingerprint import content_fingerprint
-from uq.store.folder import RESULT
+from uq.store.fingerprint import whole_fingerprint
+from uq.store.folder import RESULT, fingerprints
 from uq.store.layout import SCHEMA
 from uq.store.netcdf import read_groups
 from uq.store.result import Result
@@ -39,5 +39,8 @@ def _check(file: Path, groups: tuple[StoredGroup, ...]) -> None:
         raise StorageError(f"{file} was written by a later version of uq (layout {facts['schema']}, this version reads up to {SCHEMA})")
     if facts.get("complete") != 1:
         raise StorageError(f"{file} is not whole: its writing was cut off")
-    if content_fingerprint(groups) != facts.get("content_fingerprint"):
-        raise StorageError(f"{file} was changed or damaged after it was written: its arrays do not have its content fingerprint")
+    # Earlier files have one fingerprint over all of it.
+    wanted = fingerprints(groups) if "given_fingerprint" in facts else {"content_fingerprint": whole_fingerprint(groups)}
+    for name, found in wanted.items():
+        if found != facts.get(name):
+            raise StorageError(f"{file} was changed or damaged after it was written: its arrays do not have its {name.replace('_', ' ')}")

@@ -49,10 +49,12 @@ def read_packed(path: Path, slab: int = 0) -> Packed:
     import netCDF4
 
     with netCDF4.Dataset(path, "r") as file:
+        # Every byte is what it is, none of them means "missing".
+        file.set_auto_maskandscale(False)
         attributes = {name: _plain(file.getncattr(name)) for name in file.ncattrs()}
         texts = {name: str(variable[...]) for name, variable in file.variables.items() if name != "bytes"}
         size = len(file.dimensions["byte"]) if "bytes" in file.variables else 0
-        pieces = () if slab or not size else (np.asarray(file.variables["bytes"][:].data),)
+        pieces = () if slab or not size else (np.asarray(file.variables["bytes"][:]),)
     return Packed(attributes, texts, _slabs(path, size, slab) if slab and size else pieces, size)
 
 

@@ -5,7 +5,7 @@ from __future__ import annotations
 from pathlib import Path
 
 from uq.errors import StorageError
-from uq.store.saved import DamagedError, Saved, read_saved, write_saved
+from uq.store.saved import DamagedError, OtherStudyError, Saved, read_saved, write_saved
 
 TALLIES = "tallies.nc"
 
@@ -24,5 +24,7 @@ def read_tallies(path: Path, fingerprint: str) -> Saved:
         raise StorageError(f"{folder} holds no {TALLIES}, without which a run cannot be gone on with; run the study again")
     try:
         return read_saved(file, fingerprint)
+    except OtherStudyError as error:
+        raise StorageError(f"{file} does not belong to the result beside it; put back that of its run, or run the study again") from error
     except DamagedError as damage:
         raise StorageError(f"{damage}; run the study again") from damage
