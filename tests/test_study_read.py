@@ -207,7 +207,7 @@ def test_data_from_a_file(tmp_path: Path) -> None:
     [
         (b"depth\n1\nx\n", '"x" in d.csv, line 3'),
         (b"name;depth\na;1,5\n", "numbers have a decimal point"),
-        (b"depth,depth\n1,2\n", "more than once"),
+        (b"depth,depth\n1,2\n", 'the column "depth" 2 times in d.csv; expected columns of different names'),
         (b"depth\n", "without numbers"),
         (b"", "without a header line"),
         (b"depth\n1\n\xff\n", "not UTF-8"),

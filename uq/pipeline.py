@@ -34,6 +34,8 @@ def run(
     is and can stop it. block_rows: rows of a block, a power of two, 0 from the measured cost. start: what else it starts with. The result
     has the same bits whatever these are.
 
+    A result of the same study that is there already is solved once more and then replaced by its equal (`uq run` shows it instead).
+
     Raises StorageError where the folder cannot be written or another process works in it, Interrupted where the run was stopped: no result
     is written then, but what was done is kept. With a path it raises as `read_study` does.
     """
@@ -84,7 +86,9 @@ def extend(
     """Goes on with a finished run until it has so many members, or the precision {"probabilities": 0.001, ...}; every solve is used again.
 
     path: a run folder or its result.nc, which stays as it is. folder: where the new result goes, by default the one that a fresh run of the
-    changed study would have, beside the old one; the result has the same bits as that. Raises as `run` does, StorageError where the old run
+    changed study would have, beside the old one. With `members` alone its arrays are those of that run, and so is its content fingerprint.
+    With a precision it is at least as precise as asked; it may rest on more members than a fresh run would have needed, and `precision` has
+    its rounds as they were, since rounds once merged are not taken apart. Raises as `run` does, StorageError where the old run
     left no tallies, UseMistake where nothing more is asked, StudyError where the plan does not allow it.
     """
     from uq.running.again import extended, folder_beside, study_of

@@ -56,13 +56,14 @@ def run(
     seed: Annotated[
         int | None, typer.Option("--seed", min=0, help="Run with this seed instead of the study's.", show_default=False)
     ] = None,
+    again: Annotated[bool, typer.Option("--again", help="Solve it again where its result is there already.")] = False,
     json: Json = False,
 ) -> None:
-    """Run a study and print what it says; goes on by itself where an earlier run of it was stopped."""
+    """Run a study and print what it says; goes on where an earlier run of it was stopped, shows the result where it is done."""
     with telling():
-        from uq.cli.running import run_study
+        from uq.cli.running import Asked, run_study
 
-        run_study(study, output, threads, seed, json)
+        run_study(study, output, Asked(threads, seed, again, json))
 
 
 @app.command()
@@ -81,7 +82,11 @@ def extend(
     threads: Threads = 0,
     json: Json = False,
 ) -> None:
-    """Go on with a finished run, using every solve again; the result goes to another folder."""
+    """Go on with a finished run, using every solve again; the result goes to another folder.
+
+    With --members its arrays are those of a fresh run with so many members. With --precision it is at least as precise as asked, and may
+    rest on more members than a fresh run would have needed: what is solved already is not taken apart again.
+    """
     with telling():
         from uq.cli.going_on import extend_result
 

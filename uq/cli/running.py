@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import os
 from collections.abc import Mapping
+from dataclasses import dataclass
 from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
@@ -14,22 +15,37 @@ from uq.cli.progress import stopping, watching
 from uq.cli.say import err, out, typed
 from uq.cli.settings import state_folder
 from uq.cli.showing import told
-from uq.errors import EXIT_PRECISION, EXIT_WITHHELD
+from uq.errors import EXIT_PRECISION, EXIT_WITHHELD, StorageError
 
 if TYPE_CHECKING:
     from uq.store.result import Result
+    from uq.study.study import Study
 
 
-def run_study(path: Path, output: Path | None, threads: int, seed: int | None, json: bool) -> None:
+@dataclass(frozen=True)
+class Asked:
+    """How a run is asked for: threads, a seed in place of the study's, whether to solve again what is done, the machine form."""
+
+    threads: int = 0
+    seed: int | None = None
+    again: bool = False
+    json: bool = False
+
+
+def run_study(path: Path, output: Path | None, asked: Asked) -> None:
     """Runs the study at `path` and prints what the result says; exit code 4 where statements were withheld, 5 where it is not as precise
-    as asked."""
+    as asked. A result of the same study (seed, members and version of uq too) that is there already is shown, and nothing is solved."""
     from uq.study.read import read_study
 
-    study = read_study(path)
-    if seed is not None:
-        study = study.with_changes({"plan.seed": seed})
+    study, threads, json = read_study(path), asked.threads, asked.json
+    if asked.seed is not None:
+        study = study.with_changes({"plan.seed": asked.seed})
     for warning in study.warnings:
         err(f"uq: {warning}")
+    if not asked.again and (there := done_already(study, output)):
+        err(f"uq: this study is done already, its result is in {there.folder}; nothing was solved (--again solves it once more)")
+        finished(there, json)
+        return
     with watching() as observer, stopping(observer):
         from uq.pipeline import run
         from uq.running.start import Start
@@ -41,10 +57,25 @@ def run_study(path: Path, output: Path | None, threads: int, seed: int | None, j
     finished(result, json)
 
 
+def done_already(study: Study, output: Path | None) -> Result | None:
+    """The whole and undamaged result of this very study in the folder where its run would write; None where there is none."""
+    from uq.store.folder import RESULT, default_folder
+    from uq.store.open import open_result
+
+    folder = output or default_folder(study)
+    if not (folder / RESULT).is_file():
+        return None
+    try:
+        there = open_result(folder)
+    except StorageError:
+        return None
+    return there if there.attributes["study_fingerprint"] == study.fingerprint else None
+
+
 def finished(result: Result, json: bool) -> None:
     """Prints what a new result says; exit codes 4 and 5 as above."""
     out(told(result, json))
-    if withheld(result.attributes):
+    if withheld(result):
         err("uq: statements were withheld because members failed; the result was written all the same")
         raise typer.Exit(EXIT_WITHHELD)
     if spent := unreached(result):
@@ -52,9 +83,22 @@ def finished(result: Result, json: bool) -> None:
         raise typer.Exit(EXIT_PRECISION)
 
 
-def withheld(facts: Mapping[str, object]) -> bool:
-    """Whether a result keeps its statements back: failed members under the policy `refuse`."""
-    return facts["failures"] == "refuse" and bool(facts["solves_failed"])
+def withheld(result: Result) -> bool:
+    """Whether any statement of a result or of its scenarios is kept back: members failed under the policy `refuse`.
+
+    Solves that failed for the ranking alone, or members of which nothing was asked after they failed, withhold nothing.
+    """
+    from uq.analysis.policy import WITHHELD
+    from uq.report.headline import headline
+
+    if result.attributes["failures"] != "refuse":
+        return False
+    head = headline(result)
+    told = [*(each.reason for each in head.limits), *(each.reason for each in head.rankings)]
+    for finding in result.findings.values():
+        said = [finding.attributes, *(each.attributes for each in finding.variables.values())]
+        told += [str(each.get("reason", "")) for each in said]
+    return any(WITHHELD in reason for reason in told)
 
 
 def unreached(result: Result) -> str:

@@ -8,6 +8,7 @@ import json
 from collections.abc import Iterator, Mapping
 from typing import Any
 
+from uq.design.design import rounded_up
 from uq.errors import ValueMistake, suggest
 from uq.study.counting import own_units
 from uq.study.locate import Path
@@ -86,7 +87,10 @@ def paths_of(changes: Mapping[str, object]) -> tuple[Path, ...]:
 
 
 def fingerprint(document: Mapping[str, Any], files: Mapping[str, bytes], version: str) -> str:
-    """A sha256 over what a study says: comments, blanks and the order of keys that says nothing do not count."""
+    """A sha256 over what a study says: comments, blanks and the order of keys that says nothing do not count.
+
+    Numbers of members that are rounded up to the same are the same.
+    """
     content = {
         "study": _canonical(document),
         "files": {name: hashlib.sha256(content).hexdigest() for name, content in files.items()},
@@ -97,6 +101,9 @@ def fingerprint(document: Mapping[str, Any], files: Mapping[str, bytes], version
 
 
 def _canonical(document: Mapping[str, Any]) -> dict[str, Any]:
+    plan = document.get("plan", {})
+    if "members" in plan:
+        document = {**document, "plan": {**plan, "members": rounded_up(int(plan["members"]))}}
     return {
         key: [[name, _plain(inner)] for name, inner in value.items()] if key in _ORDERED and isinstance(value, Mapping) else _plain(value)
         for key, value in document.items()

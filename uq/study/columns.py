@@ -8,6 +8,7 @@ from __future__ import annotations
 import csv
 import io
 import math
+import stat
 from array import array
 from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
@@ -37,12 +38,16 @@ class Rows:
 
 @dataclass
 class Files:
-    """The files of one study: those at hand by name, the others from its folder; `used` are the bytes of all that were asked for."""
+    """The files of one study: those at hand by name, the others from its folder; `used` are the bytes of all that were asked for.
+
+    said: how they were read, in words; told: of which columns that was said already, by file.
+    """
 
     folder: Path | None
     at_hand: Mapping[str, bytes] = field(default_factory=dict)
     used: dict[str, bytes] = field(default_factory=dict)
     said: list[str] = field(default_factory=list)
+    told: dict[str, list[set[str]]] = field(default_factory=dict)
 
     def bytes_of(self, name: str) -> bytes:
         """The content of a file in the study's folder or below."""
@@ -60,10 +65,20 @@ class Files:
     def _from_folder(self, name: str) -> bytes:
         if self.folder is None:
             raise ValueMistake(f'"{name}"', "no file: this study was not read from a folder")
+        place, most = self.folder / name, f"a file of at most {LARGEST // 10**6} MB"
         try:
-            if (self.folder / name).stat().st_size > LARGEST:
-                raise ValueMistake(f'"{name}", larger than {LARGEST // 10**6} MB', "a smaller file")
-            return (self.folder / name).read_bytes()
+            if place.is_dir():
+                raise ValueMistake(f'"{name}", which is a folder', most)
+            if not stat.S_ISREG(place.stat().st_mode):
+                raise ValueMistake(f'"{name}", which is a device or a pipe, not a file', most)
+            if place.stat().st_size > LARGEST:
+                raise ValueMistake(f'"{name}", of {place.stat().st_size / 10**6:.0f} MB', most)
+            with place.open("rb") as file:
+                # Files of the system may say that they are empty and have no end.
+                content = file.read(LARGEST + 1)
+            if len(content) > LARGEST:
+                raise ValueMistake(f'"{name}", of more than {LARGEST // 10**6} MB', most)
+            return content
         except OSError as error:
             near = suggest(name, (p.name for p in self.folder.glob("*") if p.is_file()))
             raise ValueMistake(f'"{name}", which cannot be read ({error.strerror})', "a file in the study's folder", near) from None
@@ -78,8 +93,11 @@ class Files:
         """Which column of a file has this name; raises ValueMistake with the key `column` where none has."""
         header = _lines(name, self.bytes_of(name))[1]
         if header.count(column) != 1:
-            found = f'no column "{column}"' if column not in header else f'the column "{column}" more than once'
-            raise ValueMistake(f"{found} in {name}", "one of " + ", ".join(header), suggest(column, header), key="column")
+            if column in header:
+                twice = f'the column "{column}" {header.count(column)} times in {name}'
+                raise ValueMistake(twice, "columns of different names", "rename one of them in its header line", key="column")
+            known = dict.fromkeys(header)
+            raise ValueMistake(f'no column "{column}" in {name}', "one of " + ", ".join(known), suggest(column, known), key="column")
         return header.index(column)
 
     def rows(self, name: str, columns: Sequence[str]) -> Rows:
@@ -99,6 +117,9 @@ class Files:
         return Rows(name, np.array(numbers).reshape(-1, len(places)).T.copy(), np.array(numbered))
 
     def _say(self, name: str, columns: Sequence[str], count: int, mark: str) -> None:
+        if any(set(columns) <= others for others in self.told.get(name, ())):
+            return
+        self.told.setdefault(name, []).append(set(columns))
         named = " and ".join(f'"{column}"' for column in columns)
         what = f"numbers of column {named}" if len(columns) == 1 else f"rows of columns {named}"
         told = f"{name}: {count} {what}, {_MARKS[mark]} separated"

@@ -200,6 +200,11 @@ class Plan:
         if not bounded:
             object.__setattr__(self, "members", MEMBERS if self.at_most is None else MOST_MEMBERS)
 
+    @property
+    def members_open(self) -> bool:
+        """Whether nobody said how many members there may be: what bounds the work is then `at_most`."""
+        return self.precision is not None and self.members >= MOST_MEMBERS
+
     def mistakes(self, bounded: bool = True) -> Found:
         """What cannot stand in this table; `bounded`: the members were stated."""
         if self.precision is not None and self.at_most is None and not bounded:
