@@ -27,12 +27,22 @@ STUDIES = {
 }
 
 
+def peak(name: str, folder: Path) -> int:
+    """The peak in bytes of a process that runs one of the studies."""
+    study = folder / f"{name}.toml"
+    study.write_text(STUDIES[name], encoding="utf-8")
+    command = [sys.executable, "-c", RUN, str(study), str(folder / name)]
+    return int(subprocess.run(command, cwd=ROOT, capture_output=True, text=True, check=True).stdout)
+
+
+@pytest.fixture(scope="module", autouse=True)
+def _solver_is_prepared(tmp_path_factory: pytest.TempPathFactory) -> None:
+    """The first run on a machine also holds the compiler, some 250 MB; what is told is what every later one takes."""
+    peak("few", tmp_path_factory.mktemp("first"))
+
+
 @pytest.mark.skipif(sys.platform != "linux", reason="the peak is in kB there")
 @pytest.mark.parametrize("name", STUDIES)
 def test_memory_is_said_within_a_factor_of_two(name: str, tmp_path: Path) -> None:
-    study = tmp_path / "study.toml"
-    study.write_text(STUDIES[name], encoding="utf-8")
-    command = [sys.executable, "-c", RUN, str(study), str(tmp_path / "result")]
-    peak = int(subprocess.run(command, cwd=ROOT, capture_output=True, text=True, check=True).stdout)
-    said = memory_of(parse_study(study.read_text(encoding="utf-8")), 2)
-    assert 0.5 < said / peak < 2, f"{said / 1e6:.0f} MB said, {peak / 1e6:.0f} taken"
+    taken, said = peak(name, tmp_path), memory_of(parse_study(STUDIES[name]), 2)
+    assert 0.5 < said / taken < 2, f"{said / 1e6:.0f} MB said, {taken / 1e6:.0f} taken"
