@@ -68,7 +68,7 @@ def main(study: str, folder: str, place: str, number: int) -> None:
     for module in [each for name, each in sys.modules.items() if name.startswith("uq.store")]:
         if getattr(module, "put", None) is whole.put and module is not whole:
             module.put = cut_off(fault, whole.put)  # type: ignore[attr-defined]
-    whole._flush = around(fault, "flush", "flushed", whole._flush)
+    whole.flush = around(fault, "flush", "flushed", whole.flush)
     Path.replace = around(fault, "name", "named", Path.replace)  # type: ignore[method-assign]
     Gathering.add = around(fault, "gather", "block", Gathering.add)  # type: ignore[method-assign]
     result = uq.run(uq.read_study(study), folder, start=Start(pace=Pace(0.0, 0.0)), block_rows=16)

@@ -18,6 +18,7 @@ ROOMS = (
     "errors",
     "units",
     "seeds",
+    "clock",
     "lang",
     "model",
     "inputs",
@@ -29,6 +30,7 @@ ROOMS = (
     "running",
     "report",
     "pipeline",
+    "queue",
     "cli",
 )
 # Each heavy library has one door (scipy.stats two: distributions, and the direction numbers of Sobol' sequences; numba two, because its
@@ -44,6 +46,7 @@ DOORS = {
     "dask": {"running"},
     "distributed": {"running"},
     "tomllib": {"study"},
+    "sqlite3": {"queue"},
     "typer": {"cli"},
     "rich": {"cli"},
 }

@@ -29,7 +29,7 @@ class Counts:
 
 @dataclass(frozen=True)
 class PrecisionReached:
-    """Whether the precision asked was reached, or what ended the run before: "members", "solves" or "minutes" that it may spend.
+    """Whether the precision asked was reached, or what ended the run before: "members", "solves", "minutes" that it may spend, "deadline".
 
     solves_needed: all solves after which it is expected, nan where nobody can say; unknown: the variables ("ranking/L total_by") of
     which nothing can be foretold. solves_allowed: those that it may spend, all scenarios counted; None where they are not bounded.
@@ -51,8 +51,9 @@ class RunFacts:
     same with the mixed rows of the ranking. wall_time in seconds, finished with its time zone. scales: absolute tolerance of a state =
     accuracy x scale, by state; fell_back: the states whose scale was 0.
     seconds_per_solve: of one core, as measured. versions: see `versions`. processor: its features, as text. command: what was called,
-    for the history; earlier: the history of the result that was extended. scenarios: counts by name of scenario; all others here are of the
-    study itself. precision: where one was asked.
+    for the history; earlier: the history of the result that was extended. cluster: where it was solved, "" for threads of one process.
+    stopped: "deadline" where the run was stopped before it had all its members; "" where it came to its end. scenarios: counts by name of
+    scenario; all others here are of the study itself. precision: where one was asked.
     """
 
     seed: int
@@ -76,6 +77,8 @@ class RunFacts:
     earlier: str = ""
     scenarios: Mapping[str, Counts] = field(default_factory=dict)
     precision: PrecisionReached | None = None
+    cluster: str = ""
+    stopped: str = ""
 
 
 def versions(uq_version: str) -> dict[str, str]:

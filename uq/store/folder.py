@@ -15,7 +15,7 @@ from uq.store.facts import RunFacts
 from uq.store.fingerprint import content_fingerprint, given_fingerprint
 from uq.store.layout import contents
 from uq.store.netcdf import read_attributes, read_groups, write_groups
-from uq.store.progress import PROGRESS
+from uq.store.places import PROGRESS
 from uq.store.tallies import TALLIES
 from uq.store.whole import put
 

@@ -85,6 +85,7 @@ def _of_run(study: Study, facts: RunFacts) -> dict[str, Any]:
         "wall_time": float(facts.wall_time),
         "seconds_per_solve": float(facts.seconds_per_solve),
         "threads": facts.threads,
+        **{name: text for name, text in (("cluster", facts.cluster), ("stopped", facts.stopped)) if text},
         "method": facts.method,
         "accuracy": float(facts.accuracy),
         **{f"version_{name}": text for name, text in facts.versions.items()},

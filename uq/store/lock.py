@@ -1,4 +1,4 @@
-"""Who works in a run folder: an operating-system lock on a file in it, released by the kernel at death, whatever the clocks do."""
+"""Who works in a run folder: whoever holds a file in it."""
 
 from __future__ import annotations
 
@@ -11,14 +11,13 @@ from pathlib import Path
 
 from uq.errors import StorageError
 from uq.store.folder import ELSEWHERE
-from uq.store.progress import PROGRESS
+from uq.store.hold import hold
+from uq.store.places import PROGRESS
 from uq.store.whole import DRAFT, drafts
 
 LOCK = "lock"
 # The name of a draft, see `whole.put`.
 OURS = re.compile(rf"\..+\.[0-9a-f]{{8}}{re.escape(DRAFT)}")
-# Attempts to lock a file which another process takes away just then.
-_ATTEMPTS = 100
 
 
 @contextmanager
@@ -30,7 +29,7 @@ def owned(folder: Path) -> Iterator[None]:
     place = folder / PROGRESS
     made = [each for each in (folder, *folder.parents) if not each.exists()]
     try:
-        handle = _locked(place)
+        handle = hold(place / LOCK)
     except OSError as error:
         raise StorageError(f"{folder} cannot be locked: {error}") from error
     if handle is None:
@@ -54,37 +53,3 @@ def _sweep(folder: Path) -> None:
         for draft in [each for each in drafts(place) if OURS.fullmatch(each.name)]:
             with contextlib.suppress(OSError):
                 draft.unlink()
-
-
-def _locked(place: Path) -> int | None:
-    """A handle of the lock file, locked; None where another process has it."""
-    for _ in range(_ATTEMPTS):
-        place.mkdir(parents=True, exist_ok=True)
-        try:
-            handle = os.open(place / LOCK, os.O_RDWR | os.O_CREAT, 0o644)
-        except FileNotFoundError:  # the folder was taken away just now
-            continue
-        if not _lock(handle):
-            os.close(handle)
-            return None
-        with contextlib.suppress(OSError):
-            if os.path.samestat(os.fstat(handle), os.stat(place / LOCK)):
-                return handle
-        os.close(handle)
-    return None
-
-
-def _lock(handle: int) -> bool:
-    """Whether this process could get the lock, without waiting."""
-    try:
-        if os.name == "nt":
-            import msvcrt
-
-            msvcrt.locking(handle, msvcrt.LK_NBLCK, 1)  # type: ignore[attr-defined]
-        else:
-            import fcntl
-
-            fcntl.flock(handle, fcntl.LOCK_EX | fcntl.LOCK_NB)
-    except OSError:
-        return False
-    return True

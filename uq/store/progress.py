@@ -6,10 +6,10 @@ import re
 from pathlib import Path
 
 from uq.errors import StorageError
+from uq.store.places import PROGRESS
 from uq.store.saved import DamagedError, Saved, check_head, read_saved, write_saved
 from uq.store.whole import drafts
 
-PROGRESS = "progress"
 ENDING = ".nc"
 NAME = re.compile(r"[A-Za-z0-9_][A-Za-z0-9_.-]*")
 

@@ -16,9 +16,9 @@ def put(target: Path, write: Callable[[Path], object]) -> None:
     draft = target.with_name(f".{target.name}.{secrets.token_hex(4)}{DRAFT}")
     try:
         write(draft)
-        _flush(draft)
+        flush(draft)
         draft.replace(target)
-        _flush(target.parent)
+        flush(target.parent)
     finally:
         draft.unlink(missing_ok=True)
 
@@ -28,7 +28,7 @@ def drafts(folder: Path) -> Iterator[Path]:
     return folder.glob(f".*{DRAFT}")
 
 
-def _flush(path: Path) -> None:
+def flush(path: Path) -> None:
     """Has a file, or the names in a folder, on the disk before anything goes on."""
     if path.is_dir() and os.name == "nt":  # has no such thing for folders
         return

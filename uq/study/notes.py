@@ -38,12 +38,13 @@ def dotted(path: Path) -> str:
 
 @dataclass
 class Notes:
-    """What is wrong so far; `changed` are the paths that do not come from the file (their mistakes have no line)."""
+    """What is wrong so far; `changed` are the paths that do not come from the file (their mistakes have no line), `what` the file is."""
 
     file: str
     places: Places
     changed: tuple[Path, ...] = ()
     mistakes: list[Mistake] = field(default_factory=list)
+    what: str = "study"
 
     def at_key(self, path: Path, found: str, expected: str, remedy: str = "") -> None:
         """A mistake about a key: unknown, missing, misnamed."""
@@ -79,7 +80,7 @@ class Notes:
             file = f"{file} (as changed)"
         if any(path[: len(change)] == change for change in self.changed):
             place = (0, 0)
-        mistake = Mistake(file, *place, dotted(path) or "study", found, expected, remedy)
+        mistake = Mistake(file, *place, dotted(path) or self.what, found, expected, remedy)
         if mistake not in self.mistakes:
             self.mistakes.append(mistake)
 

@@ -32,19 +32,23 @@ APART = ("scenarios", "measured")
 
 def read_study(path: str | os.PathLike[str], changes: Mapping[str, object] | None = None) -> Study:
     """The study in a file, checked in full, with `changes` by dotted key made to it; raises StudyError with every mistake."""
-    place = Path(path)
+    place, text = Path(path), file_text(path, "study")
+    return parse_study(text, place.parent, place.stem, changes=changes, shown_as=str(path))
+
+
+def file_text(path: str | os.PathLike[str], what: str) -> str:
+    """The text of a file that should be a study or a batch; raises StudyError where it cannot be read as one."""
     try:
-        content = place.read_bytes()
+        content = Path(path).read_bytes()
     except OSError as error:
-        raise StudyError([Mistake(str(path), 0, 0, "study", f"a file that cannot be read ({error.strerror})", "a study file")]) from None
+        raise StudyError([Mistake(str(path), 0, 0, what, f"a file that cannot be read ({error.strerror})", f"a {what} file")]) from None
     try:
-        text = content.decode("utf-8")
+        return content.decode("utf-8")
     except UnicodeDecodeError as error:
         line = content.count(b"\n", 0, error.start) + 1
         column = error.start - (content.rfind(b"\n", 0, error.start) + 1) + 1
         found = f"the byte 0x{content[error.start]:02x}, which is not UTF-8"
-        raise StudyError([Mistake(str(path), line, column, "study", found, "a text file in UTF-8", "save it as UTF-8")]) from None
-    return parse_study(text, place.parent, place.stem, changes=changes, shown_as=str(path))
+        raise StudyError([Mistake(str(path), line, column, what, found, "a text file in UTF-8", "save it as UTF-8")]) from None
 
 
 def parse_study(
@@ -89,7 +93,8 @@ def _read(source: Source, changes: Mapping[str, object]) -> Study:
     measured = observations(work)
     made = [_scenario(source, changes, work, table) for table in _wholes(work.sheets.scenarios) if table is not None]
     for each in made:
-        relay(each.table.name, each.table.change, each.work.notes, notes)
+        path = ("scenarios", each.table.name, "change")
+        relay(path, {key: (*path, key) for key in each.table.change}, each.work.notes.mistakes, notes)
         data.used.update(each.data.used)
         data.said += [text for text in each.data.said if text not in data.said]
     _raise(notes)

@@ -1,8 +1,8 @@
-"""What is wrong with the study of a scenario, told where the scenario stands."""
+"""What is wrong with a study by a change, told where the change stands: in a scenario, or in a batch."""
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterable, Iterator, Mapping
 
 from uq.errors import Mistake
 from uq.study.locate import Path
@@ -11,21 +11,23 @@ from uq.study.notes import Notes, dotted
 from uq.study.work import Work
 
 
-def relay(name: str, change: Mapping[str, object], own: Notes, base: Notes) -> None:
-    """Mistakes of a scenario's study to the notes of the study, at the change that brought them, but those that the study has itself."""
+def relay(path: Path, places: Mapping[str, Path], own: Iterable[Mistake], base: Notes) -> None:
+    """Mistakes of a changed study to the notes of what changes it, at the change that brought them, but those that are noted already.
+
+    path: where the change stands; places: where the new value of each changed key does.
+    """
     told = {(mistake.key, mistake.found, mistake.expected) for mistake in base.mistakes}
-    for mistake in own.mistakes:
+    for mistake in own:
         if (mistake.key, mistake.found, mistake.expected) in told:
             continue
-        key = next((key for key in change if _within(mistake, key)), None)
-        path: Path = ("scenarios", name, "change")
+        key = next((key for key in places if _within(mistake, key)), None)
         if key is None:
             at = f" at {mistake.line}:{mistake.column}" if mistake.line else ""
             base.at_value(path, f"a change by which `{mistake.key}`{at} has {mistake.found}", mistake.expected, mistake.remedy)
         else:
             below = mistake.key.removeprefix(dotted(tuple(key.split(".")))).lstrip(".")
             found = mistake.found if below in ("", "value") else f"{mistake.found} in {below}"
-            base.at_value((*path, key), found, mistake.expected, mistake.remedy)
+            base.at_value(places[key], found, mistake.expected, mistake.remedy)
 
 
 def _within(mistake: Mistake, key: str) -> bool:

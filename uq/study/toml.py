@@ -7,6 +7,8 @@ from __future__ import annotations
 
 import re
 import tomllib
+from dataclasses import replace
+from functools import lru_cache
 from typing import Any
 
 from uq.study.locate import Repeated, locate
@@ -25,11 +27,18 @@ _HINTS = (
 )
 
 
-def read_toml(text: str, file: str) -> tuple[dict[str, Any], Notes]:
-    """The document, as far as it could be read, and the mistakes of its syntax."""
+def read_toml(text: str, file: str, what: str = "study") -> tuple[dict[str, Any], Notes]:
+    """The document, as far as it could be read, and the mistakes of its syntax; what: the file is. The document is not to be changed."""
+    document, notes = _read(text, file, what)
+    return document, replace(notes, mistakes=list(notes.mistakes))
+
+
+# A batch reads one text once for each combination of its changes.
+@lru_cache(maxsize=4)
+def _read(text: str, file: str, what: str) -> tuple[dict[str, Any], Notes]:
     plain = text.removeprefix("\ufeff").replace("\r\n", "\n")
     places = locate(plain)
-    notes = Notes(file, places)
+    notes = Notes(file, places, what=what)
     if places.repeated:
         cut = plain
         for repeated in places.repeated:
