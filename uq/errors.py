@@ -92,6 +92,18 @@ class Interrupted(UqError):
     exit_code = EXIT_INTERRUPTED
 
 
+class ClusterError(UqError):
+    """A cluster that cannot be reached, or was lost on the way; what was done is kept, and the same command goes on from there."""
+
+    exit_code = EXIT_INTERRUPTED
+
+
+class FatalMemberError(UqError):
+    """A member whose solving ends the process that does it, again and again: a defect of ours, or of the machine."""
+
+    exit_code = EXIT_DEFECT
+
+
 def suggest(name: str, known: Iterable[str]) -> str:
     """The likely intention behind an unknown name as 'did you mean `x`?', or an empty text."""
     near = difflib.get_close_matches(name, list(known), n=1, cutoff=0.6)

@@ -15,7 +15,7 @@ from uq.cli.progress import stopping, watching
 from uq.cli.say import err, out, typed
 from uq.cli.settings import state_folder
 from uq.cli.showing import told
-from uq.errors import EXIT_PRECISION, EXIT_WITHHELD, StorageError
+from uq.errors import EXIT_PRECISION, EXIT_WITHHELD, StorageError, UseMistake
 
 if TYPE_CHECKING:
     from uq.store.result import Result
@@ -24,41 +24,45 @@ if TYPE_CHECKING:
 
 @dataclass(frozen=True)
 class Asked:
-    """How a run is asked for: threads, a seed in place of the study's, whether to solve again what is done, the machine form."""
+    """How a run is asked for: threads or a cluster, a seed of its own, whether to solve again what is done, the machine form."""
 
     threads: int = 0
     seed: int | None = None
     again: bool = False
     json: bool = False
+    cluster: str | None = None
 
 
 def run_study(path: Path, output: Path | None, asked: Asked) -> None:
     """Runs the study at `path` and prints what the result says; exit code 4 where statements were withheld, 5 where it is not as precise
-    as asked. A result of the same study (seed, members and version of uq too) that is there already is shown, and nothing is solved."""
+    as asked or was stopped before it had all its members. A whole result of the same study (seed, members and version of uq too) that is
+    there already is shown, and nothing is solved."""
     from uq.study.read import read_study
 
-    study, threads, json = read_study(path), asked.threads, asked.json
+    study = read_study(path)
     if asked.seed is not None:
         study = study.with_changes({"plan.seed": asked.seed})
     for warning in study.warnings:
         err(f"uq: {warning}")
     if not asked.again and (there := done_already(study, output)):
         err(f"uq: this study is done already, its result is in {there.folder}; nothing was solved (--again solves it once more)")
-        finished(there, json)
+        finished(there, asked.json)
         return
     with watching() as observer, stopping(observer):
         from uq.pipeline import run
         from uq.running.start import Start
 
-        result = run(study, output, threads=threads, observer=observer, start=Start(command=typed()))
-    folder = state_folder(os.environ)
-    cost = float(result.attributes["seconds_per_solve"])
-    speeds.store(folder, speeds.with_measured(speeds.load(folder), speeds.model_of(study), cost))
-    finished(result, json)
+        start = Start(command=typed())
+        result = run(study, output, threads=asked.threads, observer=observer, start=start, cluster=asked.cluster)
+    if asked.cluster is None:
+        folder = state_folder(os.environ)
+        cost = float(result.attributes["seconds_per_solve"])
+        speeds.store(folder, speeds.with_measured(speeds.load(folder), speeds.model_of(study), cost))
+    finished(result, asked.json)
 
 
 def done_already(study: Study, output: Path | None) -> Result | None:
-    """The whole and undamaged result of this very study in the folder where its run would write; None where there is none."""
+    """The undamaged result of this very study, with all its members, in the folder where its run would write; None where there is none."""
     from uq.store.folder import RESULT, default_folder
     from uq.store.open import open_result
 
@@ -69,36 +73,37 @@ def done_already(study: Study, output: Path | None) -> Result | None:
         there = open_result(folder)
     except StorageError:
         return None
-    return there if there.attributes["study_fingerprint"] == study.fingerprint else None
+    whole = there.attributes.get("stopped") != "deadline"
+    return there if whole and there.attributes["study_fingerprint"] == study.fingerprint else None
+
+
+def show_script(cluster: str | None) -> None:
+    """Prints what would be submitted to the batch system of a cluster file."""
+    from uq.running.batch import read_batch_system, script
+    from uq.running.named import named
+
+    what = named(cluster)
+    if what.kind != "file":
+        raise UseMistake("--show-script without a cluster file", "--cluster FILE.toml", key="--show-script")
+    out(script(read_batch_system(Path(what.text))))
 
 
 def finished(result: Result, json: bool) -> None:
     """Prints what a new result says; exit codes 4 and 5 as above."""
+    from uq.report.headline import headline
+    from uq.report.withheld import withheld
+
     out(told(result, json))
-    if withheld(result):
+    if withheld(result, headline(result)):
         err("uq: statements were withheld because members failed; the result was written all the same")
         raise typer.Exit(EXIT_WITHHELD)
+    if result.attributes.get("stopped") == "deadline":
+        facts = result.attributes
+        err(f"uq: the run was stopped after {facts['members']} of {facts['members_asked']} members; this is the answer so far")
+        raise typer.Exit(EXIT_PRECISION)
     if spent := unreached(result):
         err(f"uq: the precision asked was not reached within the {spent} it may spend; the result was written all the same")
         raise typer.Exit(EXIT_PRECISION)
-
-
-def withheld(result: Result) -> bool:
-    """Whether any statement of a result or of its scenarios is kept back: members failed under the policy `refuse`.
-
-    Solves that failed for the ranking alone, or members of which nothing was asked after they failed, withhold nothing.
-    """
-    from uq.analysis.policy import WITHHELD
-    from uq.report.headline import headline
-
-    if result.attributes["failures"] != "refuse":
-        return False
-    head = headline(result)
-    told = [*(each.reason for each in head.limits), *(each.reason for each in head.rankings)]
-    for finding in result.findings.values():
-        said = [finding.attributes, *(each.attributes for each in finding.variables.values())]
-        told += [str(each.get("reason", "")) for each in said]
-    return any(WITHHELD in reason for reason in told)
 
 
 def unreached(result: Result) -> str:

@@ -8,8 +8,9 @@ from typing import Literal
 
 from uq.analysis.precision import Asked, Round, settled
 
-# Why no further round is begun: nothing was asked but the members, the precision is reached, or that much is spent.
-Ending = Literal["", "reached", "members", "solves", "minutes"]
+# Why no further round is begun: nothing was asked but the members, the precision is reached, that much is spent, or the run was stopped and
+# the answer so far is wanted.
+Ending = Literal["", "reached", "members", "solves", "minutes", "deadline"]
 
 
 @dataclass(frozen=True)

@@ -2,35 +2,36 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Iterator, Mapping
+from collections.abc import Callable, Iterable, Iterator, Mapping
 from contextlib import contextmanager
 from dataclasses import dataclass, field, replace
-from functools import partial
 
 from uq.analysis.finding import Finding
 from uq.analysis.precision import Round, headline
 from uq.design.blocks import Block
 from uq.design.design import Design
-from uq.errors import Interrupted
+from uq.errors import ClusterError, FatalMemberError, Interrupted
 from uq.running.aims import Aims, Ending, Spent, ending, last_ending
-from uq.running.block import part_of
 from uq.running.branch import STUDY, Branch
 from uq.running.keeping import Checkpoints
-from uq.running.pace import block_rows
-from uq.running.part import Part, Parts, fitted, together
-from uq.running.rounds import Crew, answered, solve_blocks, still_open
+from uq.running.part import Parts, fitted, together
+from uq.running.rounds import Crew, answered, still_open
+from uq.running.telling import Telling
 
 Span = tuple[int, int]
 
 
 @dataclass(frozen=True, eq=False)
 class Running:
-    """What is run: branches with equal rows and replicates (the study itself first), what is wanted, who works, where progress goes."""
+    """What is run: branches with equal rows and replicates (the study itself first), what is wanted, who works, where progress goes, who is
+    told what is settled so far, and whether a run that was stopped shall give the answer of its last completed round."""
 
     branches: tuple[Branch, ...]
     aims: Aims
     crew: Crew
     checkpoints: Checkpoints
+    telling: Telling
+    so_far: Callable[[], bool]
 
     @property
     def design(self) -> Design:
@@ -63,20 +64,31 @@ class Standing:
     findings: tuple[Finding, ...] | None = None
     ended: Ending = ""
 
+    @property
+    def early(self) -> bool:
+        """Whether the run was stopped before its end, so that another may go on with it."""
+        return self.ended == "deadline"
+
 
 @contextmanager
 def stopping_keeps(run: Running) -> Iterator[None]:
-    """What is done is kept where the run is stopped meanwhile; raises Interrupted that says so."""
+    """What is done is kept where the run is stopped meanwhile, or its cluster is lost; raises what says so."""
     try:
         yield
     except (KeyboardInterrupt, Interrupted):
         raise Interrupted(_left(run)) from None
+    except ClusterError as lost:
+        raise ClusterError(f"{lost}: {_left(run)}") from lost
+    except FatalMemberError:
+        run.checkpoints.flush()
+        raise
 
 
 def to_the_end(run: Running, standing: Standing, begun: Mapping[int, Parts]) -> Standing:
     """Round after round, from where a run stands; `begun`: by number, the parts of rounds that an earlier attempt has begun.
 
-    Raises Interrupted where the run was stopped; what was done is then kept.
+    Where the run was stopped and the answer so far is wanted, that of the last completed round is given, and what was done of the next one
+    is kept. Raises Interrupted where it is not wanted or there is none; what was done is then kept as well.
     """
     with stopping_keeps(run):
         standing = _looked_at(run.of(standing.rows), standing)
@@ -86,7 +98,14 @@ def to_the_end(run: Running, standing: Standing, begun: Mapping[int, Parts]) -> 
             if standing.rows and number not in begun and (why := _ending(run, standing, span)):
                 return replace(standing, ended=why)
             now = run.of(span[1])
-            standing = _looked_at(now, _another(now, _fitted(now, standing), number, begun.get(number, {})))
+            try:
+                standing = _looked_at(now, _another(now, _fitted(now, standing), number, begun.get(number, {})))
+            except (KeyboardInterrupt, Interrupted):
+                if not (standing.rows and run.so_far()):
+                    raise
+                run.checkpoints.flush()
+                return replace(standing, ended="deadline")
+            _tell(now, standing)
     return replace(standing, ended=last_ending(standing.rounds, run.aims))
 
 
@@ -109,12 +128,11 @@ def _another(run: Running, standing: Standing, number: int, found: Parts) -> Sta
     if run.aims.precision is not None:
         run.crew.meter.expect(run.solves(span[1]))
         run.crew.observer.stage(f"round {number + 1}: {2 * run.design.replicates * span[1]} members")
-    works = {branch.name: partial(_solved, run, branch) for branch in run.branches}
     # A run that is extended may have ended within what is the first round of the longer one.
     there = [Block(replicate, 0, standing.rows) for replicate in range(run.design.replicates) if standing.rows > span[0]]
     tasks = [(branch.name, block) for branch in run.branches for block in _open(run, branch, span, [*there, *_blocks(found, branch)])]
     run.checkpoints.begin(number, found)
-    solve_blocks(tasks, works, run.checkpoints.brought, run.crew)
+    run.crew.hands.solve(tasks, {branch.name: branch.forecast for branch in run.branches}, run.checkpoints.brought, run.crew)
     return Standing(span[1], together((standing.parts, run.checkpoints.end())), standing.rounds)
 
 
@@ -125,20 +143,13 @@ def _fitted(run: Running, standing: Standing) -> Standing:
     return replace(standing, parts=parts)
 
 
-def _solved(run: Running, branch: Branch, block: Block) -> Part:
-    return part_of(branch.forecast, block, run.crew.meter, run.crew.observer)
-
-
 def _blocks(found: Parts, branch: Branch) -> Iterable[Block]:
     return found[branch.name].blocks if branch.name in found else ()
 
 
 def _open(run: Running, branch: Branch, span: Span, done: Iterable[Block]) -> Iterator[Block]:
     forecast, crew = branch.forecast, run.crew
-    rows = span[1] - span[0]
-    size = crew.spread.rows or block_rows(
-        forecast.shape, crew.meter.seconds_per_solve, rows, forecast.design.replicates, crew.spread.workers
-    )
+    size = crew.spread.rows or crew.hands.rows(forecast, span[1] - span[0], crew)
     return still_open(forecast.design, span, size, done)
 
 
@@ -151,3 +162,14 @@ def _looked_at(run: Running, standing: Standing) -> Standing:
     findings = answered(base, standing.parts[STUDY], run.crew)
     said = Round(members, run.solves(standing.rows), headline(findings, base.forecast.ask, members))
     return replace(standing, rounds=(*standing.rounds, said), findings=findings)
+
+
+def _tell(run: Running, standing: Standing) -> None:
+    """What is settled so far goes to whoever listens; without a precision it has to be worked out, which is done where it costs little."""
+    members, base = 2 * run.design.replicates * standing.rows, run.branches[0]
+    if standing.rounds:
+        run.telling.tell(members, standing.rounds[-1].headlines, base.forecast.ask, run.aims.precision)
+    elif standing.rows < run.design.rows and run.telling.worth_it():
+        with run.telling.measured():
+            said = headline(answered(base, standing.parts[STUDY], run.crew), base.forecast.ask, members)
+            run.telling.tell(members, said, base.forecast.ask, None)

@@ -2,8 +2,9 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from dataclasses import dataclass, field
-from typing import Protocol
+from typing import Protocol, runtime_checkable
 
 import numpy as np
 from numpy.typing import NDArray
@@ -43,6 +44,34 @@ class Observer(Protocol):
     def stage(self, words: str) -> None: ...
 
     def progress(self, progress: Progress) -> None: ...
+
+
+@dataclass(frozen=True)
+class HeadlineAnswer:
+    """One headline number: its group and variable in result.nc, the place along its axis in words ("720", "0.95", an input's name, "" where
+    there is none), value with the ends of its interval (nan where there is no number), unit, and whether it is as precise as asked (None
+    where nothing was asked of its kind)."""
+
+    group: str
+    name: str
+    place: str
+    kind: str
+    value: float
+    low: float
+    high: float
+    unit: str
+    settled: bool | None
+
+
+@runtime_checkable
+class Listener(Protocol):
+    """An observer that also has a method `round` hears at the ends of rounds what is settled so far, from the run's main thread.
+
+    With a precision after every round, as it is worked out anyway. Without one only where all telling together takes at most 2 % of the
+    run's time, so not within its first seconds, and not after the last round, which the result itself tells of.
+    """
+
+    def round(self, members: int, answers: Sequence[HeadlineAnswer]) -> None: ...
 
 
 @dataclass

@@ -18,6 +18,7 @@ from uq.running.pilot import Found, completed, piloted
 from uq.running.rounds import Crew
 from uq.running.setup import design_of
 from uq.running.start import Start
+from uq.running.telling import Telling
 from uq.store.saved import Saved
 from uq.study.study import Study
 
@@ -47,7 +48,8 @@ def gone_on_with(
     alike = Alike(keeper, made_with())
     branches = branches_of(forecasts, alike, crew, start.before)
     checkpoints = Checkpoints(alike, lambda: crew.meter.elapsed, start.pace)
-    running = Running(branches, aims_of(study), crew, checkpoints)
+    telling = Telling(crew.observer, lambda: crew.meter.elapsed)
+    running = Running(branches, aims_of(study), crew, checkpoints, telling, start.so_far)
     standing = standing_of(start.before, running) if start.before else Standing()
     progress = progress_of(alike, running)
     done = progress.count + sum((part.count for part in standing.parts.values()), Count())

@@ -1,4 +1,4 @@
-"""A round: the blocks that are still to be solved, spread over threads by dask's scheduler, and gathered as they come.
+"""A round: the blocks that are still to be solved, spread over those who solve, and gathered as they come.
 
 Sums combine along the binary tree over rows, whatever came first, so the result has the same bits for any number of threads, any size of
 block and any interruption.
@@ -8,19 +8,26 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterable, Iterator, Mapping, Sequence
 from concurrent.futures import ThreadPoolExecutor
-from dataclasses import dataclass
+from dataclasses import dataclass, field
+from functools import partial
+from typing import Protocol
 
 from uq.analysis.finding import Finding
 from uq.design.blocks import Block
 from uq.design.design import Design
 from uq.errors import UseMistake
+from uq.running.block import Forecast, part_of
 from uq.running.branch import Branch
 from uq.running.meter import Meter
 from uq.running.observer import Observer
+from uq.running.pace import block_rows
 from uq.running.part import Part, Parts
 from uq.running.threads import all_cores, threads
 
 Work = Callable[[Block], Part]
+Brought = Callable[[str, Part], None]
+# A block of a branch, by its name.
+Task = tuple[str, Block]
 
 
 @dataclass(frozen=True)
@@ -42,13 +49,52 @@ class Spread:
         return self.threads or all_cores()
 
 
+class Hands(Protocol):
+    """Who solves blocks: the threads of this process, or a cluster. The bits of a result do not depend on it."""
+
+    @property
+    def words(self) -> str:
+        """What they are, for the facts of the run; "" for threads of this process."""
+
+    def cores(self, spread: Spread) -> int:
+        """How many solve at a time."""
+
+    def rows(self, forecast: Forecast, rows: int, crew: Crew) -> int:
+        """Rows of a block, a power of two, in a round of so many rows of every replicate."""
+
+    def solve(self, tasks: Sequence[Task], forecasts: Mapping[str, Forecast], brought: Brought, crew: Crew) -> None:
+        """Solves blocks of branches by name, tells the meter, and hands each part to `brought`. Raises Interrupted where it is stopped."""
+
+
+class Here:
+    """The threads of this process."""
+
+    words = ""
+
+    def cores(self, spread: Spread) -> int:
+        return spread.workers
+
+    def rows(self, forecast: Forecast, rows: int, crew: Crew) -> int:
+        return block_rows(forecast.shape, crew.meter.seconds_per_solve, rows, forecast.design.replicates, crew.spread.workers)
+
+    def solve(self, tasks: Sequence[Task], forecasts: Mapping[str, Forecast], brought: Brought, crew: Crew) -> None:
+        works = {name: partial(part_of, forecast, meter=crew.meter, observer=crew.observer) for name, forecast in forecasts.items()}
+        solve_blocks(tasks, works, brought, crew)
+
+
 @dataclass(frozen=True)
 class Crew:
-    """Who works: how the work is spread, who adds up, who is told."""
+    """Who works: how the work is spread, who adds up, who is told, who solves."""
 
     spread: Spread
     meter: Meter
     observer: Observer
+    hands: Hands = field(default_factory=Here)
+
+    @property
+    def cores(self) -> int:
+        """How many solve at a time."""
+        return self.hands.cores(self.spread)
 
 
 def still_open(design: Design, span: tuple[int, int], size: int, done: Iterable[Block]) -> Iterator[Block]:
@@ -74,8 +120,8 @@ def _open(block: Block, size: int, done: Sequence[Block]) -> Iterator[Block]:
         yield from _open(Block(block.replicate, start, half), size, inside)
 
 
-def solve_blocks(tasks: Sequence[tuple[str, Block]], works: Mapping[str, Work], brought: Callable[[str, Part], None], crew: Crew) -> None:
-    """Solves blocks of branches by name; `brought` gets the part of each, from the thread that made it.
+def solve_blocks(tasks: Sequence[Task], works: Mapping[str, Work], brought: Brought, crew: Crew) -> None:
+    """Solves blocks of branches by name, spread over threads by dask's scheduler; `brought` gets each part, from the thread that made it.
 
     Raises Interrupted, with every thread at rest, where the observer's stop flag was set or Ctrl-C pressed.
     """

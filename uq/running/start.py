@@ -17,13 +17,15 @@ from uq.study.study import Study
 @dataclass(frozen=True, eq=False)
 class Start:
     """before: what a shorter run of the same study has left. command, earlier: for the history of the result, the command as typed and the
-    history of the result that is extended. clock: seconds from any beginning. pace: how often progress is kept."""
+    history of the result that is extended. clock: seconds from any beginning. pace: how often progress is kept. so_far: is asked when the
+    run was stopped: whether to give the answer of the last completed round (as at a deadline), not none; all progress is kept then."""
 
     before: Saved | None = None
     command: str = ""
     earlier: str = ""
     clock: Callable[[], float] = perf_counter
     pace: Pace = USUAL
+    so_far: Callable[[], bool] = lambda: False
 
 
 def crew_for(study: Study, spread: Spread, observer: Observer | None, start: Start) -> Crew:
