@@ -10,7 +10,8 @@ import pytest
 from tests.made_results import made_facts, made_result, made_study
 from tests.test_cli_run import SMALL, uq, write
 from tests.test_run_whole import BLOW_UP
-from uq.cli.running import withheld
+from uq.report.headline import headline
+from uq.report.withheld import withheld
 from uq.store.netcdf import read_groups, write_groups
 from uq.store.open import open_result
 from uq.study.read import parse_study
@@ -123,8 +124,10 @@ def test_only_what_is_withheld_ends_with_4(tmp_path: Path) -> None:
     """Solves that failed for the ranking alone withhold nothing."""
     plan = made_study().plan
     plan.failures = "refuse"  # type: ignore[misc]
-    assert not withheld(made_result(tmp_path / "a", made_study(plan=plan), facts=made_facts(solves_failed=3)))
-    assert withheld(made_result(tmp_path / "b", made_study(plan=plan), facts=made_facts(solves_failed=3, members_failed=3)))
+    whole = made_result(tmp_path / "a", made_study(plan=plan), facts=made_facts(solves_failed=3))
+    lost = made_result(tmp_path / "b", made_study(plan=plan), facts=made_facts(solves_failed=3, members_failed=3))
+    assert not withheld(whole, headline(whole))
+    assert withheld(lost, headline(lost))
 
 
 OPEN = (

@@ -16,7 +16,7 @@ if TYPE_CHECKING:
     from uq.store.open import open_result as open_result
     from uq.study.read import read_study as read_study
 
-__version__ = "0.1.0"
+__version__ = "0.2.0"
 
 _DOORS = {
     "read_study": "uq.study.read",

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 from pathlib import Path
 
+from uq.cli.numbers import result_of
 from uq.cli.say import out
 from uq.errors import UseMistake
 
@@ -15,7 +16,7 @@ def compare_results(paths: Sequence[Path], threads: int, json: bool) -> None:
         raise UseMistake("one result", "two or more to compare")
     from uq.pipeline import compare
 
-    first, others = compare(paths, threads=threads)
+    first, others = compare([result_of(path) for path in paths], threads=threads)
     if json:
         from json import dumps
 

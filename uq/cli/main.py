@@ -7,6 +7,7 @@ from typing import Annotated
 
 import typer
 
+from uq.cli.queue_commands import COMMANDS
 from uq.cli.say import out, telling
 
 app = typer.Typer(
@@ -19,12 +20,23 @@ app = typer.Typer(
 )
 
 StudyPath = Annotated[Path, typer.Argument(metavar="STUDY", help="The study file (TOML).", show_default=False)]
-ResultPath = Annotated[Path, typer.Argument(metavar="RESULT", help="A run folder or its result.nc.", show_default=False)]
+ResultPath = Annotated[
+    Path, typer.Argument(metavar="RESULT", help="A run folder, its result.nc, or the number of a job.", show_default=False)
+]
 Output = Annotated[
     Path | None,
     typer.Option("-o", "--output", metavar="DIR", help="Folder of the result; default results/NAME-FINGERPRINT.", show_default=False),
 ]
 Threads = Annotated[int, typer.Option("--threads", min=0, help="Threads to solve with; 0 takes all cores.")]
+Clusters = Annotated[
+    str | None,
+    typer.Option(
+        "--cluster",
+        metavar="WHERE",
+        help="Solve on local[:N] processes, a dask scheduler (tcp://host:8786), or the batch system of a cluster file (FILE.toml).",
+        show_default=False,
+    ),
+]
 Json = Annotated[bool, typer.Option("--json", help="Print the machine form (JSON) instead of the text.")]
 
 
@@ -57,13 +69,18 @@ def run(
         int | None, typer.Option("--seed", min=0, help="Run with this seed instead of the study's.", show_default=False)
     ] = None,
     again: Annotated[bool, typer.Option("--again", help="Solve it again where its result is there already.")] = False,
+    cluster: Clusters = None,
+    script: Annotated[bool, typer.Option("--show-script", help="Print what --cluster FILE.toml would submit, and stop.")] = False,
     json: Json = False,
 ) -> None:
     """Run a study and print what it says; goes on where an earlier run of it was stopped, shows the result where it is done."""
     with telling():
-        from uq.cli.running import Asked, run_study
+        from uq.cli.running import Asked, run_study, show_script
 
-        run_study(study, output, Asked(threads, seed, again, json))
+        if script:
+            show_script(cluster)
+        else:
+            run_study(study, output, Asked(threads, seed, again, json, cluster))
 
 
 @app.command()
@@ -95,7 +112,9 @@ def extend(
 
 @app.command()
 def compare(
-    results: Annotated[list[Path], typer.Argument(metavar="RESULT RESULT...", help="Run folders or their result.nc.", show_default=False)],
+    results: Annotated[
+        list[Path], typer.Argument(metavar="RESULT RESULT...", help="Run folders, their result.nc, or numbers of jobs.", show_default=False)
+    ],
     threads: Threads = 0,
     json: Json = False,
 ) -> None:
@@ -130,3 +149,7 @@ def show(
         from uq.cli.showing import show_result
 
         show_result(result, json)
+
+
+for command in COMMANDS:
+    app.command()(command)

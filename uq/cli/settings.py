@@ -7,10 +7,12 @@ from pathlib import Path
 
 
 def state_folder(environment: Mapping[str, str]) -> Path:
-    """Where logs and measured speeds stand: $XDG_STATE_HOME/uq, by default ~/.local/state/uq; relative values are ignored.
+    """Where the queue, logs and measured speeds stand: $UQ_HOME, else $XDG_STATE_HOME/uq, by default ~/.local/state/uq.
 
-    Source: XDG Base Directory Specification 0.8.
+    A relative $XDG_STATE_HOME is ignored, as the XDG Base Directory Specification 0.8 wants it; $UQ_HOME may be relative.
     """
+    if own := environment.get("UQ_HOME", ""):
+        return Path(own).absolute()
     named = environment.get("XDG_STATE_HOME", "")
     home = Path(environment.get("HOME", "") or Path.home())
     root = Path(named) if named and Path(named).is_absolute() else home / ".local" / "state"

@@ -6,6 +6,7 @@ from pathlib import Path
 from shutil import get_terminal_size
 from typing import TYPE_CHECKING
 
+from uq.cli.numbers import result_of
 from uq.cli.say import out
 
 if TYPE_CHECKING:
@@ -16,7 +17,7 @@ def show_result(path: Path, json: bool) -> None:
     """Prints the text that the run printed, or its machine form."""
     from uq.store.open import open_result
 
-    out(told(open_result(path), json))
+    out(told(open_result(result_of(path)), json))
 
 
 def told(result: Result, json: bool) -> str:

@@ -21,7 +21,9 @@ TURNING = frozenset("\u061c\u200e\u200f\u202a\u202b\u202c\u202d\u202e\u2066\u206
 
 def plain(text: str) -> str:
     """A text on one line in which nothing acts on a terminal: white space becomes one blank, control signs are written out (\\x1b)."""
-    return "".join(_shown(sign) for sign in " ".join(text.split()))
+    line = " ".join(text.split())
+    # Most texts have nothing to be shown, and a list of jobs has very many of them.
+    return line if line.isascii() and line.isprintable() else "".join(_shown(sign) for sign in line)
 
 
 def _shown(sign: str) -> str:
@@ -38,6 +40,8 @@ def paragraphs(text: str) -> list[str]:
 
 def width(text: str) -> int:
     """Columns that a text takes on a terminal (Unicode's East Asian width; signs that sit on others take none)."""
+    if text.isascii():
+        return len(text)
     return sum(0 if unicodedata.combining(sign) else 2 if unicodedata.east_asian_width(sign) in "WF" else 1 for sign in text)
 
 

@@ -96,6 +96,8 @@ def stopped(head: Headline, precision: PrecisionAnswer) -> str:
     spent = int(head.facts["solves"]) + sum(int(each.facts.get("solves", 0)) for each in head.scenarios)
     if precision.stopped == "members":
         return "it has all the members that it may use"
+    if precision.stopped == "deadline":
+        return "the deadline came first"
     if precision.stopped == "minutes":
         return "another round would have taken longer than the time that is left"
     allowed = precision.solves_allowed

@@ -26,7 +26,7 @@ def summary(result: Result, width: int = WIDTH) -> str:
     """The result in plain words, so many columns wide (at least 60): caution, limits, what to expect, what drives it, how far to trust it,
     in words, where it lies."""
     head = headline(result)
-    first = [*opening(str(head.facts["title"]), str(head.facts["caution"])), *failure_warnings(head)]
+    first = [*opening(str(head.facts["title"]), str(head.facts["caution"])), *stopped_early(head), *failure_warnings(head)]
     sections: list[list[Part]]
     if all_failed(head):
         sections = [first, [NOTHING_LEFT], [Text(plain(text), "", "  ") for text in failed_members(head)]]
@@ -45,9 +45,19 @@ def opening(title: str, caution: str) -> list[Part]:
     return parts
 
 
+def stopped_early(head: Headline) -> list[Part]:
+    """That the run has not come to its end: a deadline came first."""
+    if head.facts.get("stopped") != "deadline":
+        return []
+    members, asked = head.facts["members"], head.facts["members_asked"]
+    text = f"The deadline came first: this is the answer of {members} of {asked} members. The same run can go on from here."
+    return [Text(text, "", "  ")]
+
+
 def _closing(head: Headline, result: Result) -> list[Part]:
     facts, folder = head.facts, plain(shlex.quote(str(result.folder)))
-    counts = f"{facts['members']} members, {facts['solves']} solves, {duration(facts['wall_time'])} on {threads(facts['threads'])}"
+    where = f"a cluster ({plain(str(facts['cluster']))})" if "cluster" in facts else threads(facts["threads"])
+    counts = f"{facts['members']} members, {facts['solves']} solves, {duration(facts['wall_time'])} on {where}"
     prints = f"seed {facts['seed']}, study fingerprint {str(facts['study_fingerprint'])[:SHORT]}"
     return [
         Text(f"{counts}, {prints}."),

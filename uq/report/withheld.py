@@ -10,8 +10,23 @@ from typing import Any
 import numpy as np
 
 from uq.analysis.policy import WITHHELD
-from uq.report.answers import Answers, Estimate, LimitAnswer, RankingAnswer
+from uq.report.answers import Answers, Estimate, Headline, LimitAnswer, RankingAnswer
 from uq.report.drawn import Findings, data, room
+from uq.store.result import Result
+
+
+def withheld(result: Result, head: Headline) -> bool:
+    """Whether any statement of a result or of its scenarios is kept back: members failed under the policy `refuse`.
+
+    Solves that failed for the ranking alone, or members of which nothing was asked after they failed, withhold nothing.
+    """
+    if result.attributes["failures"] != "refuse":
+        return False
+    told = [*(each.reason for each in head.limits), *(each.reason for each in head.rankings)]
+    for finding in result.findings.values():
+        said = [finding.attributes, *(each.attributes for each in finding.variables.values())]
+        told += [str(each.get("reason", "")) for each in said]
+    return any(WITHHELD in reason for reason in told)
 
 
 def refused_from(found: Findings, times: tuple[float, ...], facts: Mapping[str, Any]) -> float:
