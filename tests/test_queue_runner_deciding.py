@@ -107,9 +107,9 @@ def chained(error: Exception, cause: Exception) -> Exception:
 STUDY_MISTAKE = StudyError([Mistake("a.toml", 1, 1, "time", "x", "y")])
 CASES = [
     (STUDY_MISTAKE, False, "mistake", Finish),
-    (UseMistake("a", "b"), False, "use", Stumble),
+    (UseMistake("a", "b"), False, "use", GiveBack),
     (FatalMemberError("member 7"), False, "fatal", Finish),
-    (ClusterError("lost"), False, "worker", Stumble),
+    (ClusterError("lost"), False, "cluster", GiveBack),
     (StorageError("cannot be read"), False, "storage", Stumble),
     (StorageError("cannot be written"), True, "full", Pause),
     *((chained(StorageError("cannot write"), OSError(number, "no")), False, "full", Pause) for number in FULL),
@@ -128,7 +128,7 @@ def test_what_goes_wrong_is_told_apart(error: Exception, disk_full: bool, kind: 
     assert isinstance(done, step)
     if isinstance(done, Finish):
         assert done.state == "failed"
-    said = getattr(done, "reason", "")
+    said = done.why if isinstance(done, GiveBack) else getattr(done, "reason", "")
     assert str(error) in said or isinstance(error, MemoryError)
 
 

@@ -47,7 +47,8 @@ def submit_file(path: Path, wishes: Wishes, json: bool) -> None:
             err(f"uq: {warning}")
         intakes = [intake_of(study, now, Terms(priority=wishes.priority or 0, not_before=times[0], deadline=times[1]))]
     if any(each.deadline is not None and each.deadline <= now for each in intakes):
-        raise UseMistake(f'a deadline "{wishes.deadline}", which is over', "a time to come", key="deadline")
+        which = f'the deadline "{wishes.deadline}"' if wishes.deadline else f"a deadline in {path}"
+        raise UseMistake(f"{which}, which is over", "a time to come", key="deadline")
     queue = the_queue()
     submitted = queue.submit(intakes, wishes.again)
     if json:
@@ -86,7 +87,10 @@ def told(submitted: Sequence[Submitted], jobs: Sequence[Job], now: float) -> Non
     for each, job in zip(submitted, jobs, strict=True):
         about = stands(job, Now(now))
         line = f"job {job.number} ({called(job)}) {job.state}" + (f": {about}" if about else "")
-        lines.append(line if each.new else f"{line}; handed in before, --again makes a new one")
+        goes_on = f"`uq retry {job.number}` goes on with it, " if job.state == "partial" else ""
+        lines.append(
+            line if each.new else f"{line}; handed in before, with priority and times of its own; {goes_on}--again makes a new one"
+        )
     if len(lines) > MOST_NAMED:
         lines = [*lines[: MOST_NAMED // 2], f"... {len(lines) - MOST_NAMED} more", *lines[-MOST_NAMED // 2 :]]
     new, batch = sum(each.new for each in submitted), jobs[0].batch if jobs else ""

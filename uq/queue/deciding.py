@@ -7,11 +7,13 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from typing import Literal
 
-from uq.errors import EXIT_STUDY, EXIT_USAGE, FatalMemberError, Interrupted, StorageError, UqError
+from uq.errors import EXIT_STUDY, EXIT_USAGE, ClusterError, FatalMemberError, Interrupted, StorageError, UqError
 
 # Why a run is stopped; "" lets it go on.
 Order = Literal["", "cancelled", "pausing", "deadline", "told to end", "window closed"]
-Kind = Literal["mistake", "fatal", "full", "storage", "use", "worker", "defect"]
+Kind = Literal["mistake", "fatal", "full", "storage", "use", "cluster", "worker", "defect"]
+# Seconds until a job is begun again whose cluster was not there.
+CLUSTER_WAIT = 60.0
 
 # What a disk says that holds no more, a quota that is used up, and a file that may grow no longer.
 FULL = frozenset((errno.ENOSPC, errno.EDQUOT, errno.EFBIG))
@@ -63,10 +65,12 @@ class Pause:
 
 @dataclass(frozen=True)
 class GiveBack:
-    """The job goes back to the queue with its progress, and costs no retry; reopens: not before its window opens again."""
+    """The job goes back to the queue with its progress, and costs no retry; reopens: not before its window opens again; wait: not before
+    so many seconds from now."""
 
     why: str
     reopens: bool = False
+    wait: float = 0.0
 
 
 @dataclass(frozen=True)
@@ -126,11 +130,14 @@ class Trouble:
 
 def after_trouble(trouble: Trouble) -> Step:
     """What becomes of a job whose run went wrong: a mistake will be one again, and so will a member that ends
-    whoever solves it; a full disk waits for somebody; the rest may pass (a wrong use is the runner's, not that of the study)."""
+    whoever solves it; a full disk waits for somebody; a cluster that is away, or a runner that was started wrongly, is no fault of the job;
+    the rest may pass."""
     if trouble.kind in ("mistake", "fatal"):
         return Finish("failed", trouble.text)
     if trouble.kind == "full":
         return Pause(f"the disk is full: {trouble.text}; free some room, then resume the job")
+    if trouble.kind in ("cluster", "use"):
+        return GiveBack(trouble.text, wait=CLUSTER_WAIT)
     return Stumble(trouble.text)
 
 
@@ -146,6 +153,8 @@ def trouble_of(error: BaseException, disk_full: bool) -> Trouble:
         raise TypeError("an interruption is no trouble")
     if isinstance(error, FatalMemberError):
         return Trouble("fatal", str(error))
+    if isinstance(error, ClusterError):
+        return Trouble("cluster", str(error))
     if isinstance(error, UqError):
         return Trouble(KINDS.get(error.exit_code, "worker"), str(error))
     if says_full(error):

@@ -5,7 +5,7 @@ from __future__ import annotations
 import threading
 from collections.abc import Callable
 
-from uq.errors import StorageError, UseMistake
+from uq.errors import UseMistake
 from uq.queue.bell import Bell
 from uq.queue.claims import Claim
 from uq.queue.deciding import News, Order, order
@@ -41,7 +41,7 @@ class Heart:
             told["exit_code"] = self.exit_code
         try:
             self._wanted, self._trouble = str(self._claim.beat(told)), ""
-        except StorageError as error:
+        except Exception as error:  # noqa: BLE001 - a heart that stopped would hear of no pause, deadline or end any more
             if str(error) != self._trouble:
                 self._log(f"no heartbeat: {error}")
             self._trouble = str(error)

@@ -141,7 +141,9 @@ class Runner:
             if isinstance(error, UseMistake):
                 heart.misuse = error
             heart.exit_code = error.exit_code if isinstance(error, UqError) else UqError.exit_code
-            return after_trouble(trouble)
+            # What goes wrong while a run is being stopped is no trouble of the job.
+            asked = heart.order()
+            return after_stop(asked) if asked and trouble.kind in ("cluster", "worker") else after_trouble(trouble)
 
     def _carry_out(self, step: Step, claim: Claim, log: Log, reserve: Reserve) -> None:
         """Tells the queue what has become of a job. Where that is not possible the job is claimed again, as after the death of a runner."""

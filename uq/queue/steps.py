@@ -11,9 +11,10 @@ def carried_out(step: Step, claim: Claim, now: float) -> bool:
     match step:
         case Finish(state, reason, note):
             return claim.finish(state, reason, note)
-        case GiveBack(why, reopens):
+        case GiveBack(why, reopens, wait):
             window = claim.job.window
-            claim.give_back(why, window.opening(now) if reopens and window else None)
+            opens = window.opening(now) if reopens and window else None
+            claim.give_back(why, now + wait if wait else opens)
         case Pause(reason):
             claim.paused(reason)
         case Stumble(reason):

@@ -5,7 +5,7 @@ from __future__ import annotations
 import uuid
 from collections import Counter
 from collections.abc import Callable, Iterator, Mapping, Sequence
-from contextlib import contextmanager
+from contextlib import contextmanager, suppress
 from dataclasses import astuple
 from queue import Empty, SimpleQueue
 from typing import Any
@@ -88,7 +88,9 @@ class Cluster:
         finally:
             flight.dropped()
             if self._client.status == "running":
-                self._client.unregister_worker_plugin(plugin)
+                # A worker that hangs does not answer; what it holds ends with it, and why we end must not be lost over that.
+                with suppress(Exception):
+                    self._client.sync(self._client.scheduler.unregister_worker_plugin, name=plugin, callback_timeout=CLOSED_WITHIN)
 
 
 class Flight:
