@@ -78,7 +78,7 @@ class Model:
         if self.doubts is not None:
             conditions[:, 0][times >= self.doubts(u)[:, None]] = Truth.unknown
         counts = np.ones(len(u), dtype=np.int32)
-        return Batch(values, conditions, outcomes, status, end, 7 * counts, counts, np.zeros((len(u), 1)))
+        return Batch(values, conditions, outcomes, status, end, 7 * counts, counts, 0 * counts, 0 * counts, np.zeros((len(u), 1)))
 
 
 def tallied(model: Model, design: Design, ask: Ask, blocks: Iterable[Block]) -> list[Tallies]:

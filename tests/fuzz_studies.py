@@ -242,7 +242,9 @@ def judge(text: str) -> Study | None:
             assert mistake.line == 0 or 1 <= mistake.column <= len(lines[mistake.line - 1]) + 1
         return None
     assert found.inputs.items
-    assert len(found.equations.rates) == len(found.states) == len(found.equations.starts) > 0
-    assert len(found.equations.observed) >= len(found.watched) == len(found.plan.watch)
+    equations = found.equations
+    assert len(equations.rates) == len(equations.states) == len(equations.starts) == len(found.lowest) >= len(found.states) > 0
+    assert len(equations.observed) >= len(found.watched)
+    assert list(dict.fromkeys(each.name.partition("[")[0] for each in found.watched)) == list(found.plan.watch)
     assert all(len(scenario.study.watched) == len(found.watched) for scenario in found.scenarios)
     return found

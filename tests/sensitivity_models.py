@@ -133,7 +133,7 @@ class Dependent:
         if self.threshold is not None:
             conditions[:, 0] = np.where(np.isnan(values[:, 0]), Truth.unknown, values[:, 0] > self.threshold)
         counts = np.ones(len(x), dtype=np.int32)
-        return Batch(values, conditions, outcomes, status, end, 7 * counts, counts, np.zeros((len(x), 1)))
+        return Batch(values, conditions, outcomes, status, end, 7 * counts, counts, 0 * counts, 0 * counts, np.zeros((len(x), 1)))
 
     def complete(self, design: Design, **changes: Any) -> Ask:
         """The ask with what the pilot tells."""

@@ -47,13 +47,7 @@ def said(place: Path, *arguments: str, code: int = 0) -> str:
 
 def begun(place: Path, *arguments: str) -> subprocess.Popen[str]:
     command = [sys.executable, "-m", "uq", *arguments]
-    pipes = {"stdout": subprocess.PIPE, "stderr": subprocess.PIPE}
-    return subprocess.Popen(command, cwd=place, text=True, preexec_fn=None if os.name == "nt" else heard, **pipes)
-
-
-def heard() -> None:
-    """Ctrl-C reaches the process, also where the tests were started in the background of a shell, which has it ignored."""
-    signal.signal(signal.SIGINT, signal.SIG_DFL)
+    return subprocess.Popen(command, cwd=place, stdout=subprocess.PIPE, stderr=subprocess.PIPE, text=True)
 
 
 def job(place: Path, number: int = 1) -> dict[str, object]:

@@ -56,6 +56,7 @@ HEAVY = ("numba", "llvmlite", "scipy.stats", "dask", "distributed", "xarray", "n
 OUTSIDE = {"__init__", "__main__"}
 
 LONG_FILES: dict[str, str] = {
+    "uq/solve/kernel.py": "numba's cache does not see edits of other files: the stepping kernel and all it calls stand in one",
     "uq/analysis/selection.py": "numba's cache does not see edits of other files: a kernel and all it calls stand in one",
 }
 LONG_FUNCTIONS: dict[str, str] = {}

@@ -32,20 +32,20 @@ escape = { uniform = { low = 0, high = 0.17 } }
 start = 1
 rate = "escape * flame**2"
 [terms]
-sum = "prey + hunters"
+both = "prey + hunters"
 [forcings.food]
 rows = [[0, 0], [3, 0.4], [6, 0]]
 interpolation = "step"
 [outcomes.peak]
-take = "highest(sum)"
+take = "highest(both)"
 [outcomes.mean]
 take = "average(prey)"
 [limits.many]
-when = "sum > 4"
+when = "both > 4"
 by = [3, 6]
 [plan]
 members = 4096
-watch = ["prey", "hunters", "sum", "flame"]
+watch = ["prey", "hunters", "both", "flame"]
 """
 
 

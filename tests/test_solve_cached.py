@@ -12,7 +12,7 @@ from numba import config
 
 import uq
 
-ASK = "from uq.solve.kernel import run_members_3 as k; print(k.stats.cache_path)"
+ASK = "from uq.solve.kernel import run_members_4 as k; print(k.stats.cache_path)"
 
 
 def place(**environment: str) -> Path:

@@ -13,7 +13,9 @@ import numpy as np
 import pytest
 from scipy.integrate import solve_ivp
 
+import uq
 from uq.lang.graph import Node
+from uq.model.code import Forcing
 from uq.study.read import read_study
 from uq.study.study import Study
 
@@ -57,9 +59,16 @@ def evaluate(study: Study, nodes: tuple[Node, ...], leaves: dict[str, Any]) -> l
     return [values[node.id] for node in nodes]
 
 
+def course(forcing: Forcing, time: float) -> float:
+    """The value of a forcing, linear between rows or held from each to the next."""
+    if forcing.interpolation == "step":
+        return forcing.values[max(int(np.searchsorted(forcing.times, time, side="right")) - 1, 0)]
+    return float(np.interp(time, forcing.times, forcing.values))
+
+
 def leaves_at(study: Study, time: float, x: Any, y: Any) -> dict[str, Any]:
     inputs = dict(zip(study.inputs.names, x.T, strict=True))
-    forced = {f.name: np.interp(time, f.times, f.values) for f in study.equations.forcings}
+    forced = {f.name: course(f, time) for f in study.equations.forcings}
     return {**inputs, **dict(zip(study.equations.states, y, strict=True)), **forced, "time": time}
 
 
@@ -68,7 +77,7 @@ def solved(name: str) -> tuple[Any, Any, Any, Any]:
     """Inputs [member, input], observed [observed, time, member], conditions [condition, time, member], calls of the rates."""
     study = demo(name)
     x = study.inputs.values(np.random.default_rng(5).random((MEMBERS, len(study.inputs.names))))
-    nothing = np.zeros((len(study.states), MEMBERS))
+    nothing = np.zeros((len(study.equations.states), MEMBERS))
     start = np.array([np.broadcast_to(v, MEMBERS) for v in evaluate(study, study.equations.starts, leaves_at(study, 0.0, x, nothing))])
 
     def rates(time: float, y: Any) -> Any:
@@ -97,7 +106,7 @@ def ever_by(name: str, limit: int) -> list[float]:
     return [float(condition[study.times.solved <= by].any(axis=0).mean()) for by in study.limits_asked[limit].by]
 
 
-@pytest.mark.parametrize("name", NAMES)
+@pytest.mark.parametrize("name", [*NAMES, "cell-module"])
 def test_everything_that_a_reviewer_asks_for_is_filled_in(name: str) -> None:
     study = demo(name)
     assert study.warnings == ()
@@ -192,3 +201,50 @@ def test_several_inputs_matter(name: str, least: float) -> None:
     ranks = [np.argsort(np.argsort(column)) for column in (*x.T, peak)]
     squares = np.corrcoef(ranks)[-1, :-1] ** 2
     assert np.sort(squares)[-2] > least / 2, dict(zip(demo(name).inputs.names, squares.round(2), strict=True))
+
+
+def test_cell_module_against_the_same_by_hand() -> None:
+    study = demo("cell-module")
+    heats = 16.0 + 0.1 * np.arange(12)
+    temperatures, left = 320.0 + 15.0 * np.arange(12)[::-1], np.linspace(0.2, 1.0, 12)
+    leaves = {"k0": 1.1e9, "gap": 0.13, "loss": 0.032, "ambient": 22.0, "heater": 34.0, "time": 3.0}
+    leaves |= {f"{name}[{i}]": float(v[i]) for name, v in (("heat", heats), ("T", temperatures), ("left", left)) for i in range(12)}
+    found = np.array(evaluate(study, study.equations.rates, leaves))
+    k = 1.1e9 * np.exp(-90e3 / (8.314462618 * temperatures))
+    around = np.concatenate([temperatures[:1], temperatures, temperatures[-1:]])
+    watts = heats * 1e3 / 60 * k * left + 0.13 * (around[:-2] + around[2:] - 2 * temperatures) - 0.032 * (temperatures - 295.15)
+    watts[0] += 34.0
+    assert np.allclose(found[:12], watts * 60 / 62, rtol=1e-12)
+    assert np.allclose(found[12:], -k * left, rtol=1e-12)
+
+
+def cells_by_hand(inputs: dict[str, Any], times: Any) -> Any:
+    """The temperatures [cell, time] of one member, by SciPy's LSODA in two parts, with the heater and without."""
+    start, rates = np.append(np.full(12, inputs["ambient"] + 273.15), np.ones(12)), []
+    for watts in (34.0, 0.0):
+
+        def rate(_: float, y: Any, watts: float = watts) -> Any:
+            warm, left = y[:12], y[12:]
+            k = inputs["k0"] * np.exp(-90e3 / (8.314462618 * warm))
+            around = np.concatenate([warm[:1], warm, warm[-1:]])
+            flow = inputs["gap"] * (around[:-2] + around[2:] - 2 * warm) - inputs["loss"] * (warm - inputs["ambient"] - 273.15)
+            flow[0] += watts
+            return np.append((inputs["heat"] * 1e3 * k * left + 60 * flow) / 62, -k * left)
+
+        rates.append(rate)
+    first = solve_ivp(rates[0], (0, 12), start, "LSODA", times[times <= 12], rtol=1e-9, atol=1e-9)
+    then = solve_ivp(rates[1], (12, 90), first.y[:, -1], "LSODA", times[times > 12], rtol=1e-9, atol=1e-9)
+    return np.concatenate([first.y[:12], then.y[:12]], axis=1)
+
+
+def test_cell_module_is_that_of_another_solver_and_its_answers_are_open(tmp_path: Path) -> None:
+    result = uq.run(demo("cell-module").with_changes({"plan.members": 512, "plan.ask": ["bands", "limits"]}), tmp_path / "out", threads=1)
+    assert 0.05 < result.limits["spread"].ever_by.values[-1] < 0.5
+    assert np.all(np.diff(result.limits["reached"].ever_by.values[:, -1]) <= 0), "the heat falls off along the row"
+    shown = result.members["inputs"]
+    for member in range(0, 200, 25):
+        inputs = {name: shown[name].values[member] for name in shown}
+        apart = result.members["watched"]["T"].values[member] - cells_by_hand(inputs, result["time"].values)
+        # A front that rises by hundreds of kelvin in seconds turns an error in its moment into one in kelvin.
+        assert np.max(np.abs(apart)) < 1
+        assert np.sqrt(np.mean(apart**2)) < 0.03

@@ -23,7 +23,7 @@ _PARTS = ("inputs", "time", "status")
 
 @dataclass(frozen=True, eq=False)
 class Failures:
-    """Counts by status over all solves, steps and rejections, and the first failed members of every replicate: inputs, time, status."""
+    """Counts by status over all solves, what they took, and the first failed members of every replicate: inputs, time, status."""
 
     pieces: Pieces
     held: Mapping[Place, Detail]
@@ -32,7 +32,8 @@ class Failures:
     def of(cls, ask: Ask, sample: Sample) -> Failures:
         """Those of one block."""
         status = [np.bincount(part.reshape(-1), minlength=len(Status)) for part in sample.status]
-        work = np.array([sample.steps.sum(dtype=np.int64), sample.rejections.sum(dtype=np.int64)])
+        taken = (sample.steps, sample.rejections, sample.switches, np.minimum(sample.stiff_steps, 1))
+        work = np.array([each.sum(dtype=np.int64) for each in taken])
         counts = {"base": status[0] + status[1], "all": status[0] + status[1] + status[2], "work": work}
         held: dict[Place, Detail] = {}
         if counts["base"][Status.ended_by_event + 1 :].any():
@@ -81,10 +82,12 @@ class Failures:
                 "failure_time": Variable(("failed",), times, "when the member failed", ask.time_unit),
                 "failure_status": Variable(("failed",), status, "how the member failed"),
             }
-        steps, rejections = sums["work"]
+        steps, rejections, switches, stiff = sums["work"]
         work = {
             "steps": Variable((), np.array(steps), "accepted steps, all solves together"),
             "rejections": Variable((), np.array(rejections), "rejected steps, all solves together"),
+            "switches": Variable((), np.array(switches), "changes between explicit and stiff steps, all solves together"),
+            "stiff_share": Variable((), np.array(stiff / max(sums["all"].sum(), 1)), "share of the solves that took stiff steps"),
         }
         return Finding("failures", variables), Finding("solver", work)
 

@@ -18,9 +18,9 @@ class Sample:
     """The members of one block, taken apart by the design that put them together; every array is a view on the Batch.
 
     values: a, b [row, watched, solved], mixed [input, row, watched, solved], nan from a failure on. conditions: [.., limit, solved], see
-    `Truth`. outcomes: [.., outcome]. status, end_time, steps, rejections: [..]. x: [.., input]. `replicates`: how many the design has.
-    courses: the watched quantities at the output times, side by side [.., watched x time], C order; columns behind those are to be
-    overlooked.
+    `Truth`. outcomes: [.., outcome]. status, end_time: [..]. x: [.., input]. steps, rejections, stiff_steps, switches: [member], as solved.
+    `replicates`: how many the design has. courses: the watched quantities at the output times, side by side [.., watched x time], C order;
+    columns behind those are to be overlooked.
     """
 
     block: Block
@@ -32,6 +32,8 @@ class Sample:
     end_time: Parts
     steps: NDArray[np.int32]
     rejections: NDArray[np.int32]
+    stiff_steps: NDArray[np.int32]
+    switches: NDArray[np.int32]
     x: Parts
     courses: Parts
 
@@ -52,6 +54,8 @@ class Sample:
             end_time=apart(batch.end_time),
             steps=batch.steps,
             rejections=batch.rejections,
+            stiff_steps=batch.stiff_steps,
+            switches=batch.switches,
             x=apart(x),
             courses=apart(_side_by_side(batch.values, ask)),
         )

@@ -8,7 +8,7 @@ Each node is differentiated once, so sixteen nested terms cost sixteen small ste
 from __future__ import annotations
 
 import math
-from collections.abc import Callable
+from collections.abc import Callable, Mapping
 
 from uq.lang.graph import Graph, Node
 
@@ -19,24 +19,38 @@ def derivative(graph: Graph, node: Node, wrt: str) -> Node:
 
 
 class Derivatives:
-    """Derivatives by one name, remembered: several nodes share what they have in common."""
+    """Derivatives by one name, or along a direction in which names change at the given rates; remembered, so that several nodes share
+    what they have in common."""
 
-    def __init__(self, graph: Graph, wrt: str) -> None:
-        self._graph, self._wrt = graph, wrt
+    def __init__(self, graph: Graph, along: str | Mapping[str, Node]) -> None:
+        self._graph = graph
+        self._along = {along: graph.number(1.0)} if isinstance(along, str) else dict(along)
         self._known: dict[int, Node | None] = {}
 
     def of(self, node: Node) -> Node:
         """The derivative of a node; the number 0 where there is none."""
-        for part in self._graph.order((node,)):
-            if part.id not in self._known:
-                self._known[part.id] = self._one(part)
-        known = self._known[node.id]
+        known = self.part(node)
         return self._graph.number(0.0) if known is None else known
+
+    def part(self, node: Node) -> Node | None:
+        """The derivative of a node; None where there is none. Goes only where the names have a part: a long sum costs its path to them."""
+        waiting = [node]
+        while waiting:
+            part = waiting[-1]
+            if part.id not in self._known and self._graph.has_part(part, self._along):
+                missing = [arg for arg in part.args if arg.id not in self._known]
+                if missing:
+                    waiting.extend(missing)
+                    continue
+                self._known[part.id] = self._one(part)
+            self._known.setdefault(part.id)
+            waiting.pop()
+        return self._known[node.id]
 
     def _one(self, node: Node) -> Node | None:
         """The derivative of a node whose arguments have theirs; None stands for a 0 that is dropped wherever it is multiplied or added."""
         if node.op == "name":
-            return self._graph.number(1.0) if node.value == self._wrt else None
+            return self._along.get(str(node.value))
         inner = tuple(self._known[arg.id] for arg in node.args)
         if node.truth or all(part is None for part in inner):
             return None

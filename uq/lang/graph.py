@@ -83,6 +83,7 @@ class Graph:
         self._nodes: list[Node] = []
         self._leaves: list[int] = []  # bit i: depends on the i-th name; a set per node would grow with the square of a long sum
         self._names: list[str] = []
+        self._numbers: dict[str, int] = {}
         self._known: dict[tuple[object, ...], Node] = {}
 
     @property
@@ -131,6 +132,11 @@ class Graph:
         bits = self._leaves[node.id]
         return frozenset(name for i, name in enumerate(self._names) if bits >> i & 1)
 
+    def has_part(self, node: Node, names: Iterable[str]) -> bool:
+        """Whether the value of a node depends on any of the names."""
+        bits = self._leaves[node.id]
+        return any(bits >> self._numbers[name] & 1 for name in names if name in self._numbers)
+
     def order(self, nodes: Iterable[Node]) -> tuple[Node, ...]:
         """The given nodes and all that they are made of, each once, arguments first."""
         seen: dict[int, Node] = {}
@@ -154,6 +160,7 @@ class Graph:
             self._nodes.append(node)
             if op == "name":
                 self._leaves.append(1 << len(self._names))
+                self._numbers[str(value)] = len(self._names)
                 self._names.append(str(value))
             else:
                 self._leaves.append(functools.reduce(lambda bits, arg: bits | self._leaves[arg.id], args, 0))

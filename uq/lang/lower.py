@@ -8,10 +8,11 @@ from __future__ import annotations
 from uq.lang.graph import Graph
 from uq.lang.measure import require
 from uq.lang.part import brought, lower_part, require_number, require_truth
+from uq.lang.reduce import unrolled
 from uq.lang.scope import Scope, TableUnits, Typed
 from uq.lang.take import CourseAsked, TakeResult, lower_take
 from uq.lang.temperatures import is_temperature
-from uq.lang.tree import Tree, fold
+from uq.lang.tree import Tree
 from uq.units import Unit
 
 __all__ = ["CourseAsked", "Scope", "TableUnits", "TakeResult", "Typed", "in_unit", "lower", "lower_take", "require_truth"]
@@ -19,7 +20,7 @@ __all__ = ["CourseAsked", "Scope", "TableUnits", "TakeResult", "Typed", "in_unit
 
 def lower(tree: Tree, scope: Scope, graph: Graph) -> Typed:
     """The node of an expression with its unit; raises ExpressionError at the first mistake in the order of evaluation."""
-    return fold(tree, lambda part, args: lower_part(part, args, scope, graph))
+    return unrolled(tree, scope, graph, lambda part, args, within: lower_part(part, args, within, graph))
 
 
 def in_unit(tree: Tree, typed: Typed, unit: Unit, graph: Graph, what: str = "") -> Typed:

@@ -11,6 +11,7 @@ from __future__ import annotations
 from dataclasses import dataclass, replace
 
 from uq.errors import ExpressionError
+from uq.lang.subscripts import subscripts
 from uq.lang.tokens import Token, tokens
 from uq.lang.tree import BINARY, BINDING, Tree
 from uq.lang.words import RESERVED
@@ -86,7 +87,7 @@ class _Parser:
         while True:
             word = self.words[place]
             if wants_operand:
-                taken, wants_operand = self.operand(word, self.words[min(place + 1, len(self.words) - 1)])
+                taken, wants_operand = self.operand(word, place)
                 place += taken
             elif word.kind == "end":
                 return self.finish()
@@ -94,8 +95,14 @@ class _Parser:
                 wants_operand = self.operator(word)
                 place += 1
 
-    def operand(self, word: Token, after: Token) -> tuple[int, bool]:
+    def operand(self, word: Token, place: int) -> tuple[int, bool]:
         """Takes the word(s) at a place where a value must begin: how many, and whether a value must follow still."""
+        after = self.words[min(place + 1, len(self.words) - 1)]
+        if word.kind == "name" and after.text == "[":
+            at, taken = subscripts(self.words, place + 1)
+            stop = self.words[place + taken].stop
+            self.operands.append(Tree("entry", self.text, word.start, stop, name=word.text, at=at))
+            return 1 + taken, False
         if word.kind == "name" and after.text == "(":
             if word.text in REFUSED_CALLS:
                 raise ExpressionError(word.start, len(word.text), f"`{word.text}`", "a function of this language", REFUSED_CALLS[word.text])
@@ -119,6 +126,8 @@ class _Parser:
         remedy = ""
         if word.text == "+":
             remedy = "leave the sign away"
+        elif word.text == "[":
+            remedy = "[ ] stand behind the name of what goes over an index, as in C[cell-1]"
         elif word.text == ")" and last is not None and last.op == "(":
             empty = self.text[last.start : word.start].rstrip().endswith("(")
             remedy = "there is nothing in the brackets" if empty else "leave the comma away"
@@ -146,6 +155,8 @@ class _Parser:
         remedy = f"write {left.text} * {word.text}" if len(left.text) + len(word.text) < 40 else "write * for a product"
         if word.text == "(":
             remedy = "write * for a product"
+        elif word.text in ("[", "]"):
+            remedy = "[ ] stand behind the name of what goes over an index, as in C[cell-1]"
         elif word.text == "not":
             remedy = ""
         elif left.op == "number" and word.kind == "name":

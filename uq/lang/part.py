@@ -13,11 +13,12 @@ from typing import NamedTuple
 from uq.errors import ExpressionError, ValueMistake, suggest
 from uq.lang import measure
 from uq.lang.convert import converted
+from uq.lang.entries import bare, number_of, placed
 from uq.lang.graph import COMPARISONS, Graph, Node
 from uq.lang.measure import Ruling, Terms, mistake
 from uq.lang.scope import Scope, Typed
 from uq.lang.tree import Tree
-from uq.lang.words import COURSES, COURSES_LATER, FUNCTION_NAMES
+from uq.lang.words import COURSES, COURSES_LATER, FUNCTION_NAMES, REDUCTIONS
 from uq.units import NONE, Unit, parse_unit
 
 
@@ -65,6 +66,8 @@ def lower_part(part: Tree, args: tuple[Typed, ...], scope: Scope, graph: Graph) 
         return _quantity(part, scope, graph)
     if part.op == "name":
         return _name(part, scope, graph)
+    if part.op == "entry":
+        return placed(part, scope)
     terms = tuple(zip(part.args, args, strict=True))
     op = part.op
     if op == "call" and part.name in scope.tables:
@@ -129,13 +132,18 @@ def _name(part: Tree, scope: Scope, graph: Graph) -> Typed:
     if part.name in scope.names:
         node, unit = scope.names[part.name]
         return Typed(node, unit)
+    if part.name in scope.repeated:
+        return bare(part, scope.repeated[part.name], scope)
+    if part.name in scope.indices:
+        return number_of(part, scope, graph)
     if part.name in scope.barred:
         raise mistake(part, f"`{part.name}`", "a name that may stand here", scope.barred[part.name])
     if part.name in scope.tables:
         raise mistake(part, f"the table `{part.name}` without brackets", "a value", f"write {part.name}(x)")
-    if part.name in (*FUNCTION_NAMES, *COURSES, *COURSES_LATER):
-        raise mistake(part, f"the function `{part.name}` without brackets", "a value", f"write {part.name}(x)")
-    remedy = suggest(part.name, scope.names) or suggest(part.name, scope.barred)
+    if part.name in (*FUNCTION_NAMES, *REDUCTIONS, *COURSES, *COURSES_LATER):
+        along = ", cell" if part.name == "sum" else ""
+        raise mistake(part, f"the function `{part.name}` without brackets", "a value", f"write {part.name}(x{along})")
+    remedy = suggest(part.name, (*scope.names, *scope.repeated)) or suggest(part.name, scope.barred)
     if part.name.lower() in ("true", "false", "inf", "nan", "e", "infinity"):
         remedy = remedy or {"true": "write 1 > 0", "false": "write 0 > 1", "e": "write exp(1)"}.get(part.name.lower(), "numbers are finite")
     raise mistake(part, f"the unknown name `{part.name}`", "a name of this study", remedy)
@@ -151,6 +159,8 @@ def _table(part: Tree, terms: Terms, scope: Scope, graph: Graph) -> Typed:
 
 
 def _function(part: Tree, scope: Scope) -> Function:
+    if part.name == "sum":
+        raise _no_sum(part, scope)
     if part.name in COURSES:
         remedy = "functions of a whole course stand in the `take` of an outcome only"
         raise _head(part, f"`{part.name}( )`", "a function of values at one time", remedy)
@@ -164,6 +174,19 @@ def _function(part: Tree, scope: Scope) -> Function:
         raise _head(part, f"the unknown function `{part.name}`", "a function", remedy)
     check_count(part, function.least, function.most)
     return function
+
+
+def _no_sum(part: Tree, scope: Scope) -> ExpressionError:
+    """What is wrong with a sum that is over no index."""
+    known = ", ".join(scope.indices)
+    remedy = (
+        f"there {'are' if len(scope.indices) > 1 else 'is'} {known}" if known else "this study has no [index]; write a + b for a sum of two"
+    )
+    if len(part.args) != 2:
+        return _head(
+            part, f"{len(part.args)} argument{'s' * (len(part.args) != 1)} in sum( )", "2: what is summed, and over which index", remedy
+        )
+    return mistake(part.args[1], f"`{part.args[1].text}` as what a sum goes over", "an index", remedy)
 
 
 def check_count(part: Tree, least: int, most: int) -> None:

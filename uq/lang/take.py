@@ -14,8 +14,9 @@ from uq.errors import ExpressionError
 from uq.lang.graph import Graph, Node
 from uq.lang.measure import mistake, multiplied, require
 from uq.lang.part import brought, check_count, lower_part, require_number
+from uq.lang.reduce import reduced_over, unrolled
 from uq.lang.scope import Scope, Typed
-from uq.lang.tree import Tree, fold
+from uq.lang.tree import Tree
 from uq.lang.words import COURSES, COURSES_LATER
 from uq.units import Unit
 
@@ -48,19 +49,19 @@ def lower_take(tree: Tree, scope: Scope, graph: Graph, first: int = 0) -> TakeRe
 
     Outside of the courses only what does not change over time may stand.
     """
-    taking = _Taking(scope, graph, first, _inside(tree))
-    typed = fold(tree, taking.step)
+    taking = _Taking(scope, graph, first, _inside(tree, scope))
+    typed = unrolled(tree, scope, graph, taking.step)
     require_number(tree, typed)
     return TakeResult(typed.node, typed.unit, tuple(taking.courses))
 
 
-def _inside(tree: Tree) -> frozenset[int]:
+def _inside(tree: Tree, scope: Scope) -> frozenset[int]:
     """Which parts (by identity) stand inside a course; raises ExpressionError for a course within a course."""
     inside: set[int] = set()
     waiting = [(tree, False)]
     while waiting:
         part, within = waiting.pop()
-        course = part.op == "call" and part.name in (*COURSES, *COURSES_LATER)
+        course = part.op == "call" and part.name in (*COURSES, *COURSES_LATER) and reduced_over(part, scope) is None
         if course and within:
             raise mistake(part, f"`{part.name}( )` within another course", "a value at one time", "name it in an outcome of its own")
         if within:
@@ -76,13 +77,13 @@ class _Taking:
         self.scope, self.graph, self.first, self.inside = scope, graph, first, inside
         self.courses: list[CourseAsked] = []
 
-    def step(self, part: Tree, args: tuple[Typed, ...]) -> Typed:
+    def step(self, part: Tree, args: tuple[Typed, ...], scope: Scope) -> Typed:
         if part.op == "call" and part.name in COURSES:
             return self.course(part, args)
-        typed = lower_part(part, args, self.scope, self.graph)
-        if part.op == "name" and id(part) not in self.inside and not self.graph.leaves(typed.node) <= self.scope.fixed:
+        typed = lower_part(part, args, scope, self.graph)
+        if part.op in ("name", "entry") and id(part) not in self.inside and not self.graph.leaves(typed.node) <= self.scope.fixed:
             wanted = "a number, a parameter or a function of its course"
-            raise mistake(part, f"`{part.name}`, which changes over time", wanted, f"as in final({part.name}) or highest({part.name})")
+            raise mistake(part, f"`{part.text}`, which changes over time", wanted, f"as in final({part.text}) or highest({part.text})")
         return typed
 
     def course(self, part: Tree, args: tuple[Typed, ...]) -> Typed:

@@ -21,7 +21,7 @@ _BLANK = " \t\r\n"
 _NUMBER = re.compile(r"[0-9]+(?:_[0-9]+)*(?:\.[0-9]+(?:_[0-9]+)*)?(?:[eE][+-]?[0-9]+)?")
 _LIKE_A_NUMBER = re.compile(r"[0-9_]*\.?[0-9_]*")
 _NAME = re.compile(r"[A-Za-z][A-Za-z0-9_]*")
-_OPERATOR = re.compile(r"\*\*|<=|>=|[-+*/<>(),]")
+_OPERATOR = re.compile(r"\*\*|<=|>=|[-+*/<>(),\[\]]")
 _QUANTITY = re.compile(r"\s*([+-]?)\s*(\S+)\s+(\S.*?)\s*", re.DOTALL)
 _OPERATORS = "an operator of this language"
 _WORDS = ("and", "or", "not")
@@ -44,8 +44,6 @@ _REFUSED = (
     ("~", "write not"),
     ("^", "write **"),
     ("%", "write mod(a, b) for a remainder, x / 100 for per cent"),
-    ("[", "arrays and indexing are not available yet"),
-    ("]", "arrays and indexing are not available yet"),
     ("{", "write round brackets"),
     ("}", "write round brackets"),
     (";", "arguments are separated by a comma"),

@@ -33,12 +33,26 @@ BINDING: dict[str, int] = {
 _TIGHTEST = 9
 
 
+@dataclass(frozen=True, slots=True)
+class Subscript:
+    """One place in the brackets behind a name: an index or a label (`name`) with what is added to it, or a plain place (no name)."""
+
+    name: str
+    shift: int
+    start: int
+    stop: int
+
+    def written(self) -> str:
+        """The place as it is written."""
+        return f"{self.name}{self.shift:+d}" if self.name and self.shift else self.name or str(self.shift)
+
+
 @dataclass(frozen=True, slots=True, eq=False, repr=False)
 class Tree:
     """One part of an expression: `source[start:stop]` is its text.
 
-    `op`: "number" (`value`), "quantity" (`value` and its unit's text in `name`), "name" (`name`), "call" (function `name`, `args`),
-    "neg", "not" or an operator of `BINARY`.
+    `op`: "number" (`value`), "quantity" (`value` and its unit's text in `name`), "name" (`name`), "entry" (`name[at, ...]`), "call"
+    (function `name`, `args`), "neg", "not" or an operator of `BINARY`.
     """
 
     op: str
@@ -48,6 +62,7 @@ class Tree:
     args: tuple[Tree, ...] = ()
     name: str = ""
     value: float = 0.0
+    at: tuple[Subscript, ...] = ()
 
     @property
     def text(self) -> str:
@@ -59,23 +74,27 @@ class Tree:
         return f"Tree({self.op!r}, {self.text!r})"
 
 
-def parts(tree: Tree) -> Iterator[Tree]:
-    """Every part of a tree, arguments before what is made of them, from left to right."""
+def _never(part: Tree) -> bool:
+    return False
+
+
+def parts(tree: Tree, closed: Callable[[Tree], bool] = _never) -> Iterator[Tree]:
+    """Every part of a tree, arguments before what is made of them, from left to right; nothing from within a part that is closed."""
     waiting: list[tuple[Tree, bool]] = [(tree, False)]
     while waiting:
         part, opened = waiting.pop()
-        if opened or not part.args:
+        if opened or not part.args or closed(part):
             yield part
         else:
             waiting.append((part, True))
             waiting.extend((arg, False) for arg in reversed(part.args))
 
 
-def fold(tree: Tree, step: Callable[[Tree, tuple[T, ...]], T]) -> T:
-    """The value of a tree, where `step` makes a part's value from the values of its arguments."""
+def fold(tree: Tree, step: Callable[[Tree, tuple[T, ...]], T], closed: Callable[[Tree], bool] = _never) -> T:
+    """The value of a tree, where `step` makes a part's value from the values of its arguments; a closed part gets none of these."""
     values: list[T] = []
-    for part in parts(tree):
-        first = len(values) - len(part.args)
+    for part in parts(tree, closed):
+        first = len(values) - (0 if closed(part) else len(part.args))
         arguments = tuple(values[first:])
         del values[first:]
         values.append(step(part, arguments))
@@ -83,8 +102,8 @@ def fold(tree: Tree, step: Callable[[Tree, tuple[T, ...]], T]) -> T:
 
 
 def names(tree: Tree) -> tuple[tuple[str, int], ...]:
-    """Every name that stands for a value, with its offset, in the order of the text; functions and `pi` are left out."""
-    return tuple((part.name, part.start) for part in parts(tree) if part.op == "name" and part.name != "pi")
+    """Every name that stands for a value, with its offset, in the order of the text; not functions, `pi` and what is in brackets."""
+    return tuple((part.name, part.start) for part in parts(tree) if part.op in ("name", "entry") and part.name != "pi")
 
 
 def to_text(tree: Tree) -> str:
@@ -95,8 +114,8 @@ def to_text(tree: Tree) -> str:
 def same_tree(one: Tree, other: Tree) -> bool:
     """Whether two trees say the same, wherever and however they are written."""
 
-    def told(tree: Tree) -> list[tuple[str, str, str, int]]:
-        return [(part.op, part.name, part.value.hex(), len(part.args)) for part in parts(tree)]
+    def told(tree: Tree) -> list[tuple[object, ...]]:
+        return [(part.op, part.name, part.value.hex(), len(part.args), *(each.written() for each in part.at)) for part in parts(tree)]
 
     return told(one) == told(other)
 
@@ -105,6 +124,8 @@ def _written(part: Tree, args: tuple[tuple[str, int], ...]) -> tuple[str, int]:
     """A part's text and how tightly it binds."""
     if part.op == "name":
         return part.name, _TIGHTEST
+    if part.op == "entry":
+        return f"{part.name}[{', '.join(each.written() for each in part.at)}]", _TIGHTEST
     if part.op in ("number", "quantity"):
         number = repr(part.value).removesuffix(".0")
         return (number if part.op == "number" else f"'{number} {part.name}'"), _TIGHTEST

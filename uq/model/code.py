@@ -16,6 +16,7 @@ from uq.lang.graph import Graph, Node
 from uq.model.layout import Layout
 
 CourseKind = Literal["highest", "lowest", "average", "integral", "final", "value_at"]
+Solver = Literal["auto", "explicit", "stiff"]
 Interpolation = Literal["linear", "step", "smooth"]
 Outside = Literal["refuse", "hold", "repeat"]
 TableInterpolation = Literal["linear", "smooth"]
@@ -125,8 +126,8 @@ class Equations:
 class Code:
     """A model as LLVM text with the sizes and slots that a caller needs; the same model gives the same text.
 
-    `outcomes`: their number. `method`: the pair whose step is written out in the text. `moments`: of which times the caller must make
-    breaks, as of the rows of forcings. `undershoot`: see `uq.model.pair.Pair`.
+    `outcomes`: their number. `method`: the methods whose steps are in the text, `solver` which of them members take. `moments`: of which
+    times the caller must make breaks, as of the rows of forcings. `undershoot`: see `uq.model.pair.Pair`.
     """
 
     text: str
@@ -137,6 +138,7 @@ class Code:
     courses: tuple[Course, ...]
     layout: Layout
     method: str
+    solver: Solver = "explicit"
     moments: Moments = Moments()
     undershoot: float = 0.0
     fingerprint: str = field(init=False)

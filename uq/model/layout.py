@@ -38,8 +38,35 @@ class Head(IntEnum):
     truth_place = 17  # where the first condition at that time goes, a byte
 
 
+class Choice(IntEnum):
+    """Slots of models whose members may be solved stiffly; they move with a member."""
+
+    stiff_steps = 0  # accepted steps of the stiff method
+    suspicion = 1  # explicit steps that stability seems to have cut short, one after another
+    calm = 2  # explicit steps since then that were not; of the stiff method, steps one after another that explicit ones could do as well
+    needed = 3  # how much suspicion makes the member stiff
+    stayed = 4  # accepted steps since the member became stiff
+
+
+class StiffColumn(IntEnum):
+    """Columns [state] that a step of the stiff method works in; the stages follow."""
+
+    new = 0  # the states of a stage, in the end the new ones
+    stage_rate = 1  # their rates
+    coupled = 2  # what earlier stages and time add to them
+    drift = 3  # change of the rates with time alone
+    tolerance = 4  # of the states at the start of the step
+    size = 5  # |J| times the tolerances
+    turned = 6  # J times a direction
+    residual = 7
+    correction = 8
+    work = 9
+    zero = 10  # nothing is ever put there
+    first_stage = 11
+
+
 class Setting(IntEnum):
-    """Slots of the settings, before the three blocks absolute tolerance, lowest, highest [state]."""
+    """Slots of the settings, before the blocks absolute tolerance, lowest, highest, weight, hint [state]."""
 
     accuracy = 0
     attempts = 1  # most steps and rejections of one member
@@ -67,6 +94,10 @@ class Layout:
     inner: int = 0  # 2 where rates turn at moments of time: first and last time within the segment that they are asked for
     curve_parts: int = 5  # coefficients of the continuous extension for every state
     spare_columns: int = 7  # new states and stages for every state
+    choice: int = 0  # len(Choice) where members may be solved stiffly
+    jacobian: int = 0  # distinct entries of the Jacobian
+    factors: int = 0  # entries of its factors
+    stages: int = 0  # of the stiff method
 
     @property
     def first_input(self) -> int:
@@ -115,13 +146,28 @@ class Layout:
 
     @property
     def first_largest(self) -> int:
-        """Largest size of the states over start and accepted steps; the last block that moves with a member."""
+        """Largest size of the states over start and accepted steps."""
         return self.first_rate + self.states
 
     @property
-    def moved(self) -> int:
-        """Number of leading slots that make up a member at its start."""
+    def first_choice(self) -> int:
+        """What decides between explicit and stiff steps (see `Choice`)."""
         return self.first_largest + self.states
+
+    @property
+    def first_direction(self) -> int:
+        """The direction of the states that the Jacobian stretches most; the last block that moves with a member."""
+        return self.first_choice + self.choice
+
+    @property
+    def moved(self) -> int:
+        """Number of leading slots that make up a member."""
+        return self.first_direction + (self.states if self.choice else 0)
+
+    @property
+    def stiff_steps(self) -> int:
+        """The slot of the count of stiff steps; -1 where there is none."""
+        return self.first_choice + Choice.stiff_steps if self.choice else -1
 
     @property
     def first_curve(self) -> int:
@@ -139,9 +185,28 @@ class Layout:
         return self.first_spare + self.spare_columns * self.states
 
     @property
+    def first_jacobian(self) -> int:
+        """Distinct entries of the Jacobian at the start of a stiff step."""
+        return self.first_observed + self.observed
+
+    @property
+    def first_factor(self) -> int:
+        """Entries of the factors of I / (gamma h) - J."""
+        return self.first_jacobian + self.jacobian
+
+    @property
+    def first_stiff(self) -> int:
+        """Columns of a stiff step (see `StiffColumn`)."""
+        return self.first_factor + self.factors
+
+    def stiff(self, column: int) -> int:
+        """Where such a column begins; the stages are counted from StiffColumn.first_stage on."""
+        return self.first_stiff + column * self.states
+
+    @property
     def slots(self) -> int:
         """Number of slots of a lane group."""
-        return self.first_observed + self.observed
+        return self.stiff(StiffColumn.first_stage + self.stages) if self.stages else self.first_stiff
 
     @property
     def first_tolerance(self) -> int:
@@ -159,6 +224,16 @@ class Layout:
         return self.first_lowest + self.states
 
     @property
+    def first_weight(self) -> int:
+        """Settings: one over the absolute tolerances."""
+        return self.first_highest + self.states
+
+    @property
+    def first_hint(self) -> int:
+        """Settings: a direction of the states in which no part is favoured by any symmetry of a model, about a tolerance in each."""
+        return self.first_weight + self.states
+
+    @property
     def setting_slots(self) -> int:
         """Number of slots of the settings."""
-        return self.first_highest + self.states
+        return self.first_hint + self.states

@@ -13,9 +13,11 @@ from uq.lang.graph import Node
 from uq.model.code import Equations, Moments
 from uq.model.columns import Column, Form, Looped, Readable, WrittenOut, form_for
 from uq.model.expressions import Expressions, is_truth, needed
+from uq.model.jacobian import SLOPE
 from uq.model.layout import Head, Layout, Setting
 from uq.model.moments import driven_by_time, moments_of
 from uq.model.pair import Pair
+from uq.model.stiff import Stiff
 from uq.model.writer import ZERO, M, V, Writer, constant
 
 LANES_POINTER, SETTINGS_POINTER = "%lanes", "%settings"
@@ -26,7 +28,8 @@ SHORTEST_IN_ULPS = 16 * 2.0**-52
 @dataclass(frozen=True)
 class Plan:
     """What is to be written: equations, pair, slots, the hoisted nodes in the order of their slots, how to go over the states, at which
-    moments rates turn, and whether steps are bounded by a part of the whole time.
+    moments rates turn, whether steps are bounded by a part of the whole time, how many hoisted nodes the rates and what is observed need
+    (the others are those of the Jacobian), what stiff steps work with (None: all steps are explicit), and whether there are no others.
     """
 
     equations: Equations
@@ -36,11 +39,18 @@ class Plan:
     form: Form
     moments: Moments
     bounded: bool
+    plain_hoisted: int
+    stiff: Stiff | None = None
+    only_stiff: bool = False
 
     @classmethod
-    def of(cls, equations: Equations, pair: Pair) -> Plan:
+    def of(cls, equations: Equations, pair: Pair, stiff: Stiff | None = None, only_stiff: bool = False) -> Plan:
         """Find what depends on inputs alone, number all slots, choose the form."""
-        hoisted, moments = hoistable(equations), moments_of(equations)
+        plain, moments = hoistable(equations, (*equations.rates, *equations.observed, *equations.conditions)), moments_of(equations)
+        held = {node.id for node in plain}
+        more = hoistable(equations, stiff.jacobian.nodes) if stiff else ()
+        hoisted = (*plain, *(node for node in more if node.id not in held))
+        extra, parts = (1 if pair.extra else 0), 4 + len(pair.d)
         layout = Layout(
             len(equations.inputs),
             len(hoisted),
@@ -50,21 +60,30 @@ class Plan:
             len(equations.conditions),
             smooth=sum(forcing.interpolation == "smooth" for forcing in equations.forcings),
             inner=2 if moments.turns else 0,
-            curve_parts=4 + len(pair.d),
-            spare_columns=pair.all_stages + (1 if pair.extra else 0),
+            curve_parts=parts if not stiff else max(parts, stiff.curve_parts),
+            spare_columns=pair.all_stages + extra,
+            **(stiff.sizes if stiff else {}),
         )
-        operations = [node for node in needed(equations.rates, {node.id: node for node in hoisted}) if node.args]
-        form = form_for(layout.states, len(operations), pair)
-        return cls(equations, pair, layout, hoisted, form, moments, driven_by_time(equations))
+        form = form_for(layout.states, operations_of(equations, plain), pair)
+        return cls(equations, pair, layout, hoisted, form, moments, driven_by_time(equations), len(plain), stiff, only_stiff)
+
+    @property
+    def switching(self) -> bool:
+        """Whether members go from explicit to stiff steps and back."""
+        return self.stiff is not None and not self.only_stiff
 
     def over(self, w: Writer) -> WrittenOut | Looped:
         """The way over the states in a function."""
         return self.form(w, self.layout.states, lambda time, state: rates_at(self, w, time, state))
 
 
-def hoistable(equations: Equations) -> tuple[Node, ...]:
-    """The largest subexpressions of inputs or numbers alone in rates, observed values, conditions; truths and bare leaves are left out."""
-    roots = (*equations.rates, *equations.observed, *equations.conditions)
+def operations_of(equations: Equations, hoisted: tuple[Node, ...]) -> int:
+    """Operations in all rates."""
+    return len([node for node in needed(equations.rates, {node.id: node for node in hoisted}) if node.args])
+
+
+def hoistable(equations: Equations, roots: tuple[Node, ...]) -> tuple[Node, ...]:
+    """The largest subexpressions of inputs or numbers alone in the roots; truths and bare leaves are left out."""
     inputs = frozenset(equations.inputs)
 
     def once(node: Node) -> bool:
@@ -105,22 +124,48 @@ class Point:
             return w.load(LANES_POINTER, layout.first_input + self._places[name])
         if name == "time":
             return self._time()
-        return self._forcing([forcing.name for forcing in self._plan.equations.forcings].index(name))
+        forcings = [forcing.name for forcing in self._plan.equations.forcings]
+        if name.startswith(SLOPE):
+            return self._slope(forcings.index(name.removeprefix(SLOPE)))
+        return self._forcing(forcings.index(name))
 
     def _forcing(self, k: int) -> str:
         """The value of a forcing, from its coefficients within the segment."""
+        w = self._w
+        since, slope, curved = self._course(k)
+        if curved is not None:
+            second, third = curved
+            slope = w.fma(w.fma(third, since, second), since, slope)
+        return w.fma(slope, since, w.load(LANES_POINTER, self._plan.layout.first_base + k))
+
+    def _slope(self, k: int) -> str:
+        """How fast a forcing changes."""
+        w = self._w
+        since, slope, curved = self._course(k)
+        if curved is None:
+            return slope
+        second, third = curved
+        return w.fma(w.fma(w.times(constant(3.0), third), since, w.plus(second, second)), since, slope)
+
+    def _course(self, k: int) -> tuple[str, str, tuple[str, str] | None]:
+        """Time since the start of the segment, slope there, and of a smooth forcing the second and third coefficients."""
         layout, w, forcings = self._plan.layout, self._w, self._plan.equations.forcings
         since = w.minus(self._time(), head(w, Head.segment_from))
         slope = w.load(LANES_POINTER, layout.first_slope + k)
-        if forcings[k].interpolation == "smooth":
-            place = sum(forcing.interpolation == "smooth" for forcing in forcings[:k])
-            second, third = (w.load(LANES_POINTER, first + place) for first in (layout.first_second, layout.first_third))
-            slope = w.fma(w.fma(third, since, second), since, slope)
-        return w.fma(slope, since, w.load(LANES_POINTER, layout.first_base + k))
+        if forcings[k].interpolation != "smooth":
+            return since, slope, None
+        place = sum(forcing.interpolation == "smooth" for forcing in forcings[:k])
+        second, third = (w.load(LANES_POINTER, first + place) for first in (layout.first_second, layout.first_third))
+        return since, slope, (second, third)
 
 
 def rates_at(plan: Plan, w: Writer, time: Callable[[], str], state: Callable[[int], str]) -> list[str]:
-    """The rates of all states at a time; where they turn at moments of time, at a time strictly inside the segment.
+    """The rates of all states at a time (see `within_segment`)."""
+    return within_segment(plan, w, time, state).values(plan.equations.rates)
+
+
+def within_segment(plan: Plan, w: Writer, time: Callable[[], str], state: Callable[[int], str]) -> Point:
+    """Values at a time; where rates turn at moments of time, at a time strictly inside the segment.
 
     Then a rate that jumps at an end of the segment has the values of this segment, at its ends too.
     """
@@ -130,7 +175,7 @@ def rates_at(plan: Plan, w: Writer, time: Callable[[], str], state: Callable[[in
         first = plan.layout.first_inner
         return w.smaller(w.larger(time(), w.load(LANES_POINTER, first)), w.load(LANES_POINTER, first + 1))
 
-    return Point(plan, w, inside if plan.layout.inner else time, state).values(plan.equations.rates)
+    return Point(plan, w, inside if plan.layout.inner else time, state)
 
 
 def head(w: Writer, slot: Head) -> str:

@@ -16,6 +16,7 @@ from uq.model.layout import FAILURES, Head, Setting
 from uq.model.points import LANES_POINTER as L
 from uq.model.points import SETTINGS_POINTER as S
 from uq.model.points import Plan, finite_part, function, head, outside_range, shortest_step
+from uq.model.switch import begin
 from uq.model.writer import ONE, ZERO, V, Writer, constant
 
 # Where sizes are too small to say anything, the first step is this part of the first segment. (The published algorithm says 1e-6 in the
@@ -30,7 +31,8 @@ def write_start(plan: Plan) -> tuple[str, set[str]]:
     w.say("what depends on the inputs alone, once per member")
     places = {name: layout.first_input + k for k, name in enumerate(equations.inputs)}
     bare = Expressions(w, lambda name: w.load(L, places[name]), {})
-    values = bare.values((*equations.starts, *plan.hoisted))
+    values = bare.values((*equations.starts, *plan.hoisted[: plan.plain_hoisted]))
+    values += bare.values(plan.hoisted[plan.plain_hoisted :])  # after the others, whose bits they must not change
     for k, value in enumerate(values[layout.states :]):
         w.store(L, layout.first_hoisted + k, value)
         w.remember(L, layout.first_hoisted + k, value)
@@ -96,6 +98,8 @@ def finish_start(plan: Plan, w: Writer, x: Column, rates: Column) -> None:
     """Clear the counters and return the lanes that cannot start, with their status."""
     for slot in (Head.rejected, Head.steps, Head.rejections, Head.stale, Head.spoiled):
         w.store(L, slot, ZERO)
+    if plan.stiff is not None:
+        begin(plan, w)
     w.store(L, Head.alive, ONE)
     w.store(L, Head.step_from, head(w, Head.time))
     w.store(L, Head.step_taken, ONE)

@@ -243,6 +243,33 @@ class Writer:
         self.plain(f"{name}.end:")
         return value
 
+    def span(self, first: str, stop: str, start: str, body: Callable[[str, str], str]) -> str:
+        """Repeat `body` with the index from `first` to `stop` - 1 (maybe never) and numbers carried along; spans may lie within spans."""
+        self._count += 1
+        name, before, outside = f"span{self._count}", self.block, dict(self._loaded)
+        some = self.add(f"icmp slt i64 {first}, {stop}")
+        self.plain(f"br i1 {some}, label %{name}, label %{name}.end")
+        self.plain(f"{name}:")
+        place = len(self.lines)
+        value = body(f"%{name}.i", f"%{name}.carried")
+        end = self.block
+        phis = [
+            f"  %{name}.i = phi i64 [ {first}, %{before} ], [ %{name}.next, %{end} ]",
+            f"  %{name}.carried = phi {V} [ {start}, %{before} ], [ {value}, %{end} ]",
+        ]
+        self.lines[place:place] = phis
+        self.plain(f"%{name}.next = add nsw i64 %{name}.i, 1")
+        more = self.add(f"icmp slt i64 %{name}.next, {stop}")
+        self.plain(f"br i1 {more}, label %{name}, label %{name}.end")
+        self.plain(f"{name}.end:")
+        self._loaded = outside
+        return self.add(f"phi {V} [ {start}, %{before} ], [ {value}, %{end} ]")
+
+    def whole(self, table: str, index: str) -> str:
+        """The entry of a constant table of 64-bit integers."""
+        place = self.add(f"getelementptr inbounds i64, ptr @{table}, i64 {index}")
+        return self.add(f"load i64, ptr {place}, align 8")
+
     def branch(self, condition: str, then: str, after: str) -> None:
         """Go to label `then` if the i1 holds, else to `after`; the block `then` begins."""
         self._outside = dict(self._loaded)

@@ -240,6 +240,16 @@ class SettledAnswer:
 
 
 @dataclass(frozen=True)
+class Work:
+    """What all solves took: accepted and rejected steps, changes between explicit and stiff steps, the share of solves with stiff ones."""
+
+    steps: int
+    rejections: int
+    switches: int
+    stiff_share: float
+
+
+@dataclass(frozen=True)
 class Headline:
     """Everything that the summary and the machine form are made of.
 
@@ -257,6 +267,7 @@ class Headline:
     failed: tuple[tuple[str, int], ...]
     warnings: tuple[str, ...]
     fell_back: tuple[str, ...]
+    work: Work | None = None
     pairs: tuple[Pair, ...] = ()
     dependence: tuple[str, ...] = ()
     scenarios: tuple[ScenarioAnswer, ...] = ()

@@ -9,6 +9,7 @@ from typing import TYPE_CHECKING
 
 import numpy as np
 
+from uq.report.model import model_lines, once
 from uq.report.plain import laid, paragraphs, plain, table, wrapped
 from uq.report.rounding import alone, place_of, power_of, written
 from uq.report.spoken import duration, moment, threads, unit_after
@@ -19,8 +20,6 @@ from uq.study.plan import PRECISION_OF
 if TYPE_CHECKING:
     from uq.inputs.inputs import Input, Inputs
     from uq.running.foretell import Foretold
-    from uq.study.declarations import State
-    from uq.study.given import ForcingCourse, GivenTable
     from uq.study.plan import Plan
     from uq.study.study import Study
 
@@ -56,8 +55,8 @@ def check_text(study: Study, facts: CheckFacts) -> str:
     sections = [
         [*laid(opening(study.title, study.caution)), *(line for text in paragraphs(study.about) for line in wrapped(text))],
         _asked(study),
-        _model(study),
-        _inputs(study.inputs.items),
+        ["The model as read", *_indented(model_lines(study))],
+        _inputs(once(study, study.inputs.items)),
         _notes(study),
         _cost(study, facts),
         _pilot(study, facts),
@@ -69,9 +68,11 @@ def _asked(study: Study) -> list[str]:
     time = study.time
     count = len(study.times.grid)
     lines = [f"From {moment(time.start, time.unit)} to {moment(time.stop, time.unit)}, {count} output times."]
-    lines.append(f"Questions: {', '.join(study.plan.ask)}; watched: {_named(each.label or each.name for each in study.watched)}.")
-    lines += [f"Outcome: {plain(each.label or each.name)}{unit_after(each.unit, ', ')}." for each in study.outcome_quantities]
-    for limit in study.limits_asked:
+    lines.append(
+        f"Questions: {', '.join(study.plan.ask)}; watched: {_named(each.label or each.name for each in once(study, study.watched))}."
+    )
+    lines += [f"Outcome: {plain(each.label or each.name)}{unit_after(each.unit, ', ')}." for each in once(study, study.outcome_quantities)]
+    for limit in once(study, study.limits_asked):
         by = ", ".join(alone(each) for each in limit.by)
         accepted = "" if limit.accept is None else f"; accepted: {alone(limit.accept)} by the last of them"
         name = plain(limit.label or limit.name)
@@ -106,47 +107,6 @@ def _scenarios(study: Study) -> Iterable[str]:
         own = {key: value for key, value in each.study.changes.items() if study.changes.get(key) != value}
         change = ", ".join(f"{key} = {value!r}" for key, value in own.items())
         yield f"Scenario: {plain(each.label or each.name)}, which changes {plain(change)}; the same draws otherwise."
-
-
-def _model(study: Study) -> list[str]:
-    """The model as read, in brief."""
-    lines = [_state(study, each) for each in study.states]
-    lines += [f"{each.name} = {plain(each.value)}" for each in study.terms]
-    for each in study.parameters:
-        if each.value is not None:
-            lines.append(f"{each.name} = {alone(each.value, 10)}{unit_after(each.unit)}")
-    lines += [_forcing(each) for each in study.forcings]
-    lines += [_table(each) for each in study.tables]
-    return ["The model as read", *_indented(lines)]
-
-
-OUTSIDE = {"refuse": "nothing outside them", "hold": "held outside them", "repeat": "repeated outside them"}
-
-
-def _forcing(each: ForcingCourse) -> str:
-    """A given course; where it comes from a file, which columns."""
-    rows = f"{len(each.rows)} rows"
-    if each.file and each.time and each.value:
-        columns = (f"{plain(column.column)}{unit_after(column.unit, ' in ')}" for column in (each.time, each.value))
-        rows += f" from {plain(each.file)} ({' and '.join(columns)})"
-    return f"{each.name}: given course{unit_after(each.unit, ' in ')}, {rows}, {each.interpolation}, {OUTSIDE[each.outside]}"
-
-
-def _table(each: GivenTable) -> str:
-    units = f"{unit_after(each.unit, ' in ')}, of an argument{unit_after(each.of.unit, ' in ')}" if each.unit or each.of.unit else ""
-    return f"{each.name}(): given by {len(each.rows)} points{units}, {each.interpolation}, {OUTSIDE[each.outside]}"
-
-
-def _state(study: Study, state: State) -> str:
-    """A state: its rate with unit, and where it starts."""
-    unit = "" if study.unitless else f" in {plain(state.unit)}{unit_after(study.time.unit, '/')}"
-    if isinstance(state.start, str):
-        start = f"starts at {plain(state.start)}"
-    elif isinstance(state.start, (int, float)):
-        start = f"starts at {alone(state.start, 10)}{unit_after(state.unit)}"
-    else:
-        start = "has an uncertain start"
-    return f"d{state.name}/dt = {plain(state.rate)}{unit}; {state.name} {start}"
 
 
 def _inputs(items: Sequence[Input]) -> list[str]:

@@ -8,8 +8,9 @@ from collections.abc import Iterable
 import numpy as np
 
 from uq.analysis.finding import Finding
-from uq.report.answers import Headline, InputRow, Pair, ScenarioAnswer
+from uq.report.answers import Headline, InputRow, Pair, ScenarioAnswer, Work
 from uq.report.drawn import Axes, Findings, answers, binned, data, measured, ranking, room, widest
+from uq.report.entries import by_entry
 from uq.report.precise import precision, settled
 from uq.report.spoken import clock_of
 from uq.report.withheld import kept_back, ranking_kept_back, refused_from
@@ -23,7 +24,7 @@ NO_CORRELATION = 1e-12
 
 def headline(result: Result) -> Headline:
     """The headline numbers of results-format: probabilities at `by`, quantiles at the last time and of outcomes, indices overall."""
-    found, axes = result.findings, axes_of(result)
+    found, axes = by_entry(result.findings), axes_of(result)
     inputs = _inputs(found)
     since = refused_from(found, axes.times, result.attributes)
     mine = kept_back(answers(found, axes), since)
@@ -39,6 +40,7 @@ def headline(result: Result) -> Headline:
         failed=_failed(found.get("failures")),
         warnings=tuple(str(text) for text in data(found.get("study"), "warnings")),
         fell_back=_fell_back(found.get("solver")),
+        work=_work(found.get("solver")),
         pairs=tuple(_pairs(found, inputs)),
         dependence=tuple(str(text) for text in data(found.get("inputs"), "dependence")),
         scenarios=tuple(_scenario(name, found, axes) for name, _ in room(found, "scenarios") if "/" not in name),
@@ -96,6 +98,15 @@ def _failed(finding: Finding | None) -> tuple[tuple[str, int], ...]:
     """The statuses that stand for a failure, with the number of solves that ended so."""
     pairs = zip(data(finding, "status"), data(finding, "count"), strict=True)
     return tuple((Status(int(status)).name, int(count)) for status, count in pairs if count and status not in COMPLETE)
+
+
+def _work(finding: Finding | None) -> Work | None:
+    """The work of all solves; results of earlier versions know nothing of stiff steps."""
+    told = [data(finding, name) for name in ("steps", "rejections", "switches", "stiff_share")]
+    if not all(each.size for each in told):
+        return None
+    steps, rejections, switches = (int(each) for each in told[:3])
+    return Work(steps, rejections, switches, float(told[3]))
 
 
 def _fell_back(finding: Finding | None) -> tuple[str, ...]:

@@ -7,6 +7,7 @@ import shlex
 from uq.report.answered import expected_section, limits_section
 from uq.report.answers import Headline
 from uq.report.drivers import drivers_section
+from uq.report.entries import ENDS, of_ends
 from uq.report.failed import NOTHING_LEFT, all_failed, failure_warnings
 from uq.report.headline import headline
 from uq.report.plain import NARROWEST_PAGE, WIDTH, Part, Text, laid, paragraphs, plain
@@ -25,13 +26,14 @@ SECTIONS = (limits_section, expected_section, drivers_section, scenarios_section
 def summary(result: Result, width: int = WIDTH) -> str:
     """The result in plain words, so many columns wide (at least 60): caution, limits, what to expect, what drives it, how far to trust it,
     in words, where it lies."""
-    head = headline(result)
+    head, cut = of_ends(headline(result))
     first = [*opening(str(head.facts["title"]), str(head.facts["caution"])), *stopped_early(head), *failure_warnings(head)]
     sections: list[list[Part]]
     if all_failed(head):
         sections = [first, [NOTHING_LEFT], [Text(plain(text), "", "  ") for text in failed_members(head)]]
     else:
         sections = [first, *(parts for section in SECTIONS if (parts := section(head)))]
+    sections += [[Text(ENDS)]] if cut else []
     sections.append(_closing(head, result))
     columns = max(width, NARROWEST_PAGE)
     return "\n\n".join("\n".join(laid(parts, columns)) for parts in sections)

@@ -9,7 +9,7 @@ from uq.report.answers import Headline, InputRow, Pair, RankingAnswer
 from uq.report.chances import in_per_cent
 from uq.report.plain import Part, Text, plain
 from uq.report.rounding import alone, at_most
-from uq.report.spoken import listed, per_cent, quoted
+from uq.report.spoken import MOST_LISTED, listed, per_cent, quoted
 from uq.solve.batch import Status
 from uq.solve.statuses import describe
 from uq.store.facts import method_words
@@ -103,7 +103,11 @@ def failed_members(head: Headline) -> Iterable[str]:
 def _solver(head: Headline) -> Iterable[str]:
     tolerance = alone(head.facts["accuracy"])
     method = method_words(str(head.facts["method"]))
-    yield f"Solver: {method}, relative tolerance {tolerance}; its error is not estimated."
+    yield f"Solver: {method}, relative tolerance {tolerance}; its error is not compared with the bands yet."
+    if head.work is not None:
+        work = head.work
+        share = f"{alone(100 * work.stiff_share, 2)} % of the solves took stiff ones ({work.switches} changes)"
+        yield f"Steps: {work.steps} accepted, {work.rejections} rejected; {share if work.stiff_share else 'none were stiff'}."
     if head.fell_back:
         yield f"Scale: the pilot gave none for {listed(head.fell_back)}; the absolute tolerance there is a guess."
 
@@ -164,7 +168,10 @@ def _alike(head: Headline) -> Iterable[tuple[str, str]]:
 
 
 def _and(labels: Iterable[str]) -> str:
-    *first, last = (quoted(label) for label in labels)
+    every = [quoted(label) for label in labels]
+    if len(every) > MOST_LISTED:
+        return listed(every)
+    *first, last = every
     return f"{', '.join(first)} and {last}"
 
 

@@ -44,7 +44,7 @@ class Branch:
 
 def forecast_of(study: Study, design: Design, inputs: Inputs) -> Forecast:
     """What is solved for a study, at the points of a design of these inputs, before the pilot."""
-    compiled = compile_code(build(study.equations, method_for(study.plan.accuracy)))
+    compiled = compile_code(build(study.equations, method_for(study.plan.accuracy), study.plan.solver))
     return Forecast(compiled, inputs, design, settings_of(study), study.time.start, ask_of(study, design, inputs))
 
 

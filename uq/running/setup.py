@@ -74,7 +74,7 @@ def measured_of(study: Study) -> Iterator[Measured]:
 
 def settings_of(study: Study) -> Settings:
     """How members are solved, but for the scales, which only the pilot can say."""
-    return Settings(study.plan.accuracy, np.ones(len(study.states)), study.lowest, study.highest, negligible=study.negligible)
+    return Settings(study.plan.accuracy, np.ones(len(study.equations.states)), study.lowest, study.highest, negligible=study.negligible)
 
 
 def shapley_of(study: Study, inputs: Inputs) -> ShapleySets | None:

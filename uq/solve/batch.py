@@ -59,8 +59,9 @@ class Batch:
 
     values [member, observed, time] (float64, C order; nan from the time of failure on), conditions [member, condition, time] (int8, see
     `Truth`; unknown from failure on), outcomes [member, outcome] (nan where a course has no value or the member failed), status [member]
-    (int8), end_time [member] (time of failure, else the last time), steps and rejections [member] (int32), largest [member, state]
-    (largest |x| over start and accepted steps).
+    (int8), end_time [member] (time of failure, else the last time), steps and rejections [member] (int32), stiff_steps [member] (int32,
+    how many of the steps were stiff), switches [member] (int32, from explicit to stiff steps or back), largest [member, state] (largest
+    |x| over start and accepted steps).
     """
 
     values: Floats
@@ -70,4 +71,6 @@ class Batch:
     end_time: Floats
     steps: NDArray[np.int32]
     rejections: NDArray[np.int32]
+    stiff_steps: NDArray[np.int32]
+    switches: NDArray[np.int32]
     largest: Floats

@@ -19,10 +19,26 @@ def kernel(function: Callable[..., Any]) -> Any:
     It lies in $XDG_CACHE_HOME/uq (or ~/.cache/uq), or where the user has set NUMBA_CACHE_DIR; where that cannot be written, numba finds a
     place of its own. The setting is numba's and global, so it is put back at once.
     """
+    return _cached(function, {})
+
+
+def uncounted(function: Callable[..., Any]) -> Any:
+    """As `kernel`, but without counting references to arrays: it must make no new array.
+
+    Counting them is an atomic operation for every array whenever one of the stepping kernel's parts is entered or left, which took up to
+    three quarters of the time beside the steps themselves. (The option has an underscore in numba; without it all works, only slower.)
+    """
+    return _cached(function, UNCOUNTED)
+
+
+UNCOUNTED = {"_nrt": False}
+
+
+def _cached(function: Callable[..., Any], options: dict[str, bool]) -> Any:
     before = config.CACHE_DIR
     config.CACHE_DIR = before or str(_cache_home() / "uq")
     try:
-        return njit(nogil=True, cache=True, error_model="numpy")(function)
+        return njit(nogil=True, cache=True, error_model="numpy", **options)(function)
     finally:
         config.CACHE_DIR = before
 

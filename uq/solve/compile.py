@@ -16,7 +16,7 @@ from uq.errors import UqError
 from uq.model.code import Code
 from uq.model.layout import Layout
 
-FUNCTIONS = ("uq_start", "uq_rates", "uq_step", "uq_observe", "uq_outcomes", "uq_starts")
+FUNCTIONS = ("uq_start", "uq_rates", "uq_step", "uq_stiff", "uq_observe", "uq_outcomes", "uq_starts")
 # The widest vectors of a processor, by the feature that LLVM knows them by.
 WIDTHS = (("avx512f", "avx512"), ("avx2", "avx2"), ("sve", "sve"), ("neon", "neon"))
 NO_FMA = (

@@ -48,7 +48,22 @@ def settings_block(code: Code, settings: Settings, length: float, times: int) ->
     given[layout.first_tolerance : layout.first_tolerance + states] = settings.absolute[:, None]
     given[layout.first_lowest : layout.first_lowest + states] = (settings.lowest - beyond)[:, None]
     given[layout.first_highest : layout.first_highest + states] = (settings.highest + beyond)[:, None]
+    weights = _weights(settings.absolute)
+    given[layout.first_weight : layout.first_weight + states] = weights[:, None]
+    given[layout.first_hint : layout.first_hint + states] = (_signs(states) / weights)[:, None]
     return given
+
+
+def _weights(absolute: Floats) -> Floats:
+    """One over the tolerances; while the pilot looks for scales, states without one are measured like the finest of the others."""
+    known = absolute[np.isfinite(absolute)]
+    return 1.0 / np.where(np.isfinite(absolute), absolute, known.min(initial=1.0))
+
+
+def _signs(states: int) -> Floats:
+    """Numbers between 1/2 and 3/2 with signs in turn: fractions of multiples of the golden ratio."""
+    places = np.arange(states)
+    return np.asarray((0.5 + (places + 1) * ((np.sqrt(5.0) - 1.0) / 2.0) % 1.0) * np.where(places % 2, -1.0, 1.0))
 
 
 def through_table(address: int, columns: Floats, width: int) -> Floats:

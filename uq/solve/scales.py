@@ -15,6 +15,8 @@ from uq.solve.solve import advance, evaluate_starts
 FALL_BACK = 1.0
 # The pilot looks ahead a little, then further: a state that starts at nothing has a size before its error could grow unseen.
 HORIZONS = (1e-6, 1e-4, 1e-2, 1e-1)
+# Where the first of them is too far for what has no size yet (fast kinetics over a long time), it looks ahead so little first.
+NEARER = (1e-14, 1e-12, 1e-10, 1e-8)
 # A scale found to be this much smaller than the one it was solved with may be made of uncontrolled error: it is found again.
 FALLS = 0.5
 # Such a scale falls by about the accuracy in every pass, at worst from the largest number there is.
@@ -34,12 +36,16 @@ def pilot_scales(
     end = float(times[-1])
     sizes = _median(np.abs(evaluate_starts(compiled, x)))
     for part in HORIZONS:
-        ahead = np.array([start + part * (end - start)])
-        if ahead[0] > start:
-            sizes = _found(compiled, x, ahead, start, replace(settings, scales=_given(sizes)), sizes, stop)
+        found = _ahead(compiled, x, (start, start + part * (end - start)), settings, sizes, stop)
+        if found is None and part == HORIZONS[0]:
+            for nearer in (*NEARER, part):
+                near = _ahead(compiled, x, (start, start + nearer * (end - start)), settings, sizes, stop)
+                sizes = sizes if near is None else near
+        sizes = sizes if found is None else found
     for passes in range(MOST_PASSES):
         used = _given(sizes)
-        sizes = _found(compiled, x, times, start, replace(settings, scales=used), sizes, stop)
+        found = _found(compiled, x, times, start, replace(settings, scales=used), stop)
+        sizes = sizes if found is None else found
         if passes and not np.any(sizes < FALLS * used):
             break
     unknown = sizes == 0.0
@@ -47,13 +53,21 @@ def pilot_scales(
     return sizes, tuple(name for name, fell in zip(compiled.code.states, unknown, strict=True) if fell)
 
 
-def _found(
-    compiled: Compiled, x: Floats, times: Floats, start: float, settings: Settings, before: Floats, stop: NDArray[np.uint8] | None
-) -> Floats:
-    """Sizes after one pass; `before` where no member got through."""
+def _ahead(
+    compiled: Compiled, x: Floats, span: tuple[float, float], settings: Settings, sizes: Floats, stop: NDArray[np.uint8] | None
+) -> Floats | None:
+    """Sizes after a pass over a span with the sizes known so far; these where the span is none."""
+    start, end = span
+    if end == start:
+        return sizes
+    return _found(compiled, x, np.array([end]), start, replace(settings, scales=_given(sizes)), stop)
+
+
+def _found(compiled: Compiled, x: Floats, times: Floats, start: float, settings: Settings, stop: NDArray[np.uint8] | None) -> Floats | None:
+    """Sizes after one pass; None where no member got through."""
     batch = advance(compiled, x, times, start, settings, stop)
     good = batch.status == Status.ok
-    return _median(batch.largest[good]) if good.any() else before
+    return _median(batch.largest[good]) if good.any() else None
 
 
 def _given(sizes: Floats) -> Floats:

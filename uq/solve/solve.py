@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from typing import Any
+
 import numpy as np
 from numpy.typing import NDArray
 
@@ -20,8 +22,9 @@ def solve(compiled: Compiled, x: Floats, times: Floats, start: float, settings: 
     x [member, input] in the inputs' units; times [solved] rising, none before start (it may be the first), in the time unit. A member's
     bits depend on the code, times, start, settings and its row of x, on nothing else. Releases the GIL.
     Raises Interrupted soon after another thread sets stop[0]; ValueMistake if a forcing does not cover the time.
-    Numerical failures are statuses in the Batch. Method: that of the code, an explicit pair of Dormand and Prince with its continuous
-    extension (`uq.model.tableau`). Rows of forcings and times that rates are compared with are landed on. What else happens between two
+    Numerical failures are statuses in the Batch. Method: that of the code, an explicit pair of Dormand and Prince (`uq.model.tableau`),
+    a Rosenbrock method for stiff members (`uq.model.rosenbrock5`), or both by what a member needs (`uq.model.switch`), each with its
+    continuous extension. Rows of forcings and times that rates are compared with are landed on. What else happens between two
     stages is not seen: a shallow pole of a rate in time, such as |t - 1|^-0.5, may be stepped over at a loose accuracy without a failure;
     so may a pulse in time of another form, or at a time that depends on inputs, if it lasts less than about a two-hundredth of the whole
     time (such models take no step longer than LONGEST_PART of it): make it a forcing, or ask for more accuracy.
@@ -86,6 +89,8 @@ def _empty_batch(compiled: Compiled, members: int, times: int) -> Batch:
         end_time=np.empty(members),
         steps=np.zeros(members, dtype=np.int32),
         rejections=np.zeros(members, dtype=np.int32),
+        stiff_steps=np.zeros(members, dtype=np.int32),
+        switches=np.zeros(members, dtype=np.int32),
         largest=np.empty((members, layout.states)),
     )
 
@@ -95,23 +100,30 @@ def _run(compiled: Compiled, x: Floats, times: Floats, given: Floats, pieces: Se
     from uq.solve import kernel
 
     layout, address = compiled.layout, compiled.addresses
-    lanes, nursery = aligned(layout.slots), aligned(layout.slots)
-    calls = kernel.Calls(
-        *(address[name] for name in ("uq_start", "uq_rates", "uq_step", "uq_observe")),
-        *(array.ctypes.data for array in (lanes, nursery, given, times, batch.values, batch.conditions)),
-    )
-    lanes.view(np.int64)[Head.clock] = calls.times  # lanes without a member look there too
+    lanes = aligned(kernel.GROUPS * layout.slots).reshape(kernel.GROUPS, layout.slots, kernel.LANES)
+    functions = [address[name] for name in ("uq_start", "uq_rates", "uq_step", "uq_stiff", "uq_observe")]
+    tables = [array.ctypes.data for array in (given, times, batch.values, batch.conditions)]
+    calls = kernel.Calls._make((*functions, lanes.ctypes.data, lanes[0].nbytes, *tables))
+    lanes.view(np.int64)[:, Head.clock] = calls.times  # lanes without a member look there too
     job = kernel.Job(
         calls,
         kernel.Slots(*(int(getattr(Head, name, getattr(layout, name, -1))) for name in kernel.Slots._fields)),
-        kernel.Group(lanes, lanes.view(np.int64)),
-        kernel.Group(nursery, nursery.view(np.int64)),
+        kernel.Lanes(lanes, lanes.view(np.int64)),
         kernel.Tables(x, times, pieces.bounds, pieces.jumps, pieces.coefficients, flag),
-        kernel.Places(*(np.full(kernel.LANES, -1, dtype=np.int64) for _ in kernel.Places._fields)),
+        _places(layout.moved),
         kernel.Results(*(getattr(batch, name) for name in kernel.Results._fields)),
     )
     with np.errstate(all="ignore"):
-        return bool(kernel.run_members_3(job))
+        return bool(kernel.run_members_4(job))
+
+
+def _places(moved: int) -> Any:
+    """Nobody is anywhere yet."""
+    from uq.solve.kernel import GROUPS, LANES, WAITING, Places
+
+    member, segment = (np.full((GROUPS, LANES), -1, dtype=np.int64) for _ in range(2))
+    parked = [np.zeros((2, WAITING, *size), dtype=np.int64) for size in ((moved,), (), ())]
+    return Places(member, segment, np.zeros(2, dtype=np.int64), *parked)
 
 
 def _fill_outcomes(compiled: Compiled, x: Floats, times: Floats, batch: Batch) -> None:

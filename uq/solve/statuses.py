@@ -22,7 +22,8 @@ SENTENCES = (
     ),
     (
         Status.too_many_steps,
-        "The solver needed more steps than it may take: the member may be stiff, or the accuracy finer than the model deserves.",
+        "The solver needed more steps than it may take: the accuracy is finer than the model deserves, rates jump at values of "
+        "states, or the member is stiff and the study asks for explicit steps.",
     ),
     (Status.too_many_events, "Events followed each other without end: give them a delay, or `once = true`."),
     (

@@ -14,7 +14,13 @@ NUMERIC = ("numpy", "scipy", "numba", "llvmlite")
 
 
 # What the methods of the solver are called in words.
-METHODS = {"explicit54": "explicit Runge-Kutta pair 5(4)", "explicit853": "explicit Runge-Kutta pair 8(5,3)"}
+METHODS = {
+    "explicit54": "explicit Runge-Kutta pair 5(4)",
+    "explicit853": "explicit Runge-Kutta pair 8(5,3)",
+    "rosenbrock5": "Rosenbrock method of order 5",
+    "explicit54 rosenbrock5": "explicit Runge-Kutta pair 5(4), Rosenbrock method of order 5 where stiff",
+    "explicit853 rosenbrock5": "explicit Runge-Kutta pair 8(5,3), Rosenbrock method of order 5 where stiff",
+}
 
 
 @dataclass(frozen=True)

@@ -11,6 +11,8 @@ from uq.analysis.finding import Finding, Variable
 from uq.store.described import QUANTILE_COMMENT, described, labels, within
 from uq.store.facts import RunFacts, method_words
 from uq.store.inputs_group import inputs_group, texts
+from uq.store.stacked import index_coordinates, stacked
+from uq.study.index import entries_of, sound
 
 if TYPE_CHECKING:
     from uq.study.study import Study
@@ -30,7 +32,8 @@ def contents(study: Study, findings: Iterable[Finding], facts: RunFacts) -> tupl
         told = described(finding, study, called)
         before = by_group.get(told.group)
         by_group[told.group] = joined(before, told) if before else told
-    return tuple(by_group.values())
+    repeats = (*study.repeats, *(each for scenario in study.scenarios for each in scenario.study.repeats))
+    return stacked(by_group.values(), repeats) if repeats else tuple(by_group.values())
 
 
 def root(study: Study, facts: RunFacts) -> Finding:
@@ -43,6 +46,7 @@ def root(study: Study, facts: RunFacts) -> Finding:
         attributes={"comment": QUANTILE_COMMENT},
     )
     variables = {"time": time, "quantile": levels}
+    variables |= index_coordinates(study)
     if study.inputs.items:
         variables["input"] = texts("input", study.inputs.names, "uncertain input")
     return Finding("", variables, {**_of_study(study), **_of_run(study, facts)})
@@ -121,7 +125,7 @@ def solver_group(study: Study, facts: RunFacts) -> tuple[Finding, ...]:
         return ()
     scales = np.array(list(facts.scales.values()), dtype=float)
     each = {"comment": "in the unit that `unit` states for this state; absolute tolerance = accuracy x scale"}
-    units = {state.name: state.unit for state in study.states}
+    units = {name: state.unit for state in study.states for name in entries_of(state.name, sound(state.over) or ())}
     fell_back = np.array([name in facts.fell_back for name in facts.scales], dtype=np.int8)
     flags = {"flag_values": np.array([0, 1], dtype=np.int8), "flag_meanings": "found_in_the_pilot fell_back"}
     variables = {

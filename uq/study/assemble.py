@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterable
-from typing import cast
+from typing import Any, cast
 
 import numpy as np
 from numpy.typing import NDArray
@@ -12,7 +12,9 @@ from uq.analysis.ask import LimitAsked
 from uq.lang.graph import Node
 from uq.model.code import Course, CourseKind, Equations, Forcing, Interpolation, Outside, Table, TableInterpolation, TableOutside
 from uq.study.given import ForcingCourse, GivenTable, Measured
+from uq.study.index import count_of, entries_of, sound
 from uq.study.plan import Time
+from uq.study.quantities import labels_of, over_of
 from uq.study.times import Times, all_times
 from uq.study.work import Work
 
@@ -30,7 +32,7 @@ def equations(work: Work, times: Times, time: Time) -> Equations:
     return Equations(
         graph=work.low.graph,
         inputs=tuple(item.name for item in work.inputs),
-        states=tuple(work.sheets.states),
+        states=tuple(work.state_names),
         starts=_all(work.starts),
         rates=_all(work.rates),
         forcings=tuple(_forcing(sheet.whole) for sheet in work.sheets.forcings.values() if sheet.whole is not None),
@@ -63,7 +65,9 @@ def limits_asked(work: Work, times: Times, time: Time) -> tuple[LimitAsked, ...]
         limit = sheet.whole
         if limit is not None:
             by = tuple(times.nearest(moment) for moment in limit.by or (time.stop,))
-            found.append(LimitAsked(limit.name, limit.label or limit.name, limit.when, by, limit.accept))
+            over = sound(limit.over) or ()
+            entries = zip(entries_of(limit.name, over), labels_of(limit.label or limit.name, over), strict=True)
+            found += [LimitAsked(entry, label, limit.when, by, limit.accept) for entry, label in entries]
     return tuple(found)
 
 
@@ -77,11 +81,15 @@ def solved_times(work: Work, time: Time, measured: Iterable[Measured]) -> Times:
 
 def valid_values(work: Work) -> tuple[NDArray[np.float64], NDArray[np.float64]]:
     """Lowest and highest valid value [state], -inf and inf where none."""
-    pairs = [sheet.values.get("valid") or (-np.inf, np.inf) for sheet in work.sheets.states.values()]
+    pairs = [each or (-np.inf, np.inf) for each in _of_states(work, "valid")]
     return np.array([low for low, _ in pairs], dtype=float), np.array([high for _, high in pairs], dtype=float)
 
 
 def negligible(work: Work) -> NDArray[np.float64]:
     """What does not matter in every state [state], nan where that is not stated."""
-    stated = [sheet.values.get("negligible") for sheet in work.sheets.states.values()]
-    return np.array([np.nan if value is None else value for value in stated], dtype=float)
+    return np.array([np.nan if value is None else value for value in _of_states(work, "negligible")], dtype=float)
+
+
+def _of_states(work: Work, key: str) -> list[Any]:
+    """A value of every state, for every entry where it repeats."""
+    return [sheet.values.get(key) for sheet in work.sheets.states.values() for _ in range(count_of(over_of(sheet) or ()))]

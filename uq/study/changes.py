@@ -17,14 +17,14 @@ from uq.study.uncertain import DISTRIBUTION_KEYS
 from uq.study.values import show
 from uq.units import Units, parse_quantity
 
-NAMED = ("units", "states", "parameters", "terms", "forcings", "tables", "outcomes", "limits", "scenarios", "measured")
+NAMED = ("units", "index", "states", "parameters", "terms", "forcings", "tables", "outcomes", "limits", "scenarios", "measured")
 # Tables that a change makes where they are not there.
 _MADE = (("plan",), ("time",), ("plan", "precision"), ("plan", "at_most"))
 # The order of these is the order of the output, or the place of an input in the design; the order of all others says nothing.
 _ORDERED = ("states", "parameters", "outcomes", "limits")
 # Keys of which only one may stand: setting one takes the place of the others.
 _EITHER = (("points", "every", "at"), ("value", *DISTRIBUTION_KEYS))
-_KEPT = ("unit", "label", "group")
+_KEPT = ("unit", "label", "group", "over", "edge")
 
 
 def changed(document: Mapping[str, Any], changes: Mapping[str, object], notes: Notes) -> dict[str, Any]:

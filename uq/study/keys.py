@@ -34,6 +34,10 @@ DECLARATIONS: tuple[tuple[str, type[Any]], ...] = (
 
 # Tables that other rooms read, or whose keys are names.
 WITHOUT_DECLARATION: tuple[tuple[str, tuple[tuple[str, str, str], ...]], ...] = (
+    (
+        "`[index]`",
+        (("NAME", "number of entries, counted from 0, or a list of their labels; or another index, of which it is a second name", ""),),
+    ),
     ("`[units]`", (("NAME", '"new": a counting unit of one\'s own, as in person = "new"', ""),)),
     (
         "`[[dependence]]`",

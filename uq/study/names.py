@@ -10,14 +10,21 @@ from uq.lang.words import RESERVED
 from uq.study.locate import Path
 from uq.study.notes import Notes
 
-_NAME = re.compile(r"[A-Za-z][A-Za-z0-9_]*")
-QUANTITIES = ("states", "parameters", "terms", "forcings", "tables")
+NAME = re.compile(r"[A-Za-z][A-Za-z0-9_]*")
+QUANTITIES = ("states", "parameters", "terms", "forcings", "tables", "index")
 ANSWERS = ("outcomes", "limits")
-WORDS = {"states": "state", "parameters": "parameter", "terms": "term", "forcings": "forcing", "tables": "table"}
+WORDS = {"states": "state", "parameters": "parameter", "terms": "term", "forcings": "forcing", "tables": "table", "index": "index"}
 # Tables of a later version whose names stand in expressions.
-NAMED_LATER = ("switches", "index")
+NAMED_LATER = ("switches",)
 # Axes of the results that stand beside quantities of the study under their names.
 AXES = ("quantile", "input", "realization")
+# Names that an index may not have, since it becomes an axis of the results itself: other axes there, and what stands beside them.
+AXES_BESIDE = (
+    *("side", "by", "group", "round", "observation", "time_measured", "input_other", "scenario_input", "state", "status", "failed"),
+    *("change", "warning", "remark", "dependence", "file", "byte"),
+    *("quantiles", "mean", "sd", "nominal", "simultaneous", "ended", "ever", "now", "first_time", "ever_by", "missing", "members"),
+    *("first", "total", "shapley", "verdict_of"),
+)
 
 
 def tables(document: Mapping[str, Any], key: str) -> Mapping[str, Any]:
@@ -54,20 +61,25 @@ def check_names(document: Mapping[str, Any], notes: Notes) -> None:
     for name in tables(document, "outcomes"):
         if name in tables(document, "limits"):
             _twice(("limits", name), ("outcomes", name), "an outcome", notes)
+    for key in ANSWERS:
+        for name in tables(document, key):
+            if name in tables(document, "index"):
+                notes.at_key((key, name), f"the name `{name}`, which an index has", "a name of its own; results have an axis of that name")
 
 
 def _check_one(path: Path, name: str, notes: Notes) -> None:
-    if not _NAME.fullmatch(name):
+    if not NAME.fullmatch(name):
         notes.at_key(path, f"the name `{name}`", "a name of letters A-Z, a-z, digits and _, with a letter first")
     elif name in RESERVED:
         notes.at_key(path, f"the name `{name}`, which is taken by the language of expressions", "another name")
-    elif name in AXES:
+    elif name in AXES or (path[0] == "index" and name in AXES_BESIDE):
         notes.at_key(path, f"the name `{name}`, which an axis of the results has", "another name")
 
 
 def _twice(path: Path, first: Path, what: str, notes: Notes) -> None:
     line = notes.places.of_key(first)[0]
     there = f" (line {line})" if line else ""
+    what = what.replace("a index", "an index")
     notes.at_key(path, f"the name `{path[-1]}` for a second thing", f"a name of its own; it is {what} already{there}")
 
 

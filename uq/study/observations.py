@@ -5,6 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass, field, replace
 
 from uq.errors import ValueMistake, suggest
+from uq.lang.scope import Repeated
 from uq.study.given import Measured
 from uq.study.plan import Time
 from uq.study.work import Work
@@ -29,12 +30,21 @@ def observations(work: Work) -> Observations:
             known = "which is not watched" if name in low.declared else "which is unknown"
             remedy = suggest(name, watched) or (f'watch = [..., "{name}"] in [plan]' if name in low.declared else "")
             notes.at_key(("measured", name), f"observations of `{name}`, {known}", "a watched quantity", remedy)
+        elif name in low.repeated:
+            notes.at_key(
+                ("measured", name), f"observations of `{name}`, which repeats", "a single quantity", _single(name, low.repeated[name])
+            )
         elif sheet.whole is not None and sheets.time.whole is not None and name in low.known and sheet.unit is not None:
             try:
                 _take(found, sheet.whole, (sheet.unit, low.known[name][1]), sheets.time.whole)
             except ValueMistake as mistake:
                 notes.refused(("measured", name), mistake)
     return found
+
+
+def _single(name: str, given: Repeated) -> str:
+    first = ",".join(index.labels[0] for index in given.over)
+    return f'name the one that was measured in [terms], one = "{name}[{first}]", watch it, and write [measured.one]'
 
 
 def _take(found: Observations, given: Measured, units: tuple[Unit, Unit], time: Time) -> None:

@@ -13,6 +13,7 @@ from numpy.typing import NDArray
 from uq.design.design import REPLICATES
 from uq.design.sobol import MOST_ROWS
 from uq.errors import ValueMistake
+from uq.model.code import Solver
 from uq.study import values as read
 from uq.study.fields import entry, read_part, refuse, unit_entry
 from uq.study.locate import Path
@@ -21,6 +22,7 @@ from uq.study.values import Frame
 
 Found = Iterator[tuple[Path, ValueMistake]]
 
+SOLVERS: tuple[Solver, ...] = ("auto", "explicit", "stiff")
 QUESTIONS = ("bands", "limits", "outcomes", "ranking")
 QUESTIONS_LATER = (
     "screening",
@@ -183,6 +185,7 @@ class Plan:
         "[0.05, 0.25, 0.5, 0.75, 0.95]",
     )
     accuracy: float = entry("relative tolerance of the solver", read.between(0, 0.01, "a number above 0, at most 0.01"), 1e-6)
+    solver: Solver = entry("explicit or stiff steps only, or by what every member needs", read.choice(SOLVERS), "auto")  # noqa: RUF009
     keep: int = entry("values kept exactly up to here", read.size, 512 * 10**6, '"512 MB"')
     failures: str = entry(
         "what failed members count as: on either side, not at all, or statements are withheld",
@@ -191,8 +194,6 @@ class Plan:
     )
     precision: Precision | None = entry("table of the precision asked, see below", PRECISION, None, "what `members` give")  # noqa: RUF009
     at_most: AtMost | None = entry("table of what may be spent on it, see below", AT_MOST, None, "no bound")  # noqa: RUF009
-
-    later = ("solver",)
 
     def __post_init__(self) -> None:
         bounded = self.members > 0

@@ -172,7 +172,6 @@ def _study(work: Work, plan: Plan, data: Files, observed: Observations, given: M
         raise RuntimeError("a study without mistakes has a head and a time")
     times = assemble.solved_times(work, time, observed.made)
     inputs = Inputs(tuple(work.inputs), work.dependence)
-    lowest, highest = assemble.valid_values(work)
     return Study(
         **given,
         files=dict(data.used),
@@ -200,10 +199,15 @@ def _study(work: Work, plan: Plan, data: Files, observed: Observations, given: M
         outcome_quantities=tuple(work.quantities),
         limits_asked=assemble.limits_asked(work, times, time),
         times=times,
-        lowest=lowest,
-        highest=highest,
-        negligible=assemble.negligible(work),
+        **_of_states(work),
     )
+
+
+def _of_states(work: Work) -> dict[str, Any]:
+    """What is given for every state, and what repeats."""
+    lowest, highest = assemble.valid_values(work)
+    told = {"lowest": lowest, "highest": highest, "negligible": assemble.negligible(work)}
+    return {**told, "indices": dict(work.low.indices), "repeats": tuple(work.repeats)}
 
 
 def _wholes(sheets: Mapping[str, Any]) -> tuple[Any, ...]:

@@ -40,5 +40,6 @@ def unlike(base: Work, other: Work) -> Iterator[tuple[Path, str, str]]:
     """What of a scenario cannot be compared with the study: key, found and expected."""
     for mine, theirs in zip((*base.watched, *base.quantities), (*other.watched, *other.quantities), strict=True):
         if mine.unit != theirs.unit:
-            table = next(key for key in ("outcomes", "terms", "states") if theirs.name in tables(other.document, key))
-            yield (table, theirs.name), f"`{theirs.name}` in {theirs.unit}", f"{mine.unit}, as in the study itself"
+            name = theirs.name.partition("[")[0]
+            table = next(key for key in ("outcomes", "terms", "states") if name in tables(other.document, key))
+            yield (table, name), f"`{name}` in {theirs.unit}", f"{mine.unit}, as in the study itself"

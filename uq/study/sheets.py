@@ -7,6 +7,7 @@ from dataclasses import dataclass, replace
 from typing import Any, TypeVar
 
 from uq.errors import ValueMistake
+from uq.lang.scope import Index
 from uq.study import values as read
 from uq.study.columns import Files
 from uq.study.counting import own_units
@@ -14,6 +15,7 @@ from uq.study.declarations import Limit, Outcome, Parameter, State, Term
 from uq.study.dependence import Statements, statements
 from uq.study.fields import Sheet, entry, keys_of, read_table, unknown
 from uq.study.given import ForcingCourse, GivenTable, Measured
+from uq.study.index import read_indices
 from uq.study.locate import Path
 from uq.study.names import tables
 from uq.study.notes import KeyMistake, Notes
@@ -25,16 +27,16 @@ from uq.study.values import Frame
 from uq.units import NONE, Units, parse_quantity
 
 TABLES = (
-    *("units", "time", "states", "parameters", "terms", "forcings", "tables", "outcomes", "limits"),
+    *("units", "time", "index", "states", "parameters", "terms", "forcings", "tables", "outcomes", "limits"),
     *("dependence", "plan", "scenarios", "measured"),
 )
-TABLES_LATER = ("switches", "events", "index", "model", "assumptions", "not_included", "review")
+TABLES_LATER = ("switches", "events", "model", "assumptions", "not_included", "review")
 T = TypeVar("T")
 
 # Keys whose texts say something about units; labels and sources are prose.
 _PROSE = (
     *("title", "about", "caution", "label", "source", "kind", "group", "interpolation", "outside", "keep", "name"),
-    *("file", "column", "columns"),
+    *("file", "column", "columns", "over", "index"),
 )
 
 
@@ -75,6 +77,7 @@ class Sheets:
     measured: Mapping[str, Sheet[Measured]]
     scenarios: Mapping[str, Sheet[ScenarioTable]]
     dependence: Statements
+    indices: Mapping[str, Index | None]
 
     def text_path(self, key: str, name: str, document: Mapping[str, Any]) -> Path:
         """Where the expression of a term stands: in its short form the term itself is the text."""
@@ -83,11 +86,7 @@ class Sheets:
 
 def read_sheets(document: Mapping[str, Any], files: Files, notes: Notes) -> Sheets:
     """Read every table; mistakes go to `notes`."""
-    own, wrong = own_units(document)
-    for path, mistake in wrong:
-        notes.refused(path, mistake)
-    unitless = not _states_units(document, own)
-    frame = Frame(NONE, NONE, unitless, files, own)
+    frame = _frame(document, files, notes)
     head = _head(document, frame, notes)
     if "time" in document:
         time = _noted(read_table(Time, document["time"], frame), ("time",), notes)
@@ -105,8 +104,8 @@ def read_sheets(document: Mapping[str, Any], files: Files, notes: Notes) -> Shee
         return {name: _noted(one(name, value, frame), (key, name), notes) for name, value in tables(document, key).items()}
 
     return Sheets(
-        unitless,
-        own,
+        frame.unitless,
+        frame.own,
         files,
         head,
         time,
@@ -121,7 +120,17 @@ def read_sheets(document: Mapping[str, Any], files: Files, notes: Notes) -> Shee
         all_of("measured", measured),
         all_of("scenarios", lambda name, value, frame: read_table(ScenarioTable, value, frame, name)),
         stated,
+        frame.indices,
     )
+
+
+def _frame(document: Mapping[str, Any], files: Files, notes: Notes) -> Frame:
+    """What all tables are read in: units, indices, files."""
+    own, wrong = own_units(document)
+    indices, more = read_indices(document)
+    for path, mistake in (*wrong, *more):
+        notes.refused(path, mistake)
+    return Frame(NONE, NONE, not _states_units(document, own), files, own, indices=indices)
 
 
 def _head(document: Mapping[str, Any], frame: Frame, notes: Notes) -> Sheet[Head]:

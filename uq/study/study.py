@@ -11,9 +11,11 @@ from numpy.typing import NDArray
 
 from uq.analysis.ask import LimitAsked, Quantity
 from uq.inputs.inputs import Inputs
+from uq.lang.scope import Index
 from uq.model.code import Equations
 from uq.study.declarations import Limit, Outcome, Parameter, State, Term
 from uq.study.given import ForcingCourse, GivenTable, Measured
+from uq.study.index import Repeat
 from uq.study.plan import Plan, Time
 from uq.study.times import Times
 from uq.units import Units
@@ -32,14 +34,16 @@ class Scenario:
 class Study:
     """A study that has been checked in full; made by `read_study` and `parse_study`.
 
-    Declared: `title`, `about`, `caution`, `time`, `states`, `parameters`, `terms`, `forcings` and `tables` (with rows, wherever these came
-    from), `outcomes`, `limits`, `plan` (with `ask` and `watch` filled in; with a precision, `members` is the most that may be used),
-    `measured` (rows in the time unit of the study and the unit of the quantity, their times among the solved ones), `own_units`.
+    Declared: `title`, `about`, `caution`, `time`, `indices` by name, `states`, `parameters`, `terms`, `forcings` and `tables` (with rows,
+    wherever these came from), `outcomes`, `limits`, `plan` (with `ask` and `watch` filled in; with a precision, `members` is the most that
+    may be used), `measured` (rows in the time unit of the study and the unit of the quantity, their times among the solved ones),
+    `own_units`.
     Worked out: `inputs` (uncertain parameters in file order, then uncertain starts in state order) with dependence and groups,
     `scenarios`, `equations`, `watched` and `outcome_quantities` with their units, `limits_asked`, `times`, `lowest` and `highest` [state]
-    (valid values, -inf and inf where none), `negligible` [state] (nan where not stated). `text` is the file as read, `files` the bytes of
-    the data files it names, `changes` what was changed by dotted key. `warnings` are repeated in the report; `remarks` say how files were
-    read, and what follows from dependent inputs.
+    (valid values, -inf and inf where none), `negligible` [state] (nan where not stated). What repeats over an index stands in all of these
+    entry by entry, as T[0], T[1]; `repeats` says what belongs together.
+    `text` is the file as read, `files` the bytes of the data files it names, `changes` what was changed by dotted key. `warnings` are
+    repeated in the report; `remarks` say how files were read, and what follows from dependent inputs.
     """
 
     name: str
@@ -73,6 +77,8 @@ class Study:
     lowest: NDArray[np.float64]
     highest: NDArray[np.float64]
     negligible: NDArray[np.float64]
+    indices: Mapping[str, Index]
+    repeats: tuple[Repeat, ...]
     scenarios: tuple[Scenario, ...] = ()
     again: Any = field(repr=False)
 

@@ -10,6 +10,7 @@ from uq.errors import ValueMistake
 from uq.inputs.distributions import DISTRIBUTIONS, Data, Distribution, Truncated, read_distribution
 from uq.study import values as read
 from uq.study.fields import entry, one_of, read_table
+from uq.study.index import numbers
 from uq.study.locate import Path
 from uq.study.notes import KeyMistake, Refused
 from uq.study.values import Frame
@@ -144,8 +145,11 @@ def drawn_jointly(name: str, table: Mapping[str, Any], frame: Frame) -> dict[str
     return {**table, "data": {"file": place[0], "column": place[1]}} if place else dict(table)
 
 
-def start(value: object, frame: Frame) -> float | str | Uncertain:
-    """The start of a state: a number, a quantity, an expression of parameters, or a table with a distribution."""
+def start(value: object, frame: Frame) -> float | str | Uncertain | tuple[Any, ...]:
+    """The start of a state: a number, a quantity, an expression of parameters, a table with a distribution, or a list of numbers."""
+    if isinstance(value, list):
+        values: tuple[Any, ...] = numbers(value, frame)  # type: ignore[assignment]
+        return values
     if isinstance(value, Mapping):
         sheet = read_table(Uncertain, value, frame)
         if sheet.whole is None:

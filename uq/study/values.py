@@ -13,6 +13,7 @@ from dataclasses import dataclass, field, replace
 from typing import Any
 
 from uq.errors import ValueMistake, suggest
+from uq.lang.scope import Index
 from uq.study.columns import Files
 from uq.study.locate import Path
 from uq.study.notes import Refused
@@ -30,7 +31,8 @@ _CONTROL = re.compile(r"[\x00-\x08\x0b-\x1f\x7f-\x9f]")
 class Frame:
     """What the numbers around are measured in; `unit` and `time` are None where missing or wrong (numbers then pass as they are).
 
-    `own` are the study's own counting units. `joint` has the inputs that a joint sample draws: file and column, None where that is wrong.
+    `own` are the study's own counting units, `indices` its indices, None where one is wrong. `joint` has the inputs that a joint sample
+    draws: file and column, None where that is wrong.
     """
 
     unit: Unit | None
@@ -39,6 +41,7 @@ class Frame:
     files: Files
     own: Units = NO_OWN
     joint: Mapping[str, tuple[str, str] | None] = field(default_factory=dict)
+    indices: Mapping[str, Index | None] = field(default_factory=dict)
 
     def within(self, unit: Unit | None) -> Frame:
         """The same for a table with a unit of its own."""

@@ -1,4 +1,4 @@
-"""What follows from the declarations: one graph of equations, the inputs, what is watched, the times; and all mistakes among them."""
+"""What follows from the declarations: rates and starts, what is watched and answered; and all mistakes among them."""
 
 from __future__ import annotations
 
@@ -9,31 +9,36 @@ from typing import Any
 from uq.analysis.ask import Quantity
 from uq.errors import ExpressionError, ValueMistake, suggest
 from uq.inputs.dependence import Dependences
-from uq.inputs.inputs import Input
 from uq.lang.graph import Node
-from uq.lang.scope import TableUnits
+from uq.lang.scope import Index
 from uq.lang.take import CourseAsked, TakeResult
 from uq.study.dependence import judged
+from uq.study.fields import Sheet
+from uq.study.index import count_of, entries_of, flat
 from uq.study.locate import Path
-from uq.study.lowering import Lowering
-from uq.study.names import WORDS, declared, later_names
+from uq.study.lowering import Wanted
+from uq.study.names import WORDS
 from uq.study.notes import Notes
-from uq.study.order import order
 from uq.study.plan import times_inside
+from uq.study.quantities import Quantities, labels_of, over_of
 from uq.study.sheets import Sheets
 from uq.study.uncertain import Uncertain
-from uq.units import NONE, Unit, parse_unit
+from uq.units import Unit
 
 
 @dataclass
 class Work:
-    """The pieces in the order in which they are found; `notes` gets what is wrong."""
+    """The pieces in the order in which they are found; `notes` gets what is wrong.
+
+    What repeats over an index is here entry by entry, in their order: state_names, starts, rates; watched and observed; limit_names,
+    limit_labels and conditions; quantities and outcomes.
+    """
 
     document: Mapping[str, Any]
     sheets: Sheets
     notes: Notes
-    inputs: list[Input] = field(default_factory=list)
     dependence: tuple[Dependences, ...] = ()
+    state_names: list[str] = field(default_factory=list)
     starts: list[Node | None] = field(default_factory=list)
     rates: list[Node | None] = field(default_factory=list)
     watched: list[Quantity] = field(default_factory=list)
@@ -44,14 +49,13 @@ class Work:
     asked: list[CourseAsked] = field(default_factory=list)
 
     def __post_init__(self) -> None:
-        names, later = declared(self.document), later_names(self.document)
-        self.low = Lowering(self.notes, names, later, self.sheets.unitless, self.sheets.time.unit or NONE, self.sheets.own)
+        self.found = Quantities(self.document, self.sheets, self.notes)
+        self.low, self.inputs, self.repeats = self.found.low, self.found.inputs, self.found.repeats
 
     def run(self) -> None:
         """Everything in turn."""
-        self.leaves()
+        self.found.run()
         self.depend()
-        self.terms()
         self.rates_and_starts()
         self.watch()
         self.limits()
@@ -60,46 +64,6 @@ class Work:
         if not self.inputs and not self.notes.mistakes:
             self.notes.at_key(("parameters",), "no uncertain number", "a distribution in at least one parameter or start")
 
-    def leaf(self, name: str, unit: Unit | None) -> None:
-        """A name of its own in the graph; without a unit it is broken."""
-        if unit is None:
-            self.low.broken.add(name)
-        else:
-            self.low.known[name] = (self.low.graph.name(name), unit)
-
-    def leaves(self) -> None:
-        """States, forcings, time, parameters and uncertain starts."""
-        sheets, low = self.sheets, self.low
-        self.leaf("time", sheets.time.unit)
-        for name, state in sheets.states.items():
-            self.leaf(name, state.unit)
-        for name, forcing in sheets.forcings.items():
-            self.leaf(name, forcing.unit)
-        for name, table in sheets.tables.items():
-            argument = table.values.get("of")
-            if argument is None or table.unit is None:
-                low.broken.add(name)
-            else:
-                low.tables[name] = TableUnits(parse_unit(argument.unit, sheets.own), table.unit)
-        for name, parameter in sheets.parameters.items():
-            self.leaf(name, parameter.unit)
-            given = parameter.values
-            if name in low.known and given.get("value") is not None and given.get("distribution") is None:
-                low.known[name] = (low.graph.number(given["value"]), low.known[name][1])
-            else:
-                low.fixed.add(name)
-            if parameter.whole is not None and parameter.whole.distribution is not None:
-                self.inputs.append(_input(name, parameter.whole.label or name, parameter.whole, parameter.unit))
-        for name, state in sheets.states.items():
-            start = state.values.get("start")
-            if isinstance(start, Uncertain):
-                own = f"{name}_start"
-                if own in low.declared:
-                    found = f"the name `{own}`, which the uncertain start of `{name}` has as an input"
-                    self.notes.at_key(low.declared[own], found, "another name")
-                low.fixed.add(own)
-                self.inputs.append(_input(own, f"{state.values.get('label') or name}, start", start, state.unit))
-
     def depend(self) -> None:
         """What is said about inputs that depend on each other."""
         sheets = self.sheets
@@ -107,46 +71,19 @@ class Work:
         unclear += [f"{name}_start" for name, sheet in sheets.states.items() if sheet.whole is None]
         self.dependence = judged(sheets.dependence, tuple(item.name for item in self.inputs), unclear, self.notes)
 
-    def terms(self) -> None:
-        """Terms, each after those it uses; cycles named in full."""
-        low, terms = self.low, self.sheets.terms
-        paths = {name: self.sheets.text_path("terms", name, self.document) for name in terms}
-        for name, sheet in terms.items():
-            if "value" in sheet.values:
-                low.tree(paths[name], sheet.values["value"])
-        ordered, cycles = order({name: low.used(paths[name]) for name in terms})
-        for cycle in cycles:
-            low.broken.update(cycle)
-            found = f"a cycle among terms: {' -> '.join([*cycle, cycle[0]])}"
-            remedy = "what depends on its own past is a state" if len(cycle) == 1 else ""
-            self.notes.at_key(("terms", cycle[0]), found, "terms that do not depend on themselves", remedy)
-        for name in ordered:
-            self.term(name, paths[name])
-
-    def term(self, name: str, path: Path) -> None:
-        """One term into the names known."""
-        sheet, low = self.sheets.terms[name], self.low
-        typed = None
-        if "value" in sheet.values and sheet.unit is None:
-            typed = low.typed(path, sheet.values["value"])
-        elif "value" in sheet.values:
-            typed = low.number(path, sheet.values["value"], sheet.unit, f"as its `unit` says for the term `{name}`")
-        if typed is None or name in low.known:
-            low.broken.add(name)
-        else:
-            low.known[name] = (typed.node, typed.unit)
-
     def rates_and_starts(self) -> None:
         """Rates in the unit of the state per time, starts in the unit of the state."""
         time = self.sheets.time.unit
         for name, sheet in self.sheets.states.items():
-            unit, values = sheet.unit, sheet.values
+            unit, values, over = sheet.unit, sheet.values, over_of(sheet)
+            nothing: list[Node | None] = [None] * count_of(over or ())
+            self.state_names += entries_of(name, over or ())
             rate = None
-            if "rate" in values:
-                needed = self.per_time(name, unit, time)
-                rate = self.low.number(("states", name, "rate"), values["rate"], needed, f"for the rate of `{name}`")
-            self.rates.append(rate.node if rate is not None else None)
-            self.starts.append(self.start(name, values.get("start"), unit))
+            if "rate" in values and over is not None:
+                wanted = Wanted(self.per_time(name, unit, time), f"for the rate of `{name}`")
+                rate = self.low.number(("states", name, "rate"), values["rate"], wanted, over)
+            self.rates += nothing if rate is None else [each.node for each in rate]
+            self.starts += nothing if over is None or sheet.whole is None else self.start(name, sheet, over) or nothing
 
     def per_time(self, name: str, unit: Unit | None, time: Unit | None) -> Unit | None:
         """The unit of a rate; None where it is not known."""
@@ -156,15 +93,17 @@ class Work:
             self.notes.refused(("states", name, "unit"), mistake)
             return None
 
-    def start(self, name: str, start: object, unit: Unit | None) -> Node | None:
-        """The node of a state's start."""
+    def start(self, name: str, sheet: Sheet[Any], over: tuple[Index, ...]) -> list[Node | None] | None:
+        """The nodes of a state's start."""
+        start = sheet.values.get("start")
         if isinstance(start, Uncertain):
-            return self.low.graph.name(f"{name}_start")
-        if isinstance(start, float):
-            return self.low.graph.number(start)
+            return [self.low.graph.name(entry) for entry in entries_of(f"{name}_start", over)]
+        if isinstance(start, float | tuple):
+            return [self.low.graph.number(value) for value in flat(start, over)]
         if isinstance(start, str):
-            typed = self.low.number(("states", name, "start"), start, unit, f"for the start of `{name}`", fixed_only=True)
-            return typed.node if typed is not None else None
+            wanted = Wanted(sheet.unit, f"for the start of `{name}`")
+            typed = self.low.number(("states", name, "start"), start, wanted, over, fixed_only=True)
+            return None if typed is None else [each.node for each in typed]
         return None
 
     def watch(self) -> None:
@@ -174,23 +113,37 @@ class Work:
         usable = [*sheets.states, *sheets.terms]
         for index, name in enumerate(asked):
             path = ("plan", "watch", index)
+            nodes = self.nodes(name)
             if name not in usable:
                 found = f"the {WORDS[str(low.declared[name][0])]} `{name}`" if name in low.declared else f"the unknown name `{name}`"
-                self.notes.at_value(path, found, "a state or a term", suggest(name, usable))
-            elif name in low.known and low.known[name][0].truth:
+                self.notes.at_value(path, found, "a state or a term", _watch_remedy(name, usable))
+            elif nodes and nodes[0].truth:
                 self.notes.at_value(path, f"`{name}`, which is true or false", "a number", "write it as a limit, or where(condition, 1, 0)")
         for name in asked or sheets.states:
-            if name in low.known and name in usable:
-                node, unit = low.known[name]
+            if name in usable:
                 sheet = sheets.states.get(name) or sheets.terms[name]
-                self.watched.append(_quantity(name, sheet.values, unit))
-                self.observed.append(node)
+                nodes = self.nodes(name)
+                self.observed += nodes
+                self.watched += _quantities(name, sheet, self.unit(name), over_of(sheet) or ()) if nodes else []
+
+    def nodes(self, name: str) -> tuple[Node, ...]:
+        """The nodes of a name, one for every entry; nothing where it is not known."""
+        repeated = self.low.repeated.get(name)
+        if repeated is not None:
+            return repeated.nodes
+        return (self.low.known[name][0],) if name in self.low.known else ()
+
+    def unit(self, name: str) -> Unit:
+        """The unit of a name that is known."""
+        return self.low.repeated[name].unit if name in self.low.repeated else self.low.known[name][1]
 
     def limits(self) -> None:
         """Conditions of limits and the times at which they are quoted."""
         for name, sheet in self.sheets.limits.items():
-            if "when" in sheet.values:
-                self.conditions.append(self.low.condition(("limits", name, "when"), sheet.values["when"]))
+            over = over_of(sheet)
+            if "when" in sheet.values and over is not None:
+                self.conditions += self.low.condition(("limits", name, "when"), sheet.values["when"], over) or [None] * count_of(over)
+                self.found.named(name, sheet, over)
             time = self.sheets.time.whole
             if time is not None and sheet.values.get("by"):
                 for path, mistake in times_inside(("limits", name, "by"), sheet.values["by"], time, "times"):
@@ -199,14 +152,16 @@ class Work:
     def take(self) -> None:
         """Outcomes and the courses they are taken from."""
         for name, sheet in self.sheets.outcomes.items():
-            if "take" in sheet.values and self.sheets.time.unit is not None:
-                unit, path, what = sheet.unit, ("outcomes", name, "take"), f"as its `unit` says for the outcome `{name}`"
-                taken = self.low.take(path, sheet.values["take"], unit, what, len(self.asked))
+            over = over_of(sheet)
+            if "take" in sheet.values and self.sheets.time.unit is not None and over is not None:
+                path, wanted = ("outcomes", name, "take"), Wanted(sheet.unit, f"as its `unit` says for the outcome `{name}`")
+                taken = self.low.take(path, sheet.values["take"], wanted, len(self.asked), over)
                 if taken is not None:
-                    self.windows(path, taken)
-                    self.asked += taken.courses
-                    self.outcomes.append(taken.node)
-                    self.quantities.append(_quantity(name, sheet.values, unit or taken.unit))
+                    self.windows(path, taken[0])
+                    self.asked += [course for each in taken for course in each.courses]
+                    self.outcomes += [each.node for each in taken]
+                    self.quantities += _quantities(name, sheet, sheet.unit or taken[0].unit, over)
+                    self.found.named(name, sheet, over)
 
     def windows(self, path: Path, taken: TakeResult) -> None:
         """The windows of courses must lie inside the time of the study."""
@@ -236,21 +191,16 @@ class Work:
                     self.notes.at_value(path, found, said, f'add a row at {edge:g}, or say what holds: outside = "hold"')
 
 
-def _input(name: str, label: str, given: Any, unit: Unit | None) -> Input:
-    unit = unit or NONE
-    return Input(
-        name,
-        label,
-        unit.text,
-        given.distribution,
-        given.source,
-        given.kind,
-        given.evidence,
-        given.group,
-        unit.difference().text if unit.temperature == "scale" else unit.text,
-    )
+def _watch_remedy(name: str, usable: list[str]) -> str:
+    """What was probably meant: a name nearby, or one entry of what repeats."""
+    if "[" in name and name.partition("[")[0] in usable:
+        return f'watch all of them, or give this one a name in [terms]: one = "{name}"'
+    return suggest(name, usable)
 
 
-def _quantity(name: str, values: Mapping[str, Any], unit: Unit) -> Quantity:
-    text = values.get("unit") or unit.text
-    return Quantity(name, values.get("label") or name, text, unit.difference().text if unit.temperature == "scale" else text)
+def _quantities(name: str, sheet: Sheet[Any], unit: Unit, over: tuple[Index, ...]) -> list[Quantity]:
+    """A quantity that is answered, or one for every entry."""
+    text = sheet.values.get("unit") or unit.text
+    difference = unit.difference().text if unit.temperature == "scale" else text
+    entries = zip(entries_of(name, over), labels_of(sheet.values.get("label") or name, over), strict=True)
+    return [Quantity(entry, label, text, difference) for entry, label in entries]

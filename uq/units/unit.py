@@ -5,6 +5,7 @@ In: units. Out: their products, powers, comparisons, conversions and texts. Must
 
 from __future__ import annotations
 
+import functools
 from collections.abc import Iterable
 from dataclasses import dataclass, replace
 from fractions import Fraction
@@ -51,10 +52,10 @@ class Unit:
         return self.text
 
     def __mul__(self, other: Unit) -> Unit:
-        return self._with(other, 1)
+        return _product(self, other, 1)
 
     def __truediv__(self, other: Unit) -> Unit:
-        return self._with(other, -1)
+        return _product(self, other, -1)
 
     def __pow__(self, power: Fraction | int) -> Unit:
         power = Fraction(power)
@@ -73,7 +74,7 @@ class Unit:
         """Whether a value may be added to one in the other unit as it stands: dimension, factor (to 1e-12) and temperature scale agree."""
         return self is other or (
             self.dimension == other.dimension
-            and abs(self.factor - other.factor) <= _SAME * other.factor
+            and (self.factor == other.factor or abs(self.factor - other.factor) <= _SAME * other.factor)
             and self.offset == other.offset
             and (self.temperature == "scale") == (other.temperature == "scale")
         )
@@ -129,13 +130,6 @@ class Unit:
         size = [] if self.factor == 1 else [repr(float(self.factor)).removesuffix(".0")]
         return " ".join([*size, *(_power(name, power, "") for name, power in self.dimension if name in _SI)]) or "1"
 
-    def _with(self, other: Unit, sign: int) -> Unit:
-        self._must_multiply()
-        other._must_multiply()
-        factor = self.factor * other.factor if sign > 0 else self.factor / other.factor
-        spellings = tuple(dict((*self.spellings, *other.spellings)).items())
-        return _made(_joined(self.parts, other.parts, sign), _sorted(_joined(self.dimension, other.dimension, sign)), factor, spellings)
-
     def _must_multiply(self) -> None:
         if self.temperature == "scale":
             remedy = "use K: only differences, shifts and comparisons work on such a scale"
@@ -143,6 +137,17 @@ class Unit:
 
 
 NONE = Unit("1", (), (), Fraction(1))
+
+
+# What repeats over an index has the same products in every entry.
+@functools.lru_cache(maxsize=4096)
+def _product(one: Unit, other: Unit, sign: int) -> Unit:
+    """The product of two units, or with the sign -1 their quotient."""
+    one._must_multiply()
+    other._must_multiply()
+    factor = one.factor * other.factor if sign > 0 else one.factor / other.factor
+    spellings = tuple(dict((*one.spellings, *other.spellings)).items())
+    return _made(_joined(one.parts, other.parts, sign), _sorted(_joined(one.dimension, other.dimension, sign)), factor, spellings)
 
 
 def _made(parts: Powers, dimension: Powers, factor: Fraction, spellings: tuple[tuple[str, str], ...]) -> Unit:
