@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import importlib.util
 import subprocess
 import sys
 from pathlib import Path
@@ -86,7 +87,8 @@ def test_without_the_extra_a_run_says_how_to_install_it(tmp_path: Path, monkeypa
 
 @pytest.mark.parametrize(("text", "expected"), [(SLURM, "slurm"), (PBS, "pbs")])
 def test_the_script_that_would_be_submitted_is_shown(tmp_path: Path, text: str, expected: str) -> None:
-    pytest.importorskip("dask_jobqueue", reason="the extra `batch` is not installed")
+    if importlib.util.find_spec("dask_jobqueue") is None:  # its import would change what Ctrl-C does in this process
+        pytest.skip("the extra `batch` is not installed")
     file = written(tmp_path, text)
     command = [sys.executable, "-m", "uq", "run", "no-study.toml", "--cluster", str(file), "--show-script"]
     done = subprocess.run(command, capture_output=True, text=True, check=False, cwd=tmp_path)
@@ -100,6 +102,22 @@ def test_the_script_that_would_be_submitted_is_shown(tmp_path: Path, text: str, 
     assert {"slurm": "--nworkers 8", "pbs": "--nworkers 4"}[expected] in last
     assert {"slurm": "--lifetime 6480s --lifetime-stagger 360s", "pbs": "--lifetime 4860s --lifetime-stagger 270s"}[expected] in last
     assert "--nthreads 1" in last
+
+
+HEARD = """
+import signal, sys
+from pathlib import Path
+from uq.running.batch import read_batch_system, script
+script(read_batch_system(Path(sys.argv[1])))
+assert "dask_jobqueue" in sys.modules
+assert signal.getsignal(signal.SIGINT) is signal.default_int_handler
+"""
+
+
+def test_ctrl_c_is_heard_as_before_where_a_batch_system_is_used(tmp_path: Path) -> None:
+    if importlib.util.find_spec("dask_jobqueue") is None:
+        pytest.skip("the extra `batch` is not installed")
+    subprocess.run([sys.executable, "-c", HEARD, str(written(tmp_path, SLURM))], check=True)
 
 
 def test_a_script_is_only_shown_of_a_cluster_file() -> None:

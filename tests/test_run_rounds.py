@@ -6,6 +6,7 @@ import itertools
 import os
 import random
 import signal
+import sys
 import threading
 import time
 from dataclasses import dataclass, field
@@ -24,7 +25,7 @@ from uq.running.meter import Count, Meter
 from uq.running.observer import Progress, Silent
 from uq.running.part import Gathering, Part, joined, together
 from uq.running.rounds import Crew, Spread, solve_blocks, still_open
-from uq.running.threads import aside
+from uq.running.threads import aside, threads
 from uq.store.saved import Saved
 
 
@@ -233,6 +234,26 @@ def test_ctrl_c_sets_the_stop_flag_and_waits_for_the_threads() -> None:
     presser.join()
     assert observer.stop[0] == 1
     assert not [t for t in threading.enumerate() if t.name.startswith("uq")]
+
+
+def test_a_pool_comes_to_rest_when_the_process_is_told_to_exit() -> None:
+    observer = Silent()
+
+    def kernel() -> None:
+        for _ in range(30_000):  # half a minute at the most, should nobody stop it
+            if observer.stop[0]:
+                return
+            time.sleep(0.001)
+
+    def exits() -> None:
+        with threads(1, observer) as pool:
+            pool.submit(kernel)
+            sys.exit()
+
+    begin = time.monotonic()
+    with pytest.raises(SystemExit):
+        exits()
+    assert time.monotonic() - begin < 15
 
 
 def test_the_meter_adds_up_and_tells() -> None:

@@ -6,6 +6,7 @@ The jobs are made by dask-jobqueue, which is an optional extra: pip install "uq-
 from __future__ import annotations
 
 import re
+import signal
 from collections.abc import Iterator
 from contextlib import contextmanager
 from dataclasses import dataclass
@@ -152,10 +153,15 @@ def script(system: BatchSystem) -> str:
 @contextmanager
 def prepared(system: BatchSystem) -> Iterator[Any]:
     """A cluster of dask-jobqueue without any job yet. Raises UseMistake where that is not installed."""
+    # Its import has Ctrl-C end the whole process at once; what is done would not be kept.
+    heard = signal.getsignal(signal.SIGINT)
     try:
         import dask_jobqueue
     except ImportError:
         raise UseMistake("a cluster file without dask-jobqueue installed", INSTALL, key="cluster") from None
+    finally:
+        if heard is not None and signal.getsignal(signal.SIGINT) is not heard:
+            signal.signal(signal.SIGINT, heard)
     kinds = {"slurm": dask_jobqueue.SLURMCluster, "pbs": dask_jobqueue.PBSCluster}
     cluster = kinds[system.system](**arguments(system))
     try:

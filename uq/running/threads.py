@@ -34,6 +34,9 @@ def threads(count: int, observer: Observer) -> Iterator[ThreadPoolExecutor]:
     except (KeyboardInterrupt, Interrupted):
         observer.stop[0] = 1
         raise Interrupted("interrupted; no result was written") from None
+    except SystemExit:  # of somebody else's signal handler: without the flag the pool would never be at rest
+        observer.stop[0] = 1
+        raise
     finally:
         pool.shutdown(wait=True, cancel_futures=True)
 
