@@ -22,6 +22,7 @@ from typing import Any
 from tests import killed
 from tests.kill_runs import BINNED, KEPT, PRECISE
 from tests.killed import Fault, around, cut_off
+from uq.errors import EXIT_SERVICE
 from uq.queue.database import Database
 from uq.queue.intake import Terms, intake_of
 from uq.queue.queue import Queue
@@ -107,7 +108,7 @@ def serve() -> None:
                 runner(asked)
             except BaseException as error:  # noqa: BLE001 - the fork must end here, whatever happens
                 sys.stderr.write(f"{type(error).__name__}: {error}\n")
-                os._exit(1)
+                os._exit(getattr(error, "exit_code", 1))
             os._exit(0)
         for seconds in asked.get("workers", ()):
             time.sleep(seconds)
@@ -225,10 +226,10 @@ def survived_on_processes(server: Server, home: Path, rounds: int, seed: int, wa
     asked = {"home": str(home), "log": str(home / "log.txt"), "cluster": "local:2"}
     for _ in range(rounds):
         workers = [chosen.uniform(1.0, 4.0) for _ in range(2)]
-        assert server.run(**asked, workers=workers, seconds=chosen.uniform(0.1, 3.0)) in (0, -signal.SIGKILL)
+        assert server.run(**asked, workers=workers, seconds=chosen.uniform(0.1, 3.0)) in (0, EXIT_SERVICE, -signal.SIGKILL)
     # What may pass is waited for: up to an hour.
     for ahead in range(10):
-        assert server.run(**asked, ahead=3600.0 * ahead) == 0, (home / "log.txt").read_text()
+        assert server.run(**asked, ahead=3600.0 * ahead) in (0, EXIT_SERVICE), (home / "log.txt").read_text()
         if all(job.state == "done" for job in queue.jobs()):
             break
     assert all_done(queue) == wanted

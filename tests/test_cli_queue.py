@@ -14,6 +14,10 @@ import pytest
 
 from tests.test_cli_run import uq
 from tests.test_queue_runner import LONGER, ROUNDS, SMALL
+from uq.pipeline import run as run_study
+from uq.queue.deciding import CUT_SHORT
+from uq.queue.queue import Queue
+from uq.study.read import parse_study
 
 BATCH = """
 schema = 1
@@ -68,15 +72,22 @@ def until(place: Path, test: str, number: int = 1) -> dict[str, object]:
 def test_a_study_is_handed_in_once_worked_off_and_shown_by_its_number(place: Path) -> None:
     assert said(place, "jobs") == "no jobs\nNext: uq submit STUDY\n"
     assert said(place, "submit", "decay.toml").startswith("job 1 (decay) waiting\n")
-    assert "handed in before" in said(place, "submit", "decay.toml")
+    assert said(place, "submit", "decay.toml").startswith("job 1 (decay) waiting; handed in before\nNext: uq work ")
+    again = said(place, "submit", "decay.toml", "--priority", "3", "--deadline", "2990-01-01 00:00")
+    assert again.startswith(
+        "job 1 (decay) waiting: deadline 1 Jan 2990 00:00; priority 3; handed in before; its priority and deadline are now"
+    )
     (place / "decay.toml").unlink()
     assert "has a result" in said(place, "show", "1", code=2)
     assert said(place, "work", "--once") == ""
+    assert "`uq follow 1` says how it stands, `uq show 1` what came out" in said(place, "jobs", "1", code=2)
     shown = said(place, "show", "1")
     assert shown.startswith("Decay\n")
     assert said(place, "follow", "1") == shown
     assert json.loads(said(place, "follow", "1", "--json"))["attributes"]["members"] == 1024
     assert "done" in said(place, "jobs")
+    (place / "decay.toml").write_text(SMALL, encoding="utf-8")
+    assert said(place, "submit", "decay.toml").splitlines()[1:] == ["Next: uq show 1"]
     said(place, "extend", "1", "--members", "2048")
     (longer,) = (place / "results").iterdir()
     assert "members" in said(place, "compare", "1", str(longer))
@@ -85,16 +96,18 @@ def test_a_study_is_handed_in_once_worked_off_and_shown_by_its_number(place: Pat
 def test_a_batch_becomes_a_job_per_combination_and_a_table(place: Path) -> None:
     assert "5 jobs, 5 of them new" in said(place, "submit", "night.toml")
     assert "5 jobs, 0 of them new" in said(place, "submit", "night.toml")
+    (place / "late.toml").write_text(BATCH, encoding="utf-8")
+    assert said(place, "submit", "late.toml").splitlines()[-1] == "Next: uq work      uq jobs --batch late"
     said(place, "work", "--once")
-    table = said(place, "jobs", "--batch")
+    table = said(place, "jobs", "night", "--batch")
     assert table.startswith("Nightly review (night): 5 jobs: 5 done\n")
     head = next(line for line in table.splitlines() if line.split()[:1] == ["fall"])
     assert head.split()[:5] == ["fall", "mean", "seed", "job", "state"]
     rows = [line.split()[:4] for line in table.splitlines() if line.split()[:1] in (["0.4"], ["0.5"])]
     assert rows == [["0.4", "1", "1", "done"], ["0.4", "2", "2", "done"], ["0.5", "1", "3", "done"], ["0.5", "2", "4", "done"]]
     assert " to " in table
-    assert said(place, "jobs", "night", "--batch") == table
-    assert "`nigt`, expected the name of a batch, one of night" in said(place, "jobs", "nigt", code=2)
+    assert table in said(place, "jobs", "--batch")
+    assert "`nigt`, expected the name of a batch, one of late, night" in said(place, "jobs", "nigt", code=2)
     assert [each["batch"] for each in json.loads(said(place, "jobs", "night", "--json"))["jobs"]] == ["night"] * 5
 
 
@@ -117,6 +130,7 @@ def test_jobs_are_paused_resumed_cancelled_and_retried(place: Path) -> None:
 )
 def test_a_time_that_cannot_stand_is_told(place: Path, wish: tuple[str, str], told: str) -> None:
     error = said(place, "submit", "decay.toml", *wish, code=2)
+    assert f"uq: {wish[0]}: found " in error
     assert wish[1] in error
     assert told in error
 
@@ -176,3 +190,25 @@ def test_leaving_off_to_follow_leaves_the_job_alone(place: Path) -> None:
         _, told = follower.communicate(timeout=60)
     assert (follower.returncode, "job 1 goes on" in told) == (6, True)
     assert job(place)["state"] == "waiting"
+
+
+def test_the_answer_so_far_is_shown_until_there_is_another(place: Path) -> None:
+    queue = Queue(place / "home")
+    said(place, "submit", "decay.toml")
+    with queue.claim("a") as claim:  # type: ignore[union-attr]
+        assert claim is not None
+        run_study(parse_study(SMALL), claim.folder)
+        claim.finish("partial", CUT_SHORT)
+    queue.close()
+    shown = said(place, "show", "1")
+    said(place, "retry", "1")
+    done = uq(place, "show", "1")
+    assert (done.returncode, done.stdout) == (0, shown)
+    assert done.stderr == "uq: job 1 is waiting; this is the answer that it gave before, in attempt 1\n"
+
+
+def test_a_cluster_that_is_away_is_said_with_a_code_of_its_own_and_the_job_waits(place: Path) -> None:
+    said(place, "submit", "decay.toml")
+    told = said(place, "work", "--once", "--cluster", "tcp://127.0.0.1:9", code=8)
+    assert told.splitlines()[-1].startswith("uq: job 1 waits for the cluster")
+    assert job(place)["state"] == "held"

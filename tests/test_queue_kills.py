@@ -13,6 +13,7 @@ import pytest
 
 from tests.queue_kills import Server, all_done, handed_in, survived, survived_on_processes, undisturbed
 from tests.test_run_cluster import scheduler, there, worker
+from uq.errors import EXIT_SERVICE
 from uq.queue.queue import Queue
 
 pytestmark = pytest.mark.skipif(os.name == "nt", reason="signals of this kind are POSIX")
@@ -54,7 +55,7 @@ def test_jobs_whose_scheduler_was_killed_wait_and_go_on(tmp_path: Path, server: 
 
         killer = threading.Thread(target=kill_while_solving)
         killer.start()
-        assert server.run(**asked, cluster=address) == 0, (tmp_path / "log.txt").read_text()
+        assert server.run(**asked, cluster=address) == EXIT_SERVICE, (tmp_path / "log.txt").read_text()
         killer.join()
     assert {job.state for job in queue.jobs()} <= {"held", "done"}
     assert queue.jobs(states=["held"])

@@ -12,8 +12,8 @@ import pytest
 from tests.queue_models import DAY, HOUR, NOON, Clock, claimed, intake, queue_in
 from uq.clock import Window
 from uq.errors import EXIT_USAGE, UseMistake
-from uq.queue.queue import Queue
-from uq.queue.states import ENDED, State, requests
+from uq.queue.queue import ASKED, Queue
+from uq.queue.states import ENDED, Event, State, requests
 from uq.store.hold import hold
 
 ROOT = Path(__file__).parent.parent
@@ -46,10 +46,8 @@ def test_a_user_may_ask_for_what_the_table_has_and_is_told_what_is_possible_else
             assert getattr(queue, what)(number).state is not state
             assert queue.history(number)[-1].event == what
         else:
-            words = ", ".join(possible) or "nothing"
-            with pytest.raises(
-                UseMistake, match=f"{what} of job {number}, which is {state}, expected what is possible then: {words}"
-            ) as told:
+            words = f"possible is: {', '.join(possible)}" if possible else f"it has ended, and `uq show {number}`"
+            with pytest.raises(UseMistake, match=f"^job {number} is {state} and cannot be {ASKED[Event(what)]}; {words}") as told:
                 getattr(queue, what)(number)
             assert told.value.exit_code == EXIT_USAGE
             assert queue.job(number).state is state

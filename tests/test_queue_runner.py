@@ -13,12 +13,13 @@ import pytest
 import uq.pipeline
 from tests.test_cli_run import LONG
 from uq.clock import Window
-from uq.errors import StorageError, UseMistake
+from uq.errors import FatalMemberError, NoClusterError, StorageError, UseMistake
 from uq.queue.bell import Bell
 from uq.queue.intake import Terms, intake_of
 from uq.queue.job import Job
 from uq.queue.queue import Queue
 from uq.queue.runner import Means, Runner
+from uq.running.observer import tell_of
 from uq.store.open import open_result
 from uq.study.read import parse_study
 
@@ -292,3 +293,64 @@ def test_progress_is_told_while_a_precision_is_sought(bench: Any) -> None:
     made.work(look)
     assert {each["what"] for each in seen} == {"x at time 1500", "v at time 1500"}
     assert {each["settled"] for each in seen} == {False}
+
+
+def test_a_deadline_in_a_closed_window_is_met_without_solving_and_without_a_cluster(bench: Any) -> None:
+    from uq.clock import When
+
+    # From 13:46:40 UTC; the window closes at 14:00 and the deadline is at 15:00.
+    made = bench(ROUNDS, now=1_000_000.0, window=Window("13:00", "14:00", "UTC"), deadline=When("1970-01-12 15:00Z"))
+
+    def closes() -> None:
+        while made.job.progress["done"] < 3072:
+            time.sleep(0.05)
+        made.now = 1_000_000.0 + 1800
+
+    made.work(closes)
+    assert made.job.state == "held"
+    made.now = 1_000_000.0 + 5000
+    elsewhere = Runner(made.queue, "b", made.bell, made.heard.append, Means(threads=1, cluster="tcp://127.0.0.1:9"), made.clock)
+    elsewhere.work(once=True)
+    assert (made.job.state, "deadline" in made.job.reason) == ("partial", True)
+    assert "done" not in made.job.progress, "nothing was solved"
+    assert 0 < open_result(made.job.folder).attributes["members"] < 16384
+
+
+def test_a_cluster_that_is_away_keeps_the_jobs_waiting_and_is_told_at_the_end(bench: Any, monkeypatch: pytest.MonkeyPatch) -> None:
+    made = bench()
+    made.queue.submit([intake_of(parse_study(ROUNDS), made.clock())])
+    runner = Runner(made.queue, "bench", made.bell, made.heard.append, Means(cluster="tcp://127.0.0.1:9"), made.clock)
+    monkeypatch.setattr("uq.running.cluster.CONNECTED_WITHIN", 0.5)
+    with pytest.raises(NoClusterError, match=r"^jobs 1, 2 wait for the cluster.*no scheduler answers at tcp://127.0.0.1:9"):
+        runner.work(once=True)
+    assert {made.queue.job(number).state for number in (1, 2)} == {"held"}
+    assert NoClusterError.exit_code == 8
+
+
+def test_a_result_that_cannot_be_taken_over_is_trouble_with_the_disk(bench: Any, monkeypatch: pytest.MonkeyPatch) -> None:
+    made = bench()
+    with made.queue.claim("dies") as claim:
+        from uq.queue.attempt import study_of
+
+        uq.pipeline.run(study_of(claim), claim.folder)
+
+    def broken(folder: Path) -> None:
+        raise OSError(5, "Input/output error")
+
+    monkeypatch.setattr("uq.queue.attempt.rmtree", broken)
+    made.work()
+    assert (made.job.state, "cannot be taken over" in made.job.reason, "Input/output error" in made.job.reason) == ("held", True, True)
+
+
+def test_a_member_that_ends_its_workers_is_logged_with_its_place(bench: Any, monkeypatch: pytest.MonkeyPatch) -> None:
+    made = bench()
+
+    def fatal(*arguments: object, observer: Any, **named: object) -> None:
+        tell_of(observer, "its workers died", "3/16-31")
+        raise FatalMemberError("The member in row 21", "3/21", "1")
+
+    monkeypatch.setattr(uq.pipeline, "run", fatal)
+    made.work()
+    assert made.job.state == "failed"
+    assert any(line.endswith("job 1 attempt 1 block 3/16-31: its workers died") for line in made.heard)
+    assert any(" job 1 attempt 1 block 3/21 member 1: " in line for line in made.heard)

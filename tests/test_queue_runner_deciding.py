@@ -77,8 +77,11 @@ def test_a_stopped_run_leaves_its_job_where_the_reason_wants_it(why: Order, step
     assert set(STOPPED) == {"", *(name for name, _ in ORDERS)}
 
 
-def test_only_a_closed_window_keeps_the_job_until_it_opens() -> None:
-    assert [why for why, step in STOPPED.items() if isinstance(step, GiveBack) and step.reopens] == ["window closed"]
+def test_only_a_cluster_that_is_away_is_waited_for() -> None:
+    assert not [why for why, step in STOPPED.items() if isinstance(step, GiveBack) and (step.away or step.wait)]
+    away = after_trouble(Trouble("cluster", "no scheduler answers"))
+    assert away == GiveBack("no scheduler answers", wait=60.0, away=True)
+    assert after_trouble(Trouble("use", "strange workers")) == GiveBack("strange workers", wait=60.0)
 
 
 def test_a_deadline_before_any_answer_fails_and_says_so() -> None:

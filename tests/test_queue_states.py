@@ -135,7 +135,7 @@ class History:
         if self.model.ask(number, what, self.clock.now):
             getattr(self.queue, what)(number)
         else:
-            with pytest.raises(UseMistake, match="what is possible then"):
+            with pytest.raises(UseMistake, match="cannot be"):
                 getattr(self.queue, what)(number)
 
     def happens(self, what: str, draw: Random) -> None:

@@ -11,9 +11,10 @@ from pathlib import Path
 import pytest
 
 from tests.queue_models import NOON, claimed, intake, queue_in
-from uq.clock import Window
+from uq.clock import When, Window
 from uq.errors import StorageError, UseMistake
 from uq.queue import folders as folders_module
+from uq.queue.deciding import CUT_SHORT, ENDED
 from uq.queue.intake import Terms, intake_of, intakes_of
 from uq.queue.job import Submitted
 from uq.queue.queue import Queue
@@ -175,6 +176,52 @@ def test_terms_say_when_and_how_a_job_runs(tmp_path: Path) -> None:
     made = intake_of(study, NOON, Terms(priority=2, retries=0), Window("13:00", "14:00", "UTC"))
     assert (made.priority, made.retries, made.not_before, made.deadline) == (2, 0, None, None)
     assert (made.name, made.title, made.members, made.fingerprint) == (study.name, study.title, study.plan.members, study.fingerprint)
+
+
+def test_what_is_stated_is_taken_over_by_an_equal_job_that_has_not_ended(tmp_path: Path) -> None:
+    queue = queue_in(tmp_path)
+    queue.submit([intake(priority=1, deadline=NOON + 5)])
+    assert queue.submit([intake(priority=0, deadline=None)]) == [Submitted(1, False)]
+    assert (queue.job(1).priority, queue.job(1).deadline) == (1, NOON + 5)
+    night = Window("22:00", "06:00", "UTC")
+    stated = frozenset(("priority", "deadline", "not_before", "window", "retries"))
+    said = {"priority": 4, "deadline": NOON + 9, "not_before": NOON + 3, "window": night, "retries": 1}
+    (found,) = queue.submit([intake(**said, stated=stated)])
+    assert (found.new, found.retried, set(found.taken)) == (False, False, set(stated))
+    job = queue.job(1)
+    assert {name: getattr(job, name) for name in said} == said
+    assert queue.submit([intake(**said, stated=stated)]) == [Submitted(1, False)]
+
+
+def test_a_running_job_hears_of_another_deadline_at_its_next_beat(tmp_path: Path) -> None:
+    queue = queue_in(tmp_path)
+    queue.submit([intake(deadline=NOON + 5)])
+    with claimed(queue) as claim:
+        queue.submit([intake(deadline=NOON + 9, stated=frozenset(("deadline",)))])
+        assert claim.deadline == NOON + 5
+        claim.beat()
+        assert claim.deadline == NOON + 9
+
+
+@pytest.mark.parametrize(("reason", "again"), [(CUT_SHORT, True), (ENDED["members"].reason, False)])
+def test_a_job_that_its_deadline_has_cut_short_goes_on_with_another_deadline(tmp_path: Path, reason: str, again: bool) -> None:
+    queue = queue_in(tmp_path)
+    queue.submit([intake(deadline=NOON - 1)])
+    with claimed(queue) as claim:
+        claim.finish("partial", reason)
+    assert queue.submit([intake(priority=3, stated=frozenset(("priority",)))]) == [Submitted(1, False)]
+    (found,) = queue.submit([intake(deadline=NOON + 60, stated=frozenset(("deadline",)))])
+    assert (found.job, found.new, found.retried) == (1, False, again)
+    assert queue.job(1).state == ("waiting" if again else "partial")
+    assert queue.job(1).deadline == (NOON + 60 if again else NOON - 1)
+
+
+def test_only_what_is_said_is_stated(tmp_path: Path) -> None:
+    study = read_study(ROOT / "configs" / "crane-sway.toml")
+    assert intake_of(study, NOON).stated == frozenset()
+    assert intake_of(study, NOON, Terms(priority=0)).stated == {"priority"}
+    terms = Terms(deadline=When("06:00"), not_before=When("04:00"), retries=1)
+    assert intake_of(study, NOON, terms, Window("13:00", "14:00", "UTC")).stated == {"deadline", "not_before", "retries", "window"}
 
 
 SUBMITTER = """

@@ -103,3 +103,23 @@ def test_a_job_given_back_until_a_time_is_held_until_then_and_no_retry_is_spent(
     with claimed(queue) as claim:
         claim.give_back("the runner was told to end")
     assert queue.job(1).state is State.WAITING
+
+
+def test_at_its_deadline_a_job_may_start_whatever_its_window_but_not_within_a_wait() -> None:
+    assert due(NOON, None, None, NIGHT, NOON + HOUR) == NOON + HOUR
+    assert due(NOON, NOON + 2 * HOUR, None, NIGHT, NOON - HOUR) == NOON
+    assert due(NOON, None, None, NIGHT, NOON + 11 * HOUR) == NOON + 10 * HOUR
+    assert due(NOON, None, Hold(NOON - 1, NOON + 60), NIGHT, NOON - 1) == NOON + 60
+
+
+def test_a_job_whose_window_is_closed_is_claimed_at_its_deadline_and_before_all_others(tmp_path: Path) -> None:
+    clock = Clock()
+    queue = queue_in(tmp_path, clock)
+    queue.submit([intake("a", priority=9), intake("b", window=NIGHT, deadline=NOON + HOUR), intake("c", window=NIGHT)])
+    queue.pause(1)
+    assert (queue.claim("a"), queue.next_time()) == (None, NOON + HOUR)
+    clock.now += HOUR
+    queue.resume(1)
+    assert [claimed(queue).job.number for _ in range(2)] == [2, 1]
+    assert queue.claim("a") is None
+    assert queue.next_time() == NOON + 10 * HOUR

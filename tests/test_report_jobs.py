@@ -9,6 +9,7 @@ from typing import Any
 
 import pytest
 
+from uq.clock import Window
 from uq.report.batches import batches_text, settling
 from uq.report.jobs import SILENT, STALLED, Now, counted, jobs_json, jobs_text, short_keys, stands
 from uq.report.kept import KeptAnswer, called, of_json
@@ -16,6 +17,7 @@ from uq.report.plain import laid
 
 # 1 December 2026, 22:41 UTC.
 NOW = Now(1796164860.0, UTC)
+ATHENS = Window("20:00", "07:00", "Europe/Athens")
 
 
 @dataclass
@@ -34,6 +36,7 @@ class Told:
     priority: int = 0
     until: float | None = None
     deadline: float | None = None
+    window: Window | None = None
     beat: float | None = None
     moved: float | None = None
     started: float | None = None
@@ -60,10 +63,13 @@ SOLVING = {"done": 32768, "total": 131072, "failed": 2, "seconds_left": 363.2, "
         (Told(state="held", until=NOW.time + 3600), "until 23:41"),
         (Told(state="held", until=NOW.time + 86400, reason="cannot write"), "until 2 Dec 22:41; cannot write"),
         (Told(deadline=NOW.time + 400 * 86400), "deadline 5 Jan 2028 22:41"),
+        (Told(deadline=NOW.time + 3600, window=ATHENS), "deadline 23:41 (01:41 Europe/Athens)"),
+        (Told(state="held", until=NOW.time + 600, window=ATHENS), "until 22:51 (00:51 Europe/Athens)"),
+        (Told(state="held", until=NOW.time + 600, window=Window("22:00", "06:00", "Europe/London")), "until 22:51"),
         (Told(**RUNNING), "starting"),
         (Told(**RUNNING, progress=SOLVING), "32768 of 131072 solves, 6 min 3 s left, 2 failed"),
         (Told(**RUNNING, progress={**SOLVING, "done": 131072, "failed": 0}), "131072 of 131072 solves, round 5"),
-        (Told(state="paused", progress=SOLVING), "32768 of 131072 solves, 6 min 3 s left, 2 failed kept"),
+        (Told(state="paused", progress=SOLVING), "32768 of 131072 solves kept, 2 failed"),
         (Told(state="done", started=NOW.time - 7500, ended=NOW.time), "ended 22:41, took 2 h 5 min"),
         (Told(state="cancelled", started=NOW.time - 7500, ended=NOW.time), "ended 22:41"),
         (Told(state="failed", ended=NOW.time, reason="a\x1b[2Jb"), "ended 22:41; a\\x1b[2Jb"),
@@ -143,3 +149,10 @@ def test_a_batch_lays_answers_out_against_what_was_changed() -> None:
     assert "  A Too warm by 6 h" in lines
     assert any(line.startswith("other: 1 job") for line in lines)
     assert batches_text({}, NOW, 100) == "no batches\nNext: uq submit BATCH"
+
+
+def test_rows_of_a_batch_are_in_the_order_of_what_was_changed_not_of_their_numbers() -> None:
+    values = [(10, "b"), (9.5, "b"), (9.5, "a"), ("none", "a")]
+    jobs = [Told(number=7 - place, state="waiting", changed={"parameters.k": k, "plan.s": s}) for place, (k, s) in enumerate(values)]
+    rows = [line.split()[:3] for line in batches_text({("night", ""): jobs}, NOW, 100).splitlines()]
+    assert rows[-4:] == [["9.5", "a", "5"], ["9.5", "b", "6"], ["10", "b", "7"], ["none", "a", "4"]]

@@ -22,8 +22,9 @@ from tests.kill_runs import KEPT, PRECISE
 from tests.test_run_resume import Stops, fingerprint
 from uq.errors import ClusterError, FatalMemberError, Interrupted, UseMistake
 from uq.running import cluster, fleet
+from uq.running.abroad import strict
 from uq.running.branch import forecasts_of
-from uq.running.fleet import ONE_THREAD
+from uq.running.fleet import KILLS, ONE_THREAD
 from uq.running.observer import Progress, Silent
 from uq.study.read import parse_study, read_study
 
@@ -197,3 +198,51 @@ def test_a_member_that_ends_its_worker_is_found_and_kept_as_a_study(tmp_path: Pa
     assert list(alone.negligible) == [study.plan.accuracy * scales["x"], 1e-5]
     # What was done before is gone on from.
     assert fingerprint(result) == fingerprint(uq.run(study, tmp_path / "calm"))
+
+
+def test_a_member_of_the_pilot_that_ends_its_worker_is_found_like_any_other(tmp_path: Path) -> None:
+    study, folder = parse_study(FATAL, name="fatal"), tmp_path / "result"
+    with pytest.MonkeyPatch.context() as patched:
+        patched.setenv("TESTED_WORKER", "fatal 0 3 0")
+        patched.setenv("DASK_DISTRIBUTED__WORKER__PRELOAD", HERE)
+        with pytest.raises(FatalMemberError) as caught:
+            uq.run(study, folder, cluster="local:2")
+    assert str(caught.value).startswith("The member in row 3 of replicate 0, A ended every process that solved it")
+    assert (caught.value.block, caught.value.member) == ("0/3", "0")
+    alone = read_study(folder / "fatal-member" / "study.toml")
+    assert np.array_equal(alone.inputs.values(np.full((1, 2), 0.5)), [inputs_of(0, 3)[0]])
+
+
+def test_a_worker_that_hangs_gets_nothing_to_solve_and_the_run_comes_to_its_end(
+    tmp_path: Path, calm: str, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    monkeypatch.setattr("uq.running.muster.ANSWERED_WITHIN", 10.0)
+    monkeypatch.setattr(cluster, "CLOSED_WITHIN", 0.5)
+    with ExitStack() as running:
+        address, _ = running.enter_context(scheduler(tmp_path))
+        hangs, _ = [running.enter_context(worker(tmp_path, address, f"w{number}")) for number in range(2)]
+        there(address, 2)
+        hangs.send_signal(signal.SIGSTOP)
+        observer = Does(0, lambda: None)
+        assert fingerprint(uq.run(parse_study(KEPT, name="killed"), tmp_path / "result", cluster=address, observer=observer)) == calm
+        (told,) = {words for words in observer.stages if "no answer within 10 s" in words}
+        assert told.count("tcp://") == 1
+
+
+def test_two_deaths_are_enough_on_a_scheduler_of_somebody_else_and_only_for_our_tasks(tmp_path: Path) -> None:
+    from distributed import Client, KilledWorker
+
+    with ExitStack() as running:
+        address, _ = running.enter_context(scheduler(tmp_path))
+        every = [running.enter_context(worker(tmp_path, address, f"w{number}")) for number in range(3)]
+        there(address, 3)
+        with Client(address, set_as_default=False) as client:
+            client.register_plugin(strict("uq-ours", KILLS), name="strict")
+            with pytest.raises(KilledWorker):
+                client.submit(os.kill, 0, signal.SIGKILL, key="uq-ours-1").result(timeout=LONG)
+            assert len(client.nthreads()) == 1
+            other = client.submit(os.kill, 0, signal.SIGKILL, key="theirs")
+            while client.nthreads():
+                time.sleep(0.1)
+            assert other.status == "pending"
+        assert [process.wait() for process in every] == [-signal.SIGKILL] * 3

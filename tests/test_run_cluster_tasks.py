@@ -14,7 +14,21 @@ from uq.running.abroad import unlike
 from uq.running.named import EXPECTED, named
 from uq.running.pace import Shape
 from uq.running.parcel import inner_blocks
-from uq.running.tasks import IN_FLIGHT, RESULT_BYTES, TASK_SECONDS, Culprit, Handout, Task, halves, inner_rows, task_rows, window
+from uq.running.tasks import (
+    IN_FLIGHT,
+    RESULT_BYTES,
+    TASK_SECONDS,
+    Culprit,
+    Handout,
+    PilotHandout,
+    Task,
+    blocks_together,
+    bundled,
+    halves,
+    inner_rows,
+    task_rows,
+    window,
+)
 
 PARTS = 5
 
@@ -134,6 +148,44 @@ def test_a_machine_that_dies_with_innocent_blocks_loses_nothing(seed: int, dead:
             rows += range(task.block.first, task.block.first + task.block.count)
     assert handout.culprit is None
     assert sorted(rows) == list(range(32))
+
+
+def test_short_blocks_go_together_and_long_ones_alone() -> None:
+    # 16 blocks of a millisecond on two cores: a task for each core. Of 0.05 s each: eight tasks of 0.1 s. Of half a second: eight tasks,
+    # four for each core; of a second, or with large results, one block in each.
+    assert [blocks_together(seconds, 0, 16, 2) for seconds in (0.001, 0.05, 0.5, 1.0)] == [8, 2, 2, 1]
+    assert blocks_together(0.001, RESULT_BYTES, 16, 2) == 1
+    assert blocks_together(0.001, 0, 16, 50) == 1
+    blocks = [("", Block(number, 0, 64)) for number in range(5)] + [("s", Block(0, 0, 64))]
+    tasks = list(bundled(blocks, {"": 2, "s": 3}))
+    assert [task.blocks for task in tasks] == [tuple(block for _, block in blocks[at : at + 2]) for at in (0, 2)] + [
+        (blocks[4][1],),
+        (blocks[5][1],),
+    ]
+    assert [task.words for task in tasks[1:]] == ["2/0-63, 3/0-63", "4/0-63", "0/0-63 of s"]
+
+
+def test_a_task_of_several_blocks_comes_apart_by_these_first() -> None:
+    one, two, three = (Block(number, 0, 2) for number in range(3))
+    assert halves(Task("", one, None, (two, three)), PARTS) == (Task("", one), Task("", two, None, (three,)))
+    handout = Handout([Task("", one, None, (two,))], {"": PARTS})
+    handout.died(*handout.due(1))
+    assert handout.due(4) == [Task("", one)]
+
+
+@pytest.mark.parametrize("deadly", [(0, 0), (2, 5), None])
+def test_a_member_of_the_pilot_that_kills_is_found_row_by_row(deadly: tuple[int, int] | None) -> None:
+    handout, deaths = PilotHandout("", 3, 8), 0
+    while handout.left and handout.culprit is None:
+        for task in handout.due(4):
+            if task.pilot or (task.block.replicate, task.block.first) == deadly:
+                handout.died(task)
+                deaths += 1
+            else:
+                assert (task.block.count, task.solves) == (1, (0, 1))
+                handout.done(task)
+    assert handout.culprit == (Culprit("", *deadly, 0) if deadly else Culprit("", 0, None, None))
+    assert deaths == (2 if deadly else 1)
 
 
 def test_in_what_a_worker_differs_is_told() -> None:

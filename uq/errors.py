@@ -98,10 +98,23 @@ class ClusterError(UqError):
     exit_code = EXIT_INTERRUPTED
 
 
+class NoClusterError(ClusterError):
+    """A cluster that was not there when it was needed; what waits for it is kept as it is."""
+
+    exit_code = EXIT_SERVICE
+
+
 class FatalMemberError(UqError):
-    """A member whose solving ends the process that does it, again and again: a defect of ours, or of the machine."""
+    """A member whose solving ends the process that does it, again and again: a defect of ours, or of the machine.
+
+    block, member: where it stands in the design, in words.
+    """
 
     exit_code = EXIT_DEFECT
+
+    def __init__(self, text: str, block: str = "", member: str = "") -> None:
+        super().__init__(text)
+        self.block, self.member = block, member
 
 
 def suggest(name: str, known: Iterable[str]) -> str:

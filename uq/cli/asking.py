@@ -24,7 +24,10 @@ def list_jobs(batch: str | None, table: bool, json: bool) -> None:
     known = queue.batches()
     if batch is not None and batch not in known:
         expected = "the name of a batch" + (f", one of {', '.join(known)}" if known else "")
-        raise UseMistake(f"`{batch}`", expected, "a batch is called as its file, without ending", key="BATCH")
+        remedy = "a batch is called as its file, without ending"
+        if batch.isdecimal():
+            remedy = f"of job {batch} `uq follow {batch}` says how it stands, `uq show {batch}` what came out"
+        raise UseMistake(f"`{batch}`", expected, remedy, key="BATCH")
     if json:
         from json import dumps
 

@@ -6,10 +6,12 @@ import os
 from pathlib import Path
 from typing import TYPE_CHECKING
 
+from uq.cli.say import err
 from uq.cli.settings import state_folder
 from uq.errors import UseMistake
 
 if TYPE_CHECKING:
+    from uq.queue.job import Job
     from uq.queue.queue import Queue
 
 
@@ -30,8 +32,22 @@ def result_of(path: Path) -> Path:
     if not is_number(path):
         return path
     job = the_queue().job(int(str(path)))
-    if job.state not in ("done", "partial") or job.folder is None:
+    if job.state in ("done", "partial") and job.folder is not None:
+        return job.folder
+    earlier = earlier_answer(job)
+    if earlier is None:
         raise UseMistake(
             f"job {job.number}, which is {job.state}", "a job that has a result", f"`uq follow {job.number}` says how far it is"
         )
-    return job.folder
+    err(f"uq: job {job.number} is {job.state}; this is the answer that it gave before, in attempt {earlier.name.rpartition('-')[2]}")
+    return earlier
+
+
+def earlier_answer(job: Job) -> Path | None:
+    """The run folder of the last attempt at a job that left a result, as one does that its deadline cut short; None where none did."""
+    from uq.store.folder import RESULT
+
+    if job.folder is None:
+        return None
+    folders = (job.folder.with_name(f"attempt-{attempt}") for attempt in range(job.attempt, 0, -1))
+    return next((folder for folder in folders if (folder / RESULT).is_file()), None)

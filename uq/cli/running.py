@@ -3,10 +3,9 @@
 from __future__ import annotations
 
 import os
-from collections.abc import Mapping
 from dataclasses import dataclass
 from pathlib import Path
-from typing import TYPE_CHECKING, Any
+from typing import TYPE_CHECKING
 
 import typer
 
@@ -90,6 +89,7 @@ def show_script(cluster: str | None) -> None:
 
 def finished(result: Result, json: bool) -> None:
     """Prints what a new result says; exit codes 4 and 5 as above."""
+    from uq.report.ended import unreached
     from uq.report.headline import headline
     from uq.report.withheld import withheld
 
@@ -104,10 +104,3 @@ def finished(result: Result, json: bool) -> None:
     if spent := unreached(result):
         err(f"uq: the precision asked was not reached within the {spent} it may spend; the result was written all the same")
         raise typer.Exit(EXIT_PRECISION)
-
-
-def unreached(result: Result) -> str:
-    """What a run has spent without reaching the precision asked: members, solves or minutes; "" where it reached it, or none was asked."""
-    found = result.findings.get("precision")
-    facts: Mapping[str, Any] = found.attributes if found else {}
-    return "" if facts.get("reached", 1) else str(facts["stopped"])

@@ -15,7 +15,7 @@ from typing import TextIO
 import typer
 
 from uq.cli.settings import state_folder
-from uq.errors import EXIT_DEFECT, EXIT_INTERRUPTED, StorageError, UqError
+from uq.errors import EXIT_DEFECT, EXIT_INTERRUPTED, StorageError, UqError, UseMistake
 
 
 def out(text: str) -> None:
@@ -53,7 +53,7 @@ def telling() -> Iterator[None]:
     try:
         yield
     except UqError as mistake:
-        err(f"uq: {mistake}")
+        err(f"uq: {placed(mistake)}")
         raise typer.Exit(mistake.exit_code) from None
     except KeyboardInterrupt:
         # Where Ctrl-C came while a library was making a class from text, Python has noted to end by the signal, whatever code we end with;
@@ -70,6 +70,12 @@ def telling() -> Iterator[None]:
     except Exception as defect:  # noqa: BLE001 - this is the one place where a defect of ours is told
         err(_defect(defect))
         raise typer.Exit(EXIT_DEFECT) from None
+
+
+def placed(mistake: UqError) -> str:
+    """A mistake with the argument that it is of, where it says so."""
+    key = mistake.key if isinstance(mistake, UseMistake) else ""
+    return f"{key}: {mistake}" if key else str(mistake)
 
 
 def _defect(defect: Exception) -> str:

@@ -49,26 +49,21 @@ def finished_before(claim: Claim) -> Result | None:
         with suppress(StorageError):
             facts = open_result(place).attributes
             if facts["study_fingerprint"] == claim.job.fingerprint and not facts.get("stopped"):
-                # What of its progress was not cleared away is no longer needed.
-                rmtree(claim.folder)
-                place.rename(claim.folder)
-                return open_result(claim.folder)
-    return None
+                break
+    else:
+        return None
+    try:
+        # What of its progress was not cleared away is no longer needed.
+        rmtree(claim.folder)
+        place.rename(claim.folder)
+    except OSError as error:
+        raise StorageError(f"the result in {place} cannot be taken over to {claim.folder}: {error.strerror or error}") from error
+    return open_result(claim.folder)
 
 
 def attempt_folder(claim: Claim, attempt: int) -> Path:
     """The run folder of an earlier attempt at the same job."""
     return claim.folder.with_name(f"{claim.folder.name.rpartition('-')[0]}-{attempt}")
-
-
-def ended_by(result: Result) -> str:
-    """What ended a run before it was as precise as asked: a deadline or what it may spend; "" where nothing did."""
-    facts = dict(result.attributes)
-    if stopped := str(facts.get("stopped", "")):
-        return stopped
-    found = result.findings.get("precision")
-    told = found.attributes if found else {}
-    return "" if told.get("reached", 1) else str(told["stopped"])
 
 
 def holds_no_more(folder: Path) -> bool:
@@ -86,6 +81,7 @@ def holds_no_more(folder: Path) -> bool:
 
 def answered(result: Result, watch: Watch, log: Log) -> Step:
     """What a result makes of its job; its headline numbers are kept with it."""
+    from uq.report.ended import ended_by
     from uq.report.headline import headline
     from uq.report.kept import kept_answers
     from uq.report.withheld import withheld

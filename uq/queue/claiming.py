@@ -19,18 +19,24 @@ from uq.queue.states import Event, State
 _OF_THE_DISK = (errno.ENOSPC, errno.EDQUOT, errno.EROFS, errno.EIO, errno.EMFILE, errno.ENFILE)
 
 # A wait after a stumble holds, unless the clock was set back to before it began (as in `times.due`).
-_START = "MAX(COALESCE(not_before, 0), CASE WHEN held_until IS NULL OR held_from > :now THEN 0 ELSE held_until END)"
+_WAIT = "CASE WHEN held_until IS NULL OR held_from > :now THEN 0 ELSE held_until END"
+_START = f"MAX(COALESCE(not_before, 0), {_WAIT})"
+# At its deadline a job answers with what it has, whatever its window.
+_LAST = f"MAX(deadline, {_WAIT})"
 
 
 def candidates(connection: sqlite3.Connection, now: float) -> list[int]:
-    """The jobs that may be worked on now, by turn: due ones that wait, and those that a runner has or had."""
+    """The jobs that may be worked on now, by turn: those whose deadline is over, who only answer; due ones that wait, and those that a
+    runner has or had."""
     closed = [text for text, window in _windows(connection) if window is not None and not window.is_open(now)]
     shut = ", ".join(f":shut{index}" for index in range(len(closed)))
     query = f"""SELECT number FROM jobs
                 WHERE state IN ('running', 'pausing') OR (state = 'waiting' AND {_START} <= :now AND window NOT IN ({shut}))
                 ORDER BY priority DESC, number"""
     named = {"now": now, **{f"shut{index}": text for index, text in enumerate(closed)}}
-    return [row["number"] for row in connection.execute(query, named)]
+    late = f"SELECT number FROM jobs WHERE state = 'waiting' AND deadline <= :now AND {_LAST} <= :now ORDER BY deadline, number"
+    found = [row["number"] for each in (late, query) for row in connection.execute(each, named)]
+    return list(dict.fromkeys(found))
 
 
 def next_due(connection: sqlite3.Connection, now: float) -> float | None:
@@ -44,6 +50,9 @@ def next_due(connection: sqlite3.Connection, now: float) -> float | None:
         if start is not None:
             start = max(start, now)
             earliest.append(start if window is None else window.opening(start))
+    late = connection.execute(f"SELECT MIN({_LAST}) AS start FROM jobs WHERE state = 'waiting' AND deadline IS NOT NULL", {"now": now})
+    if (last := late.fetchone()["start"]) is not None and last > now:
+        earliest.append(last)
     return min(earliest, default=None)
 
 

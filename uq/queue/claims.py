@@ -7,7 +7,7 @@ import os
 import sqlite3
 from collections.abc import Callable, Iterator, Mapping
 from contextlib import contextmanager
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from pathlib import Path
 from types import TracebackType
 from typing import Any
@@ -24,8 +24,8 @@ class Claim:
     """One attempt at a job, begun by `Queue.claim`; a context manager, which lets go of the lock at its end.
 
     job: as it stood when it was claimed. folder: of this attempt, with what earlier ones have kept. study: the study file as it was taken
-    in, to be read with the changes of the job. All methods may be called from any thread, and raise StorageError where the database cannot
-    be reached: nothing is changed then, and they may be called again.
+    in, to be read with the changes of the job. deadline: as it was at the last beat. All methods may be called from any thread, and raise
+    StorageError where the database cannot be reached: nothing is changed then, and they may be called again.
     """
 
     job: Job
@@ -35,6 +35,10 @@ class Claim:
     database: Database
     clock: Callable[[], float]
     handle: int | None
+    deadline: float | None = field(init=False)
+
+    def __post_init__(self) -> None:
+        self.deadline = self.job.deadline
 
     def beat(self, progress: Mapping[str, Any] | None = None) -> str:
         """Says that the runner lives and, where given, how far it is: done, total, failed (solves), settled and what else may be shown.
@@ -45,6 +49,7 @@ class Claim:
         with self._mine() as (connection, row):
             if row is None:
                 return State.CANCELLED
+            self.deadline = row["deadline"]
             told = row["progress"] if progress is None else json.dumps(dict(progress))
             before = json.loads(row["progress"]).get("done", 0) if row["progress"] else 0
             moved = now if progress is not None and progress.get("done", 0) > before else row["moved"]

@@ -71,6 +71,8 @@ STEPS: tuple[tuple[str, ...], ...] = (
         """,
         "CREATE INDEX happenings_by_job ON happenings (job)",
     ),
+    # So that a look at a long queue finds the jobs whose deadline is over without going through all.
+    ("CREATE INDEX jobs_by_deadline ON jobs (state, deadline, held_from, held_until, number)",),
 )
 
 # What is said of SQLite's own errors, by their names.

@@ -65,12 +65,12 @@ class Pause:
 
 @dataclass(frozen=True)
 class GiveBack:
-    """The job goes back to the queue with its progress, and costs no retry; reopens: not before its window opens again; wait: not before
-    so many seconds from now."""
+    """The job goes back to the queue with its progress, and costs no retry; wait: not before so many seconds from now; away: since the
+    cluster was not there, or was lost."""
 
     why: str
-    reopens: bool = False
     wait: float = 0.0
+    away: bool = False
 
 
 @dataclass(frozen=True)
@@ -93,14 +93,15 @@ STOPPED: dict[Order, Step] = {
     "pausing": Pause(),
     "deadline": Finish("failed", "the deadline came before the first round was complete"),
     "told to end": GiveBack("the runner was told to end"),
-    "window closed": GiveBack("the window closed", reopens=True),
+    "window closed": GiveBack("the window closed"),
     "": GiveBack("the run was interrupted"),
 }
+CUT_SHORT = "the deadline came first; the answer is that of the last completed round"
 # What becomes of a job whose run has an answer, by what ended the run.
 ENDED: dict[str, Finish] = {
     "": Finish("done"),
     "reached": Finish("done"),
-    "deadline": Finish("partial", "the deadline came first; the answer is that of the last completed round"),
+    "deadline": Finish("partial", CUT_SHORT),
     "members": Finish("partial", "the precision asked was not reached with the members that it may use"),
     "solves": Finish("partial", "the precision asked was not reached with the solves that it may use"),
     "minutes": Finish("partial", "the precision asked was not reached in the minutes that it may take"),
@@ -137,7 +138,7 @@ def after_trouble(trouble: Trouble) -> Step:
     if trouble.kind == "full":
         return Pause(f"the disk is full: {trouble.text}; free some room, then resume the job")
     if trouble.kind in ("cluster", "use"):
-        return GiveBack(trouble.text, wait=CLUSTER_WAIT)
+        return GiveBack(trouble.text, CLUSTER_WAIT, trouble.kind == "cluster")
     return Stumble(trouble.text)
 
 

@@ -50,7 +50,7 @@ class Heart:
 
     def order(self) -> Order:
         """Why the run shall be stopped, by what is known now."""
-        return order(News(self._wanted, self._bell.rung, self._clock(), self._claim.job.deadline, self._closes))
+        return order(News(self._wanted, self._bell.rung, self._clock(), self._claim.deadline, self._closes))
 
     def so_far(self) -> bool:
         """Whether a run that was stopped shall give the answer of its last completed round."""

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
@@ -16,9 +17,10 @@ if TYPE_CHECKING:
 
 @dataclass(frozen=True, kw_only=True)
 class Terms:
-    """How a job shall run: the larger priority first, not before a time, with the answer so far at a deadline, so many retries."""
+    """How a job shall run: the larger priority first (None: nothing said, as 0), not before a time, with the answer so far at a deadline,
+    so many retries."""
 
-    priority: int = 0
+    priority: int | None = None
     not_before: When | None = None
     deadline: When | None = None
     retries: int = RETRIES
@@ -43,12 +45,21 @@ def intake_of(study: Study, now: float, terms: Terms = Terms(), window: Window |
         batch=name,
         batch_title=title,
         changed=study.changes,
-        priority=terms.priority,
+        priority=terms.priority or 0,
         not_before=not_before,
         deadline=deadline,
         window=window,
         retries=terms.retries,
+        stated=frozenset(stated(terms, window)),
     )
+
+
+def stated(terms: Terms, window: Window | None) -> Iterator[str]:
+    """The terms that say something: what is as it is by itself does not."""
+    said = {"priority": terms.priority, "not_before": terms.not_before, "deadline": terms.deadline, "window": window}
+    yield from (name for name, value in said.items() if value is not None)
+    if terms.retries != RETRIES:
+        yield "retries"
 
 
 def intakes_of(batch: Batch, now: float) -> list[Intake]:
@@ -57,7 +68,7 @@ def intakes_of(batch: Batch, now: float) -> list[Intake]:
         intake_of(
             each.study,
             now,
-            Terms(priority=each.priority, not_before=each.not_before, deadline=each.deadline, retries=each.retries),
+            Terms(priority=each.priority or None, not_before=each.not_before, deadline=each.deadline, retries=each.retries),
             batch.window,
             (batch.name, batch.title),
         )

@@ -25,7 +25,8 @@ class Intake:
 
     text: of the study file; files: the bytes of all files that it names; changed: what is changed by dotted key when it is read again;
     fingerprint: of the study with its plan and these changes. name: of the study, as its file is called without ending; members: asked.
-    batch, batch_title: the batch it is of, "" for none. Times in epoch seconds, None for none.
+    batch, batch_title: the batch it is of, "" for none. Times in epoch seconds, None for none. stated: which of priority, not_before,
+    deadline, window, retries were said, and so take the place of those of an equal job that is there already.
     """
 
     text: str
@@ -42,14 +43,18 @@ class Intake:
     deadline: float | None = None
     window: Window | None = None
     retries: int = RETRIES
+    stated: frozenset[str] = frozenset()
 
 
 @dataclass(frozen=True)
 class Submitted:
-    """The number of the job; `new` is false where an equal one was there."""
+    """The number of the job; `new` is false where an equal one was there. taken: which of its terms are now those that were stated;
+    retried: whether it had been cut short by its deadline and goes on from there."""
 
     job: int
     new: bool
+    taken: tuple[str, ...] = ()
+    retried: bool = False
 
 
 @dataclass(frozen=True, kw_only=True, slots=True)
@@ -123,7 +128,7 @@ def job_of(row: Mapping[str, Any], now: float, root: Path) -> Job:
     hold = None if row["held_until"] is None else Hold(row["held_from"], row["held_until"])
     state, until = _STATES[row["state"]], None
     if state is State.WAITING:
-        at = due(now, row["not_before"], hold, window)
+        at = due(now, row["not_before"], hold, window, row["deadline"])
         state, until = (State.HELD, at) if at > now else (state, None)
     return Job(
         number=row["number"],

@@ -14,6 +14,8 @@ _SETTABLE = (
     *("attempt", "runner", "beat", "moved", "progress", "started", "note", "deadline"),
     *("stumbles", "furthest", "held_from", "held_until"),
 )
+# What a job that is tried again by request has behind it.
+AFRESH: dict[str, object] = {"stumbles": 0, "furthest": 0, "held_from": None, "held_until": None}
 
 
 @dataclass(frozen=True)

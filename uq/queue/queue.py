@@ -14,12 +14,24 @@ from uq.queue.claims import Claim
 from uq.queue.database import PATIENCE, Database, Row, rows_of
 from uq.queue.folders import JOBS, Folders, sweep
 from uq.queue.job import Happening, Intake, Job, Submitted, job_of
-from uq.queue.moves import move, row_of
+from uq.queue.moves import AFRESH, move, row_of
 from uq.queue.states import ENDED, Event, State, after, requests
 from uq.queue.submitting import submitted
 from uq.store.hold import hold
 
 DATABASE = "queue.sqlite"
+# What a request makes of a job, in a word.
+ASKED = {Event.PAUSE: "paused", Event.RESUME: "resumed", Event.CANCEL: "cancelled", Event.RETRY: "tried again"}
+
+
+class NotNowError(UseMistake):
+    """Something that was asked of a job cannot be, as it stands."""
+
+    def __init__(self, number: int, state: State, event: Event) -> None:
+        possible = ", ".join(requests(state))
+        super().__init__(f"job {number}, which is {state}", f"one that can be {ASKED[event]}")
+        remedy = f"possible is: {possible}" if possible else f"it has ended, and `uq show {number}` shows what it says"
+        self.args = (f"job {number} is {state} and cannot be {ASKED[event]}; {remedy}",)
 
 
 class Queue:
@@ -40,7 +52,8 @@ class Queue:
         self.database.close()
 
     def submit(self, intakes: Sequence[Intake], again: bool = False) -> list[Submitted]:
-        """Hands in studies, all or none; where an equal one is in the queue that was not cancelled and did not fail, it is that job.
+        """Hands in studies, all or none; where an equal one is in the queue that was not cancelled and did not fail, it is that job, with
+        the terms that are stated now where it has not ended, and going on where its deadline has cut it short and another is stated.
 
         again: a new job in any case.
         """
@@ -91,7 +104,7 @@ class Queue:
 
     def retry(self, number: int) -> Job:
         """Lets a job that failed, was cancelled, paused or cut short go on from what is kept; a deadline that is over is taken off."""
-        return self._ask(number, Event.RETRY, stumbles=0, furthest=0, held_from=None, held_until=None)
+        return self._ask(number, Event.RETRY, **AFRESH)
 
     def claim(self, runner: str) -> Claim | None:
         """The next job that may be worked on, the largest priority first, then the lowest number; None where there is none.
@@ -168,8 +181,7 @@ class Queue:
             row = self._row(connection, number)
             state = self._job(row).state
             if after(state, event) is None:
-                possible = ", ".join(requests(state)) or "nothing: it has ended"
-                raise UseMistake(f"{event} of job {number}, which is {state}", f"what is possible then: {possible}")
+                raise NotNowError(number, state, event)
             if event is Event.RETRY and row["deadline"] is not None and row["deadline"] <= now:
                 columns["deadline"] = None
             move(connection, row, event, now, "", **columns)

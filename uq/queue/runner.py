@@ -5,12 +5,12 @@ from __future__ import annotations
 import threading
 import time
 import traceback
-from collections.abc import Callable, Iterator
+from collections.abc import Callable, Iterator, Mapping
 from contextlib import contextmanager
 from dataclasses import dataclass
 from pathlib import Path
 
-from uq.errors import Interrupted, StorageError, UqError, UseMistake
+from uq.errors import FatalMemberError, Interrupted, NoClusterError, StorageError, UqError, UseMistake
 from uq.queue.attempt import answered, finished_before, holds_no_more, study_of
 from uq.queue.bell import Bell
 from uq.queue.claims import Claim
@@ -55,9 +55,10 @@ class Runner:
         """Works until the bell rings; with `once` until nothing is due. Whether the last job was given back unfinished.
 
         Raises StorageError where the queue cannot be asked; without `once` it says so and tries again. UseMistake where the means are
-        wrong, such as a cluster whose workers do not fit.
+        wrong, such as a cluster whose workers do not fit. NoClusterError, with `once`, where jobs still wait since the cluster was away.
         """
         unfinished, said = False, ""
+        waiting: dict[int, str] = {}
         while not self.bell.rung:
             try:
                 claim = self.queue.claim(self.name)
@@ -73,11 +74,17 @@ class Runner:
                 continue
             if claim is not None:
                 with claim:
-                    unfinished = isinstance(self._job(claim), GiveBack) and self.bell.rung
+                    step = self._job(claim)
+                unfinished = isinstance(step, GiveBack) and self.bell.rung
+                waiting.pop(claim.job.number, None)
+                if isinstance(step, GiveBack) and step.away:
+                    waiting[claim.job.number] = step.why
             elif once:
                 break
             else:
                 self.bell.sleep(nap)
+        if once and waiting and not self.bell.rung:
+            raise NoClusterError(left_waiting(waiting))
         return unfinished
 
     def _nap(self) -> float:
@@ -126,8 +133,10 @@ class Runner:
         start = Start(command=command, pace=means.pace, so_far=heart.so_far)
         try:
             study = watch.study = study_of(claim)
+            # What is done already gives the answer at a deadline: nobody has to be called for that.
+            cluster = None if heart.order() == "deadline" else means.cluster
             result = finished_before(claim) or run(
-                study, claim.folder, threads=means.threads, observer=watch, block_rows=means.block_rows, start=start, cluster=means.cluster
+                study, claim.folder, threads=means.threads, observer=watch, block_rows=means.block_rows, start=start, cluster=cluster
             )
             return answered(result, watch, log)
         except (Interrupted, KeyboardInterrupt) as stopped:
@@ -138,6 +147,8 @@ class Runner:
             trouble = trouble_of(error, isinstance(error, UqError) and holds_no_more(claim.folder))
             if trouble.kind == "defect":
                 log("".join(traceback.format_exception(error)))
+            if isinstance(error, FatalMemberError):
+                log("ended every process that solved it", error.block, error.member)
             if isinstance(error, UseMistake):
                 heart.misuse = error
             heart.exit_code = error.exit_code if isinstance(error, UqError) else UqError.exit_code
@@ -157,3 +168,10 @@ class Runner:
                 reserve.free()
                 if left:
                     time.sleep(AGAIN / TRIES)
+
+
+def left_waiting(jobs: Mapping[int, str]) -> str:
+    """What is said of jobs that wait for a cluster, by number with the reason."""
+    numbers, (*_, why) = ", ".join(map(str, jobs)), jobs.values()
+    told = f"job {numbers} waits" if len(jobs) == 1 else f"jobs {numbers} wait"
+    return f"{told} for the cluster, with what is done ({why}); the next runner that finds it goes on"

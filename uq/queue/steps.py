@@ -11,10 +11,8 @@ def carried_out(step: Step, claim: Claim, now: float) -> bool:
     match step:
         case Finish(state, reason, note):
             return claim.finish(state, reason, note)
-        case GiveBack(why, reopens, wait):
-            window = claim.job.window
-            opens = window.opening(now) if reopens and window else None
-            claim.give_back(why, now + wait if wait else opens)
+        case GiveBack(why, wait):
+            claim.give_back(why, now + wait if wait else None)
         case Pause(reason):
             claim.paused(reason)
         case Stumble(reason):

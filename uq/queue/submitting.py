@@ -8,10 +8,14 @@ from collections.abc import Mapping, Sequence
 from pathlib import Path
 
 from uq.queue.database import Database
+from uq.queue.deciding import CUT_SHORT
 from uq.queue.folders import Folders, check_names
 from uq.queue.job import Intake, Submitted, window_text
-from uq.queue.moves import remember
-from uq.queue.states import BEGIN, REPLACED, Event
+from uq.queue.moves import AFRESH, move, remember, row_of
+from uq.queue.states import BEGIN, ENDED, REPLACED, Event, State
+
+# The terms of a job, as its columns are called.
+_TERMS = ("priority", "not_before", "deadline", "window", "retries")
 
 
 class _MissingError(Exception):
@@ -44,7 +48,7 @@ def _entered(
         try:
             for place, intake in enumerate(intakes):
                 number = None if again else _equal(connection, intake)
-                found.append(Submitted(_new(connection, intake, now) if number is None else number, number is None))
+                found.append(Submitted(_new(connection, intake, now), True) if number is None else there(connection, intake, number, now))
                 if number is None:
                     placed.append(found[-1].job)
                     _place(folders, taken.get(place), found[-1].job)
@@ -78,6 +82,26 @@ def _equal(connection: sqlite3.Connection, intake: Intake) -> int | None:
     query = f"SELECT MAX(number) AS number FROM jobs WHERE fingerprint = ? AND state NOT IN ({marks})"
     number: int | None = connection.execute(query, (intake.fingerprint, *REPLACED)).fetchone()["number"]
     return number
+
+
+def there(connection: sqlite3.Connection, intake: Intake, number: int, now: float) -> Submitted:
+    """An equal job that is there already. One that has not ended takes over what is stated; one that its deadline has cut short goes on
+    from what is kept, where another deadline is stated. Whatever else ended a job would end it again."""
+    row = row_of(connection, number)
+    if row is None:
+        raise RuntimeError(f"job {number} is gone within a transaction")
+    retried = row["state"] == State.PARTIAL and row["reason"] == CUT_SHORT and "deadline" in intake.stated
+    if row["state"] in ENDED and not retried:
+        return Submitted(number, False)
+    if retried:
+        move(connection, row, Event.RETRY, now, "", **AFRESH)
+    wanted = {name: getattr(intake, name) for name in _TERMS if name in intake.stated}
+    wanted |= {"window": window_text(intake.window)} if "window" in wanted else {}
+    changes = {name: value for name, value in wanted.items() if row[name] != value}
+    if changes:
+        words = ", ".join(f"{name} = :{name}" for name in changes)
+        connection.execute(f"UPDATE jobs SET {words} WHERE number = :number", {**changes, "number": number})
+    return Submitted(number, False, tuple(changes), retried)
 
 
 def _new(connection: sqlite3.Connection, intake: Intake, now: float) -> int:

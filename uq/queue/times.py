@@ -25,15 +25,15 @@ def back_off(stumbles: int) -> float:
     return min(SHORTEST_WAIT * 2.0 ** min(max(stumbles - 1, 0), 20), LONGEST_WAIT)
 
 
-def due(now: float, not_before: float | None, hold: Hold | None, window: Window | None) -> float:
-    """The first moment, from `now` on, at which a job may start.
+def due(now: float, not_before: float | None, hold: Hold | None, window: Window | None, deadline: float | None = None) -> float:
+    """The first moment, from `now` on, at which a job may start; at its deadline it may whatever its window, since it only answers then.
 
     Where the clock was set back to before a wait had begun, that wait is over: it must not grow by what the clock lost.
     """
-    at = now if not_before is None else max(now, not_before)
-    if hold is not None and now >= hold.begun:
-        at = max(at, hold.until)
-    return at if window is None else window.opening(at)
+    over = hold.until if hold is not None and now >= hold.begun else now
+    at = max(now, over, now if not_before is None else not_before)
+    at = at if window is None else window.opening(at)
+    return at if deadline is None else min(at, max(now, over, deadline))
 
 
 def deadline_of(deadline: When, now: float, not_before: float | None, window: Window | None) -> float:

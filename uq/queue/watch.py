@@ -32,6 +32,9 @@ class Watch(Silent):
         self._stage = words
         self._log(words)
 
+    def placed(self, words: str, block: str, member: str = "") -> None:
+        self._log(words, block, member)
+
     def progress(self, progress: Progress) -> None:
         now = self._clock()
         self._latest = progress

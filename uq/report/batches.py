@@ -35,7 +35,8 @@ def _alike(jobs: Iterable[JobFacts]) -> list[list[JobFacts]]:
 
 
 def study_table(jobs: Sequence[JobFacts], now: Now) -> Iterable[Part]:
-    """What was changed, the state of every job, its answers with their intervals."""
+    """What was changed, the state of every job, its answers with their intervals; in the order of what was changed."""
+    jobs = sorted(jobs, key=lambda job: (*map(place_of, job.changed.values()), job.number))
     asked = asked_of(jobs)
     yield Text(plain(f"{jobs[0].name}: {jobs[0].title}"))
     for letter, what in zip(ascii_uppercase, asked, strict=False):
@@ -49,6 +50,12 @@ def study_table(jobs: Sequence[JobFacts], now: Now) -> Iterable[Part]:
         rows += _rows(job, asked, now)
     intervals = tuple(range(len(keys) + 3, len(head), 2))
     yield Table(rows, intervals)
+
+
+def place_of(value: object) -> tuple[bool, float, str]:
+    """Where a changed value stands among others: numbers by size, before all that is none."""
+    number = isinstance(value, int | float)
+    return not number, float(value) if isinstance(value, int | float) else 0.0, "" if number else str(value)
 
 
 def asked_of(jobs: Sequence[JobFacts]) -> list[str]:

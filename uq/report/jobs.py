@@ -5,10 +5,11 @@ from __future__ import annotations
 from collections import Counter
 from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass
-from datetime import datetime, tzinfo
+from datetime import datetime, timedelta, tzinfo
 from functools import cache
 from typing import Any, Protocol
 
+from uq.clock import Window, zone_of
 from uq.report.plain import padded, plain, width, wrapped
 from uq.report.spoken import duration
 
@@ -47,6 +48,8 @@ class JobFacts(Protocol):
     @property
     def deadline(self) -> float | None: ...
     @property
+    def window(self) -> Window | None: ...
+    @property
     def beat(self) -> float | None: ...
     @property
     def moved(self) -> float | None: ...
@@ -67,7 +70,20 @@ class Now:
 
     def at(self, moment: float) -> str:
         """A moment as a reader says it: "22:41" today, "2 Dec 06:00" on another day of the year, with the year in another one."""
-        then, now = (datetime.fromtimestamp(each, self.zone).astimezone(self.zone) for each in (moment, self.time))
+        return self._in(self.zone, moment)
+
+    def at_both(self, moment: float, window: Window | None) -> str:
+        """The same with the time in the zone of a batch, where that is another one: "22:41 (23:41 Europe/Athens)"."""
+        there = zone_of(window.timezone) if window is not None else None
+        if window is None or there is None or self._offset(there, moment) == self._offset(self.zone, moment):
+            return self.at(moment)
+        return f"{self.at(moment)} ({self._in(there, moment)} {window.timezone})"
+
+    def _offset(self, zone: tzinfo | None, moment: float) -> timedelta | None:
+        return datetime.fromtimestamp(moment, zone).astimezone(zone).utcoffset()
+
+    def _in(self, zone: tzinfo | None, moment: float) -> str:
+        then, now = (datetime.fromtimestamp(each, zone).astimezone(zone) for each in (moment, self.time))
         if then.date() == now.date():
             return f"{then:%H:%M}"
         return f"{then.day} {then:%b} {f'{then.year} ' if then.year != now.year else ''}{then:%H:%M}"
@@ -128,7 +144,7 @@ def stands(job: JobFacts, now: Now) -> str:
         return ""
     told = [_of_state(job, now), *_flags(job, now), plain(job.reason), plain(job.note)]
     if job.state in OPEN and job.deadline is not None:
-        told.append(f"deadline {now.at(job.deadline)}")
+        told.append(f"deadline {now.at_both(job.deadline, job.window)}")
     if job.state == "waiting" and job.priority:
         told.append(f"priority {job.priority}")
     return "; ".join(each for each in told if each)
@@ -136,13 +152,19 @@ def stands(job: JobFacts, now: Now) -> str:
 
 def _of_state(job: JobFacts, now: Now) -> str:
     if job.state == "held" and job.until is not None:
-        return f"until {now.at(job.until)}"
+        return f"until {now.at_both(job.until, job.window)}"
     if job.state in ("running", "pausing"):
         return far(job.progress)
     if job.ended is not None:
         took = f", took {duration(max(round(job.ended - job.started), 0))}" if job.started is not None and job.state != "cancelled" else ""
         return f"ended {now.at(job.ended)}{took}"
-    return f"{far(job.progress)} kept" if job.state == "paused" and job.progress.get("done") else ""
+    return kept(job.progress) if job.state == "paused" and job.progress.get("done") else ""
+
+
+def kept(progress: Mapping[str, Any]) -> str:
+    """What is kept of a run that stands still: "32768 of 131072 solves kept, 2 failed"."""
+    failed = int(progress.get("failed") or 0)
+    return f"{progress['done']} of {progress['total']} solves kept" + (f", {failed} failed" if failed else "")
 
 
 def far(progress: Mapping[str, Any]) -> str:

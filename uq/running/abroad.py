@@ -72,13 +72,34 @@ def working(plugin: str) -> Callable[[str, tuple[Any, ...]], Any]:
         if carrier is None or not carrier.fit:
             return refused
         from uq.design.blocks import Block
-        from uq.running.parcel import solved_here
+        from uq.running.parcel import piloted_here, solved_here
         from uq.running.tasks import Task
 
-        name, block, solves = task
-        return solved_here(key, carrier.parcels[key], Task(name, Block(*block), solves), carrier.stop)
+        name, block, solves, more, pilot = task
+        content, stop = carrier.parcels[key], carrier.stop
+        if pilot:
+            return piloted_here(key, content, stop)
+        return solved_here(key, content, Task(name, Block(*block), solves, tuple(Block(*each) for each in more)), stop)
 
     return work
+
+
+def strict(begin: str, deaths: int) -> Any:
+    """A plugin for a scheduler of somebody else: tasks whose names begin so are given up when so many workers have died of them, however
+    many that scheduler allows. All other tasks are left alone."""
+    from distributed import SchedulerPlugin
+
+    class Strict(SchedulerPlugin):  # type: ignore[misc]
+        async def start(self, scheduler: Any) -> None:
+            self.scheduler = scheduler
+
+        def transition(self, key: Any, start: str, finish: str, *_: Any, **__: Any) -> None:
+            if finish == "processing" and str(key).startswith(begin) and key in self.scheduler.tasks:
+                task = self.scheduler.tasks[key]
+                # It is given up when this is more than the scheduler allows.
+                task.suspicious = max(task.suspicious, self.scheduler.allowed_failures + 1 - deaths)
+
+    return Strict()
 
 
 def unlike(made: Made, theirs: Made) -> str:

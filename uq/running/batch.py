@@ -14,7 +14,7 @@ from pathlib import Path
 from typing import Any, ClassVar
 
 from uq.errors import Mistake, StudyError, UseMistake, ValueMistake
-from uq.running.fleet import DEATH_TIMEOUT, ONE_THREAD, SCHEDULER, quiet
+from uq.running.fleet import DEATH_TIMEOUT, ONE_THREAD, SCHEDULER, UNHINDERED, quiet
 from uq.study import values as read
 from uq.study.columns import Files
 from uq.study.fields import entry, read_table, refuse
@@ -179,7 +179,7 @@ def arguments(system: BatchSystem) -> dict[str, Any]:
         "memory": f"{system.memory} B",
         "walltime": clock(system.walltime),
         "job_extra_directives": list(system.directives),
-        "job_script_prologue": [*(f"export {name}={value}" for name, value in ONE_THREAD.items()), *system.before],
+        "job_script_prologue": [*(f"export {name}={value}" for name, value in {**UNHINDERED, **ONE_THREAD}.items()), *system.before],
         "worker_extra_args": ["--lifetime", f"{life:.0f}s", "--lifetime-stagger", f"{stagger:.0f}s", "--no-dashboard"],
         "death_timeout": DEATH_TIMEOUT * 2,
         "scheduler_options": SCHEDULER,

@@ -3,32 +3,31 @@
 from __future__ import annotations
 
 import uuid
-from collections import Counter
 from collections.abc import Callable, Iterator, Mapping, Sequence
 from contextlib import contextmanager, suppress
-from dataclasses import astuple
-from queue import Empty, SimpleQueue
 from typing import Any
 
 from uq.analysis.ask import kept_bytes
-from uq.errors import ClusterError, FatalMemberError, Interrupted
-from uq.running.abroad import REFUSED, carrier, working
+from uq.design.blocks import Block
+from uq.errors import ClusterError, FatalMemberError, Interrupted, NoClusterError
+from uq.running.abroad import carrier, strict
+from uq.running.answering import ANSWERED_WITHIN, STOPPED, answered
 from uq.running.block import Forecast
-from uq.running.fleet import KILLS, Fleet
+from uq.running.fleet import KILLS, Fleet, There
+from uq.running.flight import LOST, Flight
+from uq.running.meter import Count
 from uq.running.muster import Muster
+from uq.running.observer import Observer
 from uq.running.parcel import fingerprint, packed
-from uq.running.part import Part
+from uq.running.pilot import PILOT_ROWS, Found, Pilot, completed
 from uq.running.rounds import Brought, Crew, Spread
 from uq.running.rounds import Task as Named
-from uq.running.tasks import Culprit, Handout, Task, task_rows, window
-from uq.running.threads import HEARD_WITHIN
+from uq.running.tasks import Culprit, Handout, PilotHandout, Task, blocks_together, bundled, task_rows, window
 
 Blame = Callable[[Culprit, Forecast], FatalMemberError]
-# Seconds that a result, at most RESULT_BYTES, may take to come before we look at who is still there.
-FETCHED_WITHIN = 5
+Got = Callable[[Task, Any], None]
 CONNECTED_WITHIN = 10
 CLOSED_WITHIN = 5
-LOST = "the scheduler of the cluster was lost"
 
 
 class Cluster:
@@ -46,43 +45,72 @@ class Cluster:
         return self._muster.cores or self._fleet.cores
 
     def rows(self, forecast: Forecast, rows: int, crew: Crew) -> int:
-        kept = kept_bytes(forecast.ask, 2) if forecast.ask.keeps else 0
         replicates, cores = forecast.design.replicates, self.cores(crew.spread)
-        return task_rows(forecast.shape, kept, crew.meter.seconds_per_solve, rows, replicates, cores)
+        return task_rows(forecast.shape, kept_by(forecast), crew.meter.seconds_per_solve, rows, replicates, cores)
+
+    def pilot(self, name: str, forecast: Forecast, crew: Crew) -> Pilot:
+        """The pilot of a branch, solved by a worker, which it may end. Raises as `solve`."""
+        found: list[tuple[Found, Count]] = []
+
+        def got(task: Task, answer: Any) -> None:
+            if answer is not None:  # of a row for trial
+                found.append(answer)
+
+        self._through(PilotHandout(name, forecast.design.replicates, PILOT_ROWS), {name: forecast}, got, crew.observer)
+        (pilot, count) = found[0]
+        crew.meter.pace(count)
+        return completed(forecast, pilot)
 
     def solve(self, tasks: Sequence[Named], forecasts: Mapping[str, Forecast], brought: Brought, crew: Crew) -> None:
         """Solves the blocks. Raises Interrupted, ClusterError (nobody is left), FatalMemberError, UseMistake (workers are not fit)."""
         if not tasks:
             return
-        self._muster.wait(crew.observer)
-        handout = Handout((Task(*task) for task in tasks), {name: forecast.design.parts for name, forecast in forecasts.items()})
+
+        def got(task: Task, part: Any) -> None:
+            if part is not None:
+                crew.meter.add(part.count)
+                brought(task.name, part)
+
+        most = {name: self._together([block for of, block in tasks if of == name], forecast, crew) for name, forecast in forecasts.items()}
+        handout = Handout(bundled(tasks, most), {name: forecast.design.parts for name, forecast in forecasts.items()})
+        self._through(handout, forecasts, got, crew.observer)
+
+    def _together(self, blocks: Sequence[Block], forecast: Forecast, crew: Crew) -> int:
+        """How many blocks of a branch go together in a task: one where it was said how large they are."""
+        if crew.spread.rows:
+            return 1
+        rows = max((block.count for block in blocks), default=1)
+        seconds = rows * forecast.shape.solves * crew.meter.seconds_per_solve
+        return blocks_together(seconds, rows * kept_by(forecast), len(blocks), self.cores(crew.spread))
+
+    def _through(self, handout: Handout, forecasts: Mapping[str, Forecast], got: Got, observer: Observer) -> None:
+        """Has everything solved that is handed out; `got` hears what each task gave."""
         try:
-            with telling_of_loss(self._client), self._carried(forecasts) as flight:
-                while handout.left:
-                    flight.hand_out(handout.due(window(max(self._muster.cores, self._fleet.cores))))
-                    if handout.culprit is not None:
-                        raise self._blame(handout.culprit, forecasts[handout.culprit.name])
-                    if crew.observer.stop[0]:
-                        raise Interrupted("solving was stopped")
-                    for task, part in flight.landed(handout):
-                        if part is not None:
-                            crew.meter.add(part.count)
-                            brought(task.name, part)
-                    self._muster.look(crew.observer)
-                    flight.move(handout)
+            with telling_of_loss(self._client):
+                self._muster.wait(observer)
+                with self._carried(forecasts, observer) as flight:
+                    while handout.left:
+                        flight.hand_out(handout.due(window(max(self._muster.cores, self._fleet.cores))))
+                        if handout.culprit is not None:
+                            raise self._blame(handout.culprit, forecasts[handout.culprit.name])
+                        if observer.stop[0]:
+                            raise Interrupted("solving was stopped")
+                        for task, answer in flight.landed(handout):
+                            got(task, answer)
+                        self._muster.look(observer)
+                        flight.move(handout)
         except (KeyboardInterrupt, Interrupted):
-            crew.observer.stop[0] = 1
-            raise Interrupted("interrupted; no result was written") from None
+            observer.stop[0] = 1
+            raise Interrupted(STOPPED) from None
 
     @contextmanager
-    def _carried(self, forecasts: Mapping[str, Forecast]) -> Iterator[Flight]:
+    def _carried(self, forecasts: Mapping[str, Forecast], observer: Observer) -> Iterator[Flight]:
         """While this lasts every fit worker has the parcels; what is still being solved at its end stops within a step."""
         parcels = {name: packed(forecast) for name, forecast in forecasts.items()}
         keys = {name: fingerprint(content) for name, content in parcels.items()}
         plugin = f"uq-{uuid.uuid4()}"
-        content = {keys[name]: content for name, content in parcels.items()}
-        self._client.register_plugin(carrier(content, self._muster.made), name=plugin)
-        flight = Flight(self._client, plugin, keys, self._muster)
+        self._register(carrier({keys[name]: content for name, content in parcels.items()}, self._muster.made), plugin, observer)
+        flight = Flight(self._client, plugin, keys, self._muster, observer)
         try:
             yield flight
         finally:
@@ -91,81 +119,27 @@ class Cluster:
                 # A worker that hangs does not answer; what it holds ends with it, and why we end must not be lost over that.
                 with suppress(Exception):
                     self._client.sync(self._client.scheduler.unregister_worker_plugin, name=plugin, callback_timeout=CLOSED_WITHIN)
+                with suppress(Exception):
+                    self._client.sync(self._client.scheduler.unregister_scheduler_plugin, name=plugin, callback_timeout=CLOSED_WITHIN)
 
-
-class Flight:
-    """The tasks that are with the cluster now."""
-
-    def __init__(self, client: Any, plugin: str, keys: Mapping[str, str], muster: Muster) -> None:
-        self._client, self._plugin, self._keys, self._muster = client, plugin, keys, muster
-        self._work = working(plugin)
-        self._number = 0
-        self._out: dict[Any, Task] = {}
-        # Tasks that were refused somewhere may only go to these workers; and how often those have all gone.
-        self._bound: dict[Any, set[str]] = {}
-        self._moved: Counter[Task] = Counter()
-        self._finished: SimpleQueue[Any] = SimpleQueue()
-
-    def hand_out(self, tasks: Sequence[Task], bound: bool = False) -> None:
-        """Sends tasks to the cluster; bound: only to workers that are known to be fit."""
-        for task in tasks:
-            self._number += 1
-            key, only = f"{self._plugin}-{self._number}", set(self._muster.fit) if bound else set()
-            future = self._client.submit(
-                self._work, self._keys[task.name], astuple(task), key=key, pure=False, workers=sorted(only) or None
+    def _register(self, parcels: Any, name: str, observer: Observer) -> None:
+        """Gives all workers the parcels. Those that do not say within a time that they have them are asked whether they still live."""
+        client, muster = self._client, self._muster
+        if isinstance(self._fleet, There):
+            # A scheduler of another Python, or one that takes nothing in, keeps to its own number of deaths.
+            with suppress(Exception):
+                answered(client, lambda: client.register_plugin(strict(name, KILLS), name=name), CLOSED_WITHIN, observer)
+        try:
+            answered(
+                client, lambda: client.register_plugin(parcels, name=name), CLOSED_WITHIN if muster.silent else ANSWERED_WITHIN, observer
             )
-            self._out[future] = task
-            if only:
-                self._bound[future] = only
-            future.add_done_callback(self._finished.put)
-
-    def move(self, handout: Handout) -> None:
-        """Tasks that may only go to workers that are all gone are sent anew; one that this happens to again has killed its workers."""
-        for future in [each for each, only in self._bound.items() if not only & self._muster.fit]:
-            task = self._forget(future)
-            self._client.cancel([future], force=True)
-            self._moved[task] += 1
-            if self._moved[task] < KILLS:
-                self.hand_out([task])
-            else:
-                handout.died(task)
-
-    def _forget(self, future: Any) -> Task:
-        self._bound.pop(future, None)
-        return self._out.pop(future)
-
-    def landed(self, handout: Handout) -> Iterator[tuple[Task, Part | None]]:
-        """What has been solved, after a moment of waiting at most; the handout hears of it, and of tasks that killed their workers."""
-        from distributed import KilledWorker
-
-        try:
-            future = self._finished.get(timeout=HEARD_WITHIN)
-        except Empty:
-            return
-        if future not in self._out:
-            return
-        if future.cancelled():
-            raise ClusterError(f"{LOST}, or another program has cancelled our blocks")
-        try:
-            part = future.result(timeout=FETCHED_WITHIN if future.done() else 0)
-        except KilledWorker:
-            handout.died(self._forget(future))
         except TimeoutError:
-            # The worker that had it is gone, and it is solved again; or it is on a slow way.
-            future.add_done_callback(self._finished.put)
-        else:
-            task = self._forget(future)
-            if isinstance(part, str) and part == REFUSED:
-                self.hand_out([task], bound=True)
-            else:
-                handout.done(task)
-                yield task, part
+            muster.again(observer)
 
-    def dropped(self) -> None:
-        """Nothing of it is wanted any more."""
-        if self._out and self._client.status == "running":
-            self._client.cancel(list(self._out), force=True)
-        self._out.clear()
+
+def kept_by(forecast: Forecast) -> int:
+    """Bytes of kept values that a row adds to a result."""
+    return kept_bytes(forecast.ask, 2) if forecast.ask.keeps else 0
 
 
 @contextmanager
@@ -184,13 +158,13 @@ def telling_of_loss(client: Any) -> Iterator[None]:
 @contextmanager
 def connected(address: str, ours: bool = False) -> Iterator[Any]:
     """A client of the scheduler at an address. ours: it is in this process, so whom it reaches we reach as well, and results need not take
-    the way through it. Raises ClusterError where none answers."""
+    the way through it. Raises NoClusterError where none answers."""
     from distributed import Client
 
     try:
         client = Client(address, timeout=CONNECTED_WITHIN, set_as_default=False, direct_to_workers=ours, name="uq")
     except (OSError, TimeoutError) as error:
-        raise ClusterError(f"no scheduler answers at {address}; start one there (dask scheduler), or name another cluster") from error
+        raise NoClusterError(f"no scheduler answers at {address}; start one there (dask scheduler), or name another cluster") from error
     try:
         yield client
     finally:

@@ -20,6 +20,10 @@ FILE = "study.toml"
 
 def blamed(study: Study, folder: Path, culprit: Culprit, forecast: Forecast) -> FatalMemberError:
     """Keeps the member in the run folder and tells where; raises OSError where it cannot be written."""
+    block, which = f"{culprit.replicate}/{culprit.row}", "" if culprit.solve is None else f"{culprit.solve}"
+    if culprit.row is None:
+        words = "The pilot, none of whose members does so alone, ended every process that solved it, so the run cannot come to its end"
+        return FatalMemberError(f"{words}. Please report it with the study.", "pilot")
     own = study if culprit.name == STUDY else next(each.study for each in study.scenarios if each.name == culprit.name)
     member, words = Member(culprit, forecast), described(culprit, forecast)
     text = fixed_study(own, member.values, member.tolerances, f"{words}\nended every process that solved it; this study solves it alone.")
@@ -28,7 +32,9 @@ def blamed(study: Study, folder: Path, culprit: Culprit, forecast: Forecast) -> 
         put(place / name, partial(_written, content))
     return FatalMemberError(
         f"{words} ended every process that solved it, so the run cannot come to its end. Please report it with {place / FILE}, which "
-        "solves this member alone; everything else that was done is kept."
+        "solves this member alone; everything else that was done is kept.",
+        block,
+        which,
     )
 
 
@@ -36,7 +42,7 @@ class Member:
     """One member: its inputs by name, and its absolute tolerances by state."""
 
     def __init__(self, culprit: Culprit, forecast: Forecast) -> None:
-        rows = forecast.design.draw(Block(culprit.replicate, culprit.row, 1), forecast.inputs)
+        rows = forecast.design.draw(Block(culprit.replicate, culprit.row or 0, 1), forecast.inputs)
         x, names = forecast.taken(rows)[culprit.solve or 0], forecast.compiled.code.inputs
         self.values = dict(zip(names, map(float, x), strict=True))
         states, absolute = forecast.compiled.code.states, forecast.settings.absolute

@@ -3,11 +3,12 @@
 from __future__ import annotations
 
 import time
-from collections.abc import Iterable, Mapping
+from collections.abc import Mapping
 from typing import Any
 
 from uq.errors import ClusterError, Interrupted, UseMistake
 from uq.running.abroad import Made, asking, unlike
+from uq.running.answering import ANSWERED_WITHIN, answered, each_answer
 from uq.running.facts import made_with
 from uq.running.fleet import Fleet
 from uq.running.observer import Observer
@@ -18,13 +19,14 @@ LOOKED_EVERY = 1.0
 
 
 class Muster:
-    """Asks every worker once what it works with, and knows those that are fit."""
+    """Asks every worker once what it works with, and knows those that are fit; one that gives no answer gets nothing to solve."""
 
     def __init__(self, client: Any, fleet: Fleet) -> None:
         self._client, self._fleet = client, fleet
         self.made: Made = made_with()
         self.cores = 0
         self.fit: set[str] = set()
+        self.silent: set[str] = set()
         self._strange: dict[str, str] = {}
         self._looked = self._seen = time.monotonic()
         self._began = False
@@ -53,7 +55,10 @@ class Muster:
         if self._client.status != "running":
             raise ClusterError("the scheduler of the cluster was lost")
         threads: Mapping[str, int] = self._client.nthreads()
-        new = [address for address in threads if address not in self.fit and address not in self._strange]
+        self.silent &= set(threads)
+        # One that hangs is asked again only where there is nobody else.
+        known = {*self.fit, *self._strange, *(self.silent if self.fit else ())}
+        new = [address for address in threads if address not in known]
         if new:
             self._ask(new, observer)
         self.fit &= set(threads)
@@ -66,12 +71,21 @@ class Muster:
             raise ClusterError(f"no worker of {self._fleet.words} is left that could solve ({waited}{self._told_strange()})")
 
     def _told_strange(self) -> str:
-        return "".join(f"; refused: {address} with {words}" for address, words in self._strange.items())
+        told = "".join(f"; refused: {address} with {words}" for address, words in self._strange.items())
+        return told + "".join(f"; no answer within {ANSWERED_WITHIN:g} s: {address}" for address in sorted(self.silent))
 
-    def _ask(self, addresses: Iterable[str], observer: Observer) -> None:
-        found = self._answers(list(addresses))
+    def again(self, observer: Observer) -> None:
+        """Asks those that are fit once more, where one of them seems to hang. Raises ClusterError where none answers."""
+        every, self.fit = sorted(self.fit), set()
+        self._ask(every, observer)
+        if not self.fit:
+            raise ClusterError(f"no worker of {self._fleet.words} answers{self._told_strange()}; end those that hang")
+
+    def _ask(self, addresses: list[str], observer: Observer) -> None:
+        found = self._answers(addresses, observer)
         strange = {address: words for address, made in found.items() if (words := unlike(self.made, made))}
         self.fit |= set(found) - set(strange)
+        self.silent -= set(found)
         self._strange |= strange
         if not strange:
             return
@@ -81,14 +95,29 @@ class Muster:
             raise UseMistake(f"workers with something else: {every}", "workers with the same as this uq", remedy, "cluster")
         observer.stage(f"workers that work with something else are left out: {every}")
 
-    def _answers(self, addresses: list[str]) -> dict[str, Made]:
-        """What workers work with; those that have gone meanwhile are left out."""
-        told = self._client.get_versions()["workers"]
-        python = {address: str(told[address]["packages"]["python"]) for address in addresses if address in told}
+    def _answers(self, addresses: list[str], observer: Observer) -> dict[str, Made]:
+        """What workers work with; those that have gone meanwhile, or hang, are left out."""
+        patience = ANSWERED_WITHIN
+
+        async def every() -> dict[str, Made | None]:
+            return await each_answer(self._made_of, addresses, patience)
+
+        # One that hangs is told by itself; twice as long is for a scheduler that does.
+        answers = answered(self._client, every, 2 * patience, observer)
+        silent = [address for address, made in answers.items() if made is None and address in self._client.nthreads()]
+        if silent:
+            self.silent |= set(silent)
+            observer.stage(f"workers that give no answer within {patience:g} s get nothing to solve: {', '.join(silent)}")
+        return {address: made for address, made in answers.items() if made}
+
+    async def _made_of(self, address: str) -> Made:
+        """What one worker works with; empty where it has gone."""
+        told = await self._client.scheduler.broadcast(msg={"op": "versions"}, workers=[address], on_error="ignore")
+        if address not in told:
+            return {}
+        python = str(told[address]["packages"]["python"])
         # A function cannot be sent to another Python.
-        same = [address for address, version in python.items() if version.startswith(f"{self.made['python']}.")]
-        found: dict[str, Made] = {address: {"uq": "?", "python": python[address]} for address in python if address not in same}
-        if same:
-            answers = self._client.run(asking(self.made["uq"]), workers=same, on_error="return")
-            found |= {address: answer for address, answer in answers.items() if isinstance(answer, dict)}
-        return found
+        if not python.startswith(f"{self.made['python']}."):
+            return {"uq": "?", "python": python}
+        answers = await self._client.run(asking(self.made["uq"]), workers=[address], on_error="return")
+        return answer if isinstance(answer := answers.get(address), dict) else {}

@@ -74,6 +74,21 @@ class Listener(Protocol):
     def round(self, members: int, answers: Sequence[HeadlineAnswer]) -> None: ...
 
 
+@runtime_checkable
+class Placed(Protocol):
+    """An observer that also has a method `placed` hears where something has happened: the block, and the member where it is known."""
+
+    def placed(self, words: str, block: str, member: str = "") -> None: ...
+
+
+def tell_of(observer: Observer, words: str, block: str) -> None:
+    """Tells of something that happened to a block."""
+    if isinstance(observer, Placed):
+        observer.placed(words, block)
+    else:
+        observer.stage(f"block {block}: {words}")
+
+
 @dataclass
 class Silent:
     """An observer that says nothing; `stop` works."""

@@ -26,9 +26,10 @@ from uq.design.design import Design
 from uq.inputs.inputs import Inputs
 from uq.model.code import Code
 from uq.running.block import Forecast, part_of
-from uq.running.meter import Meter
+from uq.running.meter import Count, Meter
 from uq.running.observer import Silent
 from uq.running.part import Gathering, Part
+from uq.running.pilot import Found, sought
 from uq.running.tasks import Task, inner_rows
 from uq.solve.batch import Settings
 from uq.solve.compile import compile_code
@@ -103,13 +104,20 @@ def solved_here(key: str, content: bytes, task: Task, stop: NDArray[np.uint8]) -
     """A task worked on where this is called; None of members that are solved for trial. Raises Interrupted where `stop` is set."""
     forecast, observer = READY.forecast(key, content), Silent(stop)
     if task.solves is not None:
-        x = forecast.design.draw(task.block, forecast.inputs)
-        forecast.solved(x[slice(*task.solves)], observer)
+        x, (first, last) = forecast.design.draw(task.block, forecast.inputs), task.solves
+        # All rows of A, then all of B, and so on.
+        forecast.solved(x[first * task.block.count : last * task.block.count], observer)
         return None
     meter, gathering = Meter(0, observer, perf_counter), Gathering()
-    for block in inner_blocks(task.block, inner_rows(forecast.shape)):
-        gathering.add("", part_of(forecast, block, meter, observer))
+    for each in task.blocks:
+        for block in inner_blocks(each, inner_rows(forecast.shape)):
+            gathering.add("", part_of(forecast, block, meter, observer))
     return gathering.take()[""]
+
+
+def piloted_here(key: str, content: bytes, stop: NDArray[np.uint8]) -> tuple[Found, Count]:
+    """The pilot of a forecast, solved where this is called. Raises Interrupted where `stop` is set."""
+    return sought(READY.forecast(key, content), perf_counter, Silent(stop))
 
 
 def inner_blocks(block: Block, rows: int) -> Iterator[Block]:

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping
+from collections.abc import Callable, Mapping
 from dataclasses import dataclass, fields, replace
 
 import numpy as np
@@ -13,11 +13,13 @@ from uq.analysis.pilot import pilot_ask
 from uq.design.design import Design
 from uq.inputs.inputs import Inputs
 from uq.running.block import Arrays, Forecast, counted
-from uq.running.meter import Meter
+from uq.running.meter import Count, Meter
 from uq.running.observer import Observer
 from uq.running.threads import aside
 from uq.solve.batch import Batch
 from uq.solve.scales import pilot_scales
+
+PILOT_ROWS = 16
 
 
 @dataclass(frozen=True, eq=False)
@@ -64,18 +66,25 @@ class Pilot:
 
 
 def piloted(forecast: Forecast, meter: Meter, observer: Observer) -> Pilot:
-    """Solves the pilot (the first 16 A rows of every replicate) and the nominal member; the meter hears how long a solve takes."""
-    x = forecast.inputs.values(forecast.design.pilot())
+    """Solves the pilot (the first PILOT_ROWS A rows of every replicate) and the nominal member; the meter hears how long a solve takes."""
+    found, count = sought(forecast, meter.now, observer)
+    # These rows are solved again in their blocks, so they only set the pace.
+    meter.pace(count)
+    return completed(forecast, found)
+
+
+def sought(forecast: Forecast, now: Callable[[], float], observer: Observer) -> tuple[Found, Count]:
+    """What the pilot finds, and what its members took. now: the clock, in seconds."""
+    x = forecast.inputs.values(forecast.design.pilot(PILOT_ROWS))
     times, start, taken = forecast.ask.solved_times, forecast.start, forecast.taken(x)
     scales, names = aside(lambda: pilot_scales(forecast.compiled, taken, times, start, forecast.settings, observer.stop), observer)
     scaled = replace(forecast, settings=replace(forecast.settings, scales=scales))
-    begin = meter.now()
+    begin = now()
     batch = aside(lambda: scaled.solved(x, observer), observer)
-    # These rows are solved again in their blocks, so they only set the pace.
-    meter.pace(counted(batch, 0, meter.now() - begin))
+    count = counted(batch, 0, now() - begin)
     nominal = aside(lambda: scaled.solved(forecast.inputs.medians()[None, :], observer), observer)
     fell_back = np.isin(np.array(forecast.compiled.code.states), np.array(names, dtype=np.str_))
-    return completed(forecast, Found(scales, fell_back, batch, nominal))
+    return Found(scales, fell_back, batch, nominal), count
 
 
 def completed(forecast: Forecast, found: Found) -> Pilot:

@@ -14,7 +14,7 @@ from uq.running.history import history_arrays, history_of
 from uq.running.keeping import PART, PILOT, Alike, Checkpoints, Keeper
 from uq.running.meter import Count
 from uq.running.part import Parts, below, parts_of, saved_of, together
-from uq.running.pilot import Found, completed, piloted
+from uq.running.pilot import Found, completed
 from uq.running.rounds import Crew
 from uq.running.setup import design_of
 from uq.running.start import Start
@@ -90,7 +90,7 @@ def branches_of(forecasts: Mapping[str, Forecast], keeper: Keeper, crew: Crew, b
         if arrays:
             pilot = completed(forecast, Found.of_arrays(arrays))
         else:
-            pilot = piloted(forecast, crew.meter, crew.observer)
+            pilot = crew.hands.pilot(name, forecast, crew)
             keeper.keep(part, Saved(pilot.found.arrays()))
         found.append(Branch(name, pilot))
     return tuple(found)

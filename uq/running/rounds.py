@@ -22,6 +22,7 @@ from uq.running.meter import Meter
 from uq.running.observer import Observer
 from uq.running.pace import block_rows
 from uq.running.part import Part, Parts
+from uq.running.pilot import Pilot, piloted
 from uq.running.threads import all_cores, threads
 
 Work = Callable[[Block], Part]
@@ -62,6 +63,9 @@ class Hands(Protocol):
     def rows(self, forecast: Forecast, rows: int, crew: Crew) -> int:
         """Rows of a block, a power of two, in a round of so many rows of every replicate."""
 
+    def pilot(self, name: str, forecast: Forecast, crew: Crew) -> Pilot:
+        """The pilot of a branch, solved. Raises as `solve`."""
+
     def solve(self, tasks: Sequence[Task], forecasts: Mapping[str, Forecast], brought: Brought, crew: Crew) -> None:
         """Solves blocks of branches by name, tells the meter, and hands each part to `brought`. Raises Interrupted where it is stopped."""
 
@@ -76,6 +80,9 @@ class Here:
 
     def rows(self, forecast: Forecast, rows: int, crew: Crew) -> int:
         return block_rows(forecast.shape, crew.meter.seconds_per_solve, rows, forecast.design.replicates, crew.spread.workers)
+
+    def pilot(self, name: str, forecast: Forecast, crew: Crew) -> Pilot:
+        return piloted(forecast, crew.meter, crew.observer)
 
     def solve(self, tasks: Sequence[Task], forecasts: Mapping[str, Forecast], brought: Brought, crew: Crew) -> None:
         works = {name: partial(part_of, forecast, meter=crew.meter, observer=crew.observer) for name, forecast in forecasts.items()}
@@ -127,7 +134,14 @@ def solve_blocks(tasks: Sequence[Task], works: Mapping[str, Work], brought: Brou
     """
 
     def one(name: str, block: Block) -> None:
-        brought(name, works[name](block))
+        try:
+            part = works[name](block)
+        except Exception as error:
+            error.add_note(
+                f"in the block of replicate {block.replicate}, rows {block.first} to {block.first + block.count - 1}, of branch {name!r}"
+            )
+            raise
+        brought(name, part)
 
     with threads(crew.spread.workers, crew.observer) as pool:
         _spread_out([(one, name, block) for name, block in tasks], pool)
