@@ -3,7 +3,6 @@
 from __future__ import annotations
 
 import math
-import time
 
 import pytest
 from hypothesis import assume, given, settings
@@ -139,9 +138,9 @@ def test_sixteen_nested_terms_cost_nothing() -> None:
     node = graph.name("x")
     for _ in range(16):
         node = graph.apply("*", graph.apply("exp", graph.apply("neg", node)), graph.apply("+", node, graph.apply("sin", node)))
-    started = time.perf_counter()
+    before = len(graph.nodes)
     slope = derivative(graph, node, "x")
-    assert time.perf_counter() - started < 0.1
+    assert len(graph.nodes) - before < 400
     assert len(graph.order((slope,))) < 400
     assert close(evaluate(graph, slope, VALUES, digits=60), difference(graph, node, VALUES["x"]))
 

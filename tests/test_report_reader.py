@@ -26,7 +26,7 @@ from tests.made_results import (
 from uq.analysis.ask import LimitAsked
 from uq.analysis.finding import Finding
 from uq.inputs.dependence import Dependence
-from uq.inputs.inputs import Inputs
+from uq.inputs.inputs import Input, Inputs
 from uq.report.answers import Estimate
 from uq.report.chances import one_in
 from uq.report.plain import Table, laid, width
@@ -60,6 +60,17 @@ def test_inputs_of_one_group_or_source_are_probably_dependent(tmp_path: Path) ->
     items = tuple(replace(each, group="", source="The same  Table") for each in INPUTS.items[1:3])
     told = words(summary(made_result(tmp_path / "source", made_study(inputs=Inputs((INPUTS.items[0], *items, INPUTS.items[3]))))))
     assert 'Probably not independent: Frequency factor and "Heat loss, cooling off" (same source, "The same Table").' in told
+
+
+def test_entries_of_one_declaration_are_not_called_dependent_by_what_is_said_of_all_of_them(tmp_path: Path) -> None:
+    def told(folder: str, *items: Input) -> str:
+        return words(summary(made_result(tmp_path / folder, made_study(inputs=Inputs((*items, INPUTS.items[3]))))))
+
+    first = INPUTS.items[0]
+    entries = [replace(first, name=f"heat[{i}]", label=f"Heat [{i}]", group="", source="Calorimetry") for i in range(3)]
+    assert "Calorimetry" not in told("alone", *entries)
+    other = replace(first, name="loss", label="Loss", group="", source="Calorimetry")
+    assert 'Probably not independent: Heat and Loss (same source, "Calorimetry")' in told("with", *entries[:2], other)
 
 
 def test_until_when_the_accepted_probability_is_kept(tmp_path: Path) -> None:

@@ -203,3 +203,16 @@ def test_observed_terms_and_conditions() -> None:
     assert batch.conditions.dtype == np.int8
     assert batch.conditions[:, 0].tolist() == [[True, True, False], [True, True, False]]
     assert batch.conditions[:, 1].tolist() == [[False, True, False], [False, True, False]]
+
+
+@pytest.mark.parametrize(("method", "accuracy"), [("explicit54", 1e-6), ("explicit853", 1e-8), ("explicit853", 1e-10)])
+def test_between_steps_whose_length_stability_sets_values_are_as_good_as_at_their_ends(method: str, accuracy: float) -> None:
+    # x follows cos t more and more closely; exact solution by variation of constants
+    x = np.column_stack([10.0 ** np.linspace(0.0, 2.5, 60), np.ones(60)])
+    times = np.linspace(0.0, 20.0, 2001)
+    batch = solved(one_state(lambda x, k, t: -k * (x - t.cos())), x, times, accuracy, method=method)
+    k = x[:, :1]
+    follows = (k * k * np.cos(times) + k * np.sin(times)) / (1 + k * k)
+    error = np.abs(batch.values[:, 0] - follows - np.exp(-k * times) / (1 + k * k))
+    assert np.all(batch.steps[-10:] > 20 * 50 / 8), "stability sets the steps of the last ones"
+    assert error.max() < 4 * accuracy

@@ -39,6 +39,7 @@ APPLY: dict[str, Any] = {
     "where": np.where,
     "max": np.maximum,
     "min": np.minimum,
+    "ln": np.log,
     **{name: getattr(np, name) for name in ("exp", "sqrt", "sin", "cos", "abs")},
 }
 
@@ -106,7 +107,7 @@ def ever_by(name: str, limit: int) -> list[float]:
     return [float(condition[study.times.solved <= by].any(axis=0).mean()) for by in study.limits_asked[limit].by]
 
 
-@pytest.mark.parametrize("name", [*NAMES, "cell-module"])
+@pytest.mark.parametrize("name", [*NAMES, "cell-module", "bench-clock", "regional-capital"])
 def test_everything_that_a_reviewer_asks_for_is_filled_in(name: str) -> None:
     study = demo(name)
     assert study.warnings == ()
@@ -248,3 +249,71 @@ def test_cell_module_is_that_of_another_solver_and_its_answers_are_open(tmp_path
         # A front that rises by hundreds of kelvin in seconds turns an error in its moment into one in kelvin.
         assert np.max(np.abs(apart)) < 1
         assert np.sqrt(np.mean(apart**2)) < 0.03
+
+
+def clock_by_hand(inputs: dict[str, Any], y: Any) -> Any:
+    """The rates of the eleven species, reaction by reaction: the products less the reactants."""
+    bromate, bromide, hbro2, hobr, br2, bro2, ce3, ce4, ma, brma, radical = y
+    change = dict.fromkeys(("bromate", "bromide", "hbro2", "hobr", "br2", "bro2", "ce3", "ce4", "ma", "brma", "radical"), 0.0)
+    for rate, text in (
+        (inputs["k1"] * bromate * bromide - 3.2 * hbro2 * hobr, "bromate bromide > hbro2 hobr"),
+        (inputs["k2"] * hbro2 * bromide, "hbro2 bromide > hobr hobr"),
+        (8e9 * hobr * bromide - 110 * br2, "hobr bromide > br2"),
+        (3e3 * hbro2 * hbro2, "hbro2 hbro2 > bromate hobr"),
+        (inputs["k5"] * bromate * hbro2 - 4.2e7 * bro2 * bro2, "bromate hbro2 > bro2 bro2"),
+        (8e4 * bro2 * ce3 - 8.9e3 * hbro2 * ce4, "bro2 ce3 > hbro2 ce4"),
+        (29 * ma * br2, "ma br2 > brma bromide"),
+        (inputs["k8"] * ma * ce4, "ma ce4 > radical ce3"),
+        (inputs["k9"] * brma * ce4, "brma ce4 > bromide ce3"),
+        (3.2e9 * radical * radical, "radical radical > ma"),
+        (inputs["k11"] * radical * brma, "radical brma > ma bromide"),
+    ):
+        before, after = text.split(" > ")
+        for name in before.split():
+            change[name] -= rate
+        for name in after.split():
+            change[name] += rate
+    return np.array(list(change.values()))
+
+
+def test_bench_clock_against_the_same_by_hand() -> None:
+    study = demo("bench-clock")
+    inputs = {"k1": 2.1, "k2": 2.9e6, "k5": 41.0, "k8": 0.24, "k9": 0.1, "k11": 2e4, "cerium": 1e-3}
+    y = np.array([0.1, 3e-6, 2e-7, 1e-8, 1e-6, 3e-8, 8e-4, 2e-4, 0.09, 0.03, 1e-9])
+    leaves = {**inputs, **dict(zip(study.equations.states, [*y, 3.0], strict=True))}
+    found = np.array(evaluate(study, study.equations.rates, leaves))
+    expected = clock_by_hand(inputs, y)
+    assert found[:11] == pytest.approx(expected, rel=1e-12)
+    east, north = np.log(y[1] / 5e-7), np.log(y[7] / 1.5e-4)
+    turn = (north * expected[1] / y[1] - east * expected[7] / y[7]) / (east**2 + north**2) / (2 * np.pi)
+    assert found[11] == pytest.approx(turn, rel=1e-12)
+
+
+def test_bench_clock_is_that_of_another_solver_and_counts_what_can_be_counted(tmp_path: Path) -> None:
+    changes = {"plan.members": 512, "plan.ask": ["bands", "limits", "outcomes"], "plan.accuracy": 1e-6}
+    result = uq.run(demo("bench-clock").with_changes(changes), tmp_path / "out", threads=1)
+    assert 0.2 < result.limits["fast"].ever_by.values[-1] < 0.8
+    assert 110 < result.outcomes["period"].quantiles.sel(quantile=0.5) < 170
+    yellow, turns = (result.members["watched"][name].values for name in ("yellow", "turns"))
+    seen = ((yellow[:, 1:] > 0.2) & (yellow[:, :-1] <= 0.2)).sum(axis=1)
+    assert np.all(np.abs(seen - turns[:, -1]) < 1)
+    inputs = {name: result.members["inputs"][name].values[3] for name in result.members["inputs"]}
+    start = [inputs["bromate"], 1e-5, 0, 0, 0, 0, inputs["cerium"] - 1e-8, 1e-8, inputs["malonic"], inputs["brominated"], 0]
+    times = result["time"].values[:61]  # 300 s: two oscillations
+    found = solve_ivp(lambda _, y: clock_by_hand(inputs, y), (0, times[-1]), start, "LSODA", times, rtol=1e-8, atol=1e-14)
+    assert np.max(np.abs(found.y[7] / inputs["cerium"] - yellow[3, :61])) < 1e-3
+
+
+def test_regional_capital_is_its_closed_form_and_its_answers_are_open(tmp_path: Path) -> None:
+    # k^(1 - share) is linear with an exponential inhomogeneity: Solow (1956); Bernoulli's equation
+    result = uq.run(
+        demo("regional-capital").with_changes({"plan.members": 512, "plan.ask": ["bands", "limits"]}), tmp_path / "out", threads=1
+    )
+    assert 0.2 < result.limits["level_with"].ever_by.values[1] < 0.8
+    assert 0.02 < result.limits["too_much"].ever_by.values[-1] < 0.2
+    x = {name: result.members["inputs"][name].values[:, None] for name in result.members["inputs"]}
+    time, rest = result["time"].values, 1 - x["share"]
+    thinning, built = rest * (x["people"] + x["wear"]), x["saving"] * 24000 * 60000 ** -x["share"]
+    grown = rest * built * (np.exp(x["progress"] * time) - np.exp(-thinning * time)) / (x["progress"] + thinning)
+    exact = (x["capital_start"] ** rest * np.exp(-thinning * time) + grown) ** (1 / rest)
+    assert np.max(np.abs(result.members["watched"]["capital"].values / exact - 1)) < 3e-5

@@ -46,6 +46,8 @@ class Choice(IntEnum):
     calm = 2  # explicit steps since then that were not; of the stiff method, steps one after another that explicit ones could do as well
     needed = 3  # how much suspicion makes the member stiff
     stayed = 4  # accepted steps since the member became stiff
+    since = 5  # when that was
+    before = 6  # how long its last explicit step was
 
 
 class StiffColumn(IntEnum):

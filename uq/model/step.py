@@ -125,7 +125,8 @@ class Step(Attempt):
         last = pair.padded(pair.a[-1])
         apart = tuple(b - a for b, a in zip(last, pair.padded(pair.a[-2]), strict=True))
         stretch = self.weighed(lambda i: w.minus(self.k[-1].get(i), self.k[-2].get(i)))
-        mask = suspicion.judge(due, stretch, self.weighed(lambda i: self.combination(apart, i, self.k)))
+        distance = self.weighed(lambda i: self.combination(apart, i, self.k))
+        mask = suspicion.judge(due, stretch, distance, (self.time_new, self.h))
         inside = w.block
         w.join("judged")
         return w.add(f"phi i64 [ 0, %{before} ], [ {mask}, %{inside} ]")

@@ -10,6 +10,7 @@ from uq.model.expressions import needed
 from uq.model.jacobian import Jacobian
 from uq.model.layout import Choice
 from uq.model.rosenbrock import Rosenbrock
+from uq.model.rosenbrock5 import ROSENBROCK5
 from uq.model.sparse import Elimination, Envelope, elimination, envelope
 
 # Multiplications of an elimination that is written out; beyond, it goes row by row in loops.
@@ -19,6 +20,7 @@ LARGEST_ROOM = 65_536
 # Operations of the Jacobian, which are always written out, and its distinct entries: so many compile in about ten seconds. (100 states
 # that depend on all others, each in a way of its own, have 40300.)
 LARGEST_JACOBIAN, MOST_VALUES = 41_000, 20_000
+FEW = 4
 # What an operation takes, in additions: throughputs of AVX-512 and AVX2, and the table of elementary functions in DEVELOPERS.md.
 COSTS = {"/": 12.0, "sqrt": 16.0, "**": 60.0, "atan2": 40.0, "mod": 30.0, "table": 20.0, "table_slope": 20.0}
 PLAIN = frozenset(("+", "-", "*", "neg", "<", "<=", ">", ">=", "and", "or", "not", "where", "abs", "min", "max"))
@@ -42,6 +44,17 @@ class Stiff:
         places = jacobian.places
         plan = elimination(jacobian.size, places, LARGEST_WRITTEN_OUT) or envelope(jacobian.size, places)
         return cls(method, jacobian, plan) if plan.entries <= LARGEST_ROOM else None
+
+    @classmethod
+    def too_large(cls, equations: Equations) -> bool:
+        """Whether a model is too large for stiff steps; only a model that may be is differentiated, which then takes seconds."""
+        graph, states = equations.graph, frozenset(equations.states)
+        parts = [(len(graph.leaves(rate) & states), len(needed((rate,), {}))) for rate in equations.rates]
+        entries = sum(places for places, _ in parts)
+        # a derivative takes a few times the operations of what is differentiated
+        operations = FEW * sum(places * size for places, size in parts)
+        small = entries <= MOST_VALUES and operations <= LARGEST_JACOBIAN and len(states) ** 2 <= LARGEST_ROOM
+        return not small and cls.of(equations, ROSENBROCK5) is None
 
     @property
     def curve_parts(self) -> int:

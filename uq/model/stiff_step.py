@@ -144,7 +144,7 @@ class StiffStep(Attempt):
 
     def wishes(self) -> str | None:
         """The lanes that would rather go on explicitly, shifted to their byte."""
-        return Return(self.plan, self.w).write(self.accepted, self.next) if self.plan.switching else None
+        return Return(self.plan, self.w).write(self.accepted, self.next, self.time_new) if self.plan.switching else None
 
     def curve(self) -> None:
         """The coefficients of the extension in the form of an explicit pair's (see `uq.model.pair`): x, D, m1, m2 + m3, -m3.

@@ -4,7 +4,8 @@ An explicit step whose length stability sets and not accuracy has h |lambda| nea
 dominant eigenvalue is found from its last two stages, both at the end of the step: |k - k'| / |u - u'| (Hairer, Wanner, Solving ODEs II,
 IV.2). After many such steps, not interrupted by others, the member goes on with stiff steps. It comes back where the explicit steps that
 stability allows are not much shorter than the stiff ones, as much as these cost more: the spectral radius of J is found by the power
-method, one multiplication in every step. Who comes back soon needs longer to become stiff again.
+method, one multiplication in every step. Who comes back from stiff steps that cost more than explicit ones of the length before would have
+needs longer to become stiff again.
 """
 
 from __future__ import annotations
@@ -22,13 +23,16 @@ from uq.model.writer import ONE, ZERO, I, V, Writer, constant
 REGION = {"explicit54": 3.3, "explicit853": 6.1}
 SUSPECT = {"explicit54": 2.6, "explicit853": 4.6}
 # Without suspicion only every so many steps are looked at.
-EVERY = 8.0
+EVERY = 4.0
 # So many suspected steps make a member stiff; more of others than CALM in a row clear it.
-NEEDED, CALM = 5.0, 6.0
-# A member that comes back after fewer steps than SHORT needs LONGER times as much suspicion the next time.
-SHORT, LONGER = 12.0, 4.0
+NEEDED, CALM = 4.0, 6.0
+# A new member is looked at in each of its first so many steps, and counts as suspected so often before: a short run must not spend half of
+# itself on this.
+WATCHED, FRESH = 16.0, 2.0
+# A member whose stiff steps did not pay needs LONGER times as much suspicion the next time.
+LONGER = 4.0
 # A member stays stiff for SETTLE steps at least, and comes back after BACK in a row that explicit ones could do at PART of the cost.
-SETTLE, BACK, PART = 3.0, 3.0, 0.5
+SETTLE, BACK, PART = 3.0, 3.0, 0.7
 # The squared length of a direction from where on it is one: far from what cannot be squared.
 SMALLEST = 1e-200
 # How much of all states every direction has.
@@ -50,8 +54,9 @@ def slot(plan: Plan, which: Choice) -> int:
 
 def begin(plan: Plan, w: Writer) -> None:
     """What a member begins with: no suspicion, and a direction."""
+    first = {Choice.needed: NEEDED, Choice.suspicion: FRESH, Choice.calm: CALM - WATCHED}
     for which in Choice:
-        w.store(L, slot(plan, which), constant(NEEDED) if which == Choice.needed else ZERO)
+        w.store(L, slot(plan, which), constant(first.get(which, 0.0)))
     hint, direction = Memory(w, S, plan.layout.first_hint), Memory(w, L, plan.layout.first_direction)
     w.loop(plan.layout.states, lambda i: direction.put(i, hint.get(i)))
 
@@ -69,8 +74,11 @@ class Suspicion:
         suspected = w.compare("ogt", w.load(L, slot(self._plan, Choice.suspicion)), ZERO)
         return w.both(accepted, w.either(w.compare("oeq", rounded, count), suspected))
 
-    def judge(self, due: str, stretch: str, distance: str) -> str:
-        """Note what the step says, from the sums of squares of k - k' and (u - u') / h; the lanes that become stiff, in their byte."""
+    def judge(self, due: str, stretch: str, distance: str, now: tuple[str, str]) -> str:
+        """Note what the step says, from the sums of squares of k - k' and (u - u') / h; the lanes that become stiff, in their byte.
+
+        now: the time after the step and its length, which are remembered in these.
+        """
         w, plan = self._w, self._plan
         limit = SUSPECT[plan.pair.name]
         suspect = w.compare("ogt", stretch, w.times(constant(limit * limit), distance))
@@ -80,7 +88,8 @@ class Suspicion:
         stiff = w.both(due, w.compare("oge", suspicion, w.load(L, slot(plan, Choice.needed))))
         w.set_if(L, slot(plan, Choice.calm), due, w.select(stiff, ZERO, calm))
         w.set_if(L, slot(plan, Choice.suspicion), due, w.select(stiff, ZERO, suspicion))
-        w.set_if(L, slot(plan, Choice.stayed), stiff, ZERO)
+        for which, value in zip((Choice.stayed, Choice.since, Choice.before), (ZERO, *now), strict=True):
+            w.set_if(L, slot(plan, which), stiff, value)
         return w.add(f"shl i64 {w.mask(stiff)}, 16")
 
 
@@ -90,8 +99,8 @@ class Return:
     def __init__(self, plan: Plan, w: Writer) -> None:
         self._plan, self._w = plan, w
 
-    def write(self, accepted: str, proposed: str) -> str:
-        """Turn the direction, note what the step says; returns the lanes that go back, shifted to their byte."""
+    def write(self, accepted: str, proposed: str, time: str) -> str:
+        """Turn the direction, note what the step to a time says; returns the lanes that go back, shifted to their byte."""
         w, plan = self._w, self._plan
         before, after = self._turn()
         # h rho, squared, without a root or a quotient: they would take a tenth of the step
@@ -106,8 +115,10 @@ class Return:
         w.set_if(L, slot(plan, Choice.calm), accepted, w.select(back, ZERO, calm))
         w.branch(w.any(back), "back", "stay")
         needed = w.load(L, slot(plan, Choice.needed))
-        soon = w.select(w.compare("olt", stayed, constant(SHORT)), w.times(needed, constant(LONGER)), constant(NEEDED))
-        w.set_if(L, slot(plan, Choice.needed), back, soon)
+        since, length = (w.load(L, slot(plan, which)) for which in (Choice.since, Choice.before))
+        cost = w.times(w.times(stayed, constant(cost_ratio(plan))), length)
+        paid = w.compare("ogt", w.minus(time, since), cost)
+        w.set_if(L, slot(plan, Choice.needed), back, w.select(paid, constant(NEEDED), w.times(needed, constant(LONGER))))
         allowed = w.times(constant(0.9 * REGION[plan.pair.name]), w.root(w.over(before, after)))
         w.store(L, Head.step, w.select(back, w.smaller(allowed, proposed), proposed))
         w.join("stay")

@@ -151,7 +151,10 @@ def _as_stated(head: Headline) -> Iterable[str]:
 
 
 def _alike(head: Headline) -> Iterable[tuple[str, str]]:
-    """Inputs of one group or of one source of which some go together with no other of these."""
+    """Inputs of one group or of one source of which some go together with no other of these.
+
+    Entries of one declaration count as one: one text for all says nothing of how they go together.
+    """
     told: list[set[str]] = []
     for kind in ("group", "source"):
         by_text: dict[str, list[InputRow]] = {}
@@ -160,11 +163,22 @@ def _alike(head: Headline) -> Iterable[tuple[str, str]]:
         for text, rows in by_text.items():
             names = {row.name for row in rows}
             linked = {each.name for pair in head.pairs for each in (pair.one, pair.other) if {pair.one.name, pair.other.name} <= names}
-            if not text or len(rows) < 2 or names <= linked or any(names <= before for before in told):
+            declared = {declaration(row.name): row for row in reversed(rows)}
+            if not text or len(declared) < 2 or names <= linked or any(names <= before for before in told):
                 continue
             told.append(names)
             why = f"group {rows[0].group}" if kind == "group" else f'same source, "{rows[0].source.strip()}"'
-            yield _and(row.label for row in rows), why
+            yield _and(_of_all_entries(row) for row in reversed(declared.values())), why
+
+
+def declaration(name: str) -> str:
+    """What an input is declared as: all entries of T[0], T[1], ... as T."""
+    return name.partition("[")[0]
+
+
+def _of_all_entries(row: InputRow) -> str:
+    """The label of a declaration, without which entry."""
+    return row.label.removesuffix(row.name.removeprefix(declaration(row.name))).rstrip()
 
 
 def _and(labels: Iterable[str]) -> str:

@@ -6,7 +6,9 @@ from collections.abc import Iterable, Iterator
 
 from uq.inputs.inputs import Input, Inputs
 from uq.lang.tree import parts
+from uq.model.code import Equations
 from uq.model.moments import not_landed_on
+from uq.model.stiff import Stiff
 from uq.study.locate import Path
 from uq.study.names import differing_in_case
 from uq.study.plan import Plan
@@ -49,6 +51,16 @@ def _moments(work: Work, inputs: Inputs) -> Iterator[str]:
                 f"the rate of `{state}` changes at times that depend on {said}: the solver does not stop there, and what lasts less than "
                 "a two-hundredth of the whole time may be missed; where the times are known, make it a forcing"
             )
+
+
+def too_large_for_stiff(equations: Equations, plan: Plan) -> tuple[str, ...]:
+    """That members of a large model take explicit steps only, where each should take what it needs."""
+    if plan.solver != "auto" or not Stiff.too_large(equations):
+        return ()
+    return (
+        f"{len(equations.states)} states with all their derivatives are too large a model for stiff steps: all members take explicit ones, "
+        "so that a stiff one takes long or ends with the status `too_many_steps`",
+    )
 
 
 def remarks(inputs: Inputs, plan: Plan) -> tuple[str, ...]:

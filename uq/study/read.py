@@ -14,7 +14,7 @@ from uq.inputs.inputs import Inputs
 from uq.study import assemble
 from uq.study.changes import changed, fingerprint, paths_of
 from uq.study.columns import Files
-from uq.study.doubts import remarks, warnings
+from uq.study.doubts import remarks, too_large_for_stiff, warnings
 from uq.study.names import check_names, check_watch
 from uq.study.notes import Notes
 from uq.study.observations import Observations, observations
@@ -171,7 +171,7 @@ def _study(work: Work, plan: Plan, data: Files, observed: Observations, given: M
     if head is None or time is None:
         raise RuntimeError("a study without mistakes has a head and a time")
     times = assemble.solved_times(work, time, observed.made)
-    inputs = Inputs(tuple(work.inputs), work.dependence)
+    inputs, equations = Inputs(tuple(work.inputs), work.dependence), assemble.equations(work, times, time)
     return Study(
         **given,
         files=dict(data.used),
@@ -191,10 +191,10 @@ def _study(work: Work, plan: Plan, data: Files, observed: Observations, given: M
         plan=plan,
         measured=tuple(observed.made),
         own_units=sheets.own,
-        warnings=warnings(work, inputs, plan.watch),
+        warnings=(*warnings(work, inputs, plan.watch), *too_large_for_stiff(equations, plan)),
         remarks=(*data.said, *observed.said, *remarks(inputs, plan)),
         inputs=inputs,
-        equations=assemble.equations(work, times, time),
+        equations=equations,
         watched=tuple(work.watched),
         outcome_quantities=tuple(work.quantities),
         limits_asked=assemble.limits_asked(work, times, time),
