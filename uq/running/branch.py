@@ -19,7 +19,7 @@ from uq.study.study import Study
 
 # The name of the study itself among its branches.
 STUDY = ""
-FIRST_RUN = "preparing the solver, once on this machine (about half a minute)"
+FIRST_RUN = "preparing the solver, once on this machine (about three quarters of a minute)"
 
 
 @dataclass(frozen=True, eq=False)

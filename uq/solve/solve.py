@@ -29,7 +29,7 @@ def solve(compiled: Compiled, x: Floats, times: Floats, start: float, settings: 
     so may a pulse in time of another form, or at a time that depends on inputs, if it lasts less than about a two-hundredth of the whole
     time (such models take no step longer than LONGEST_PART of it): make it a forcing, or ask for more accuracy.
     Valid ranges are judged at the start, at the ends of steps and at `times`; what a state does between them is not looked at yet. A
-    state is outside where it is so by more than the pair's own error (3 absolute tolerances; 200 of 8(5,3), which is for small ones).
+    state is outside where it is so by more than the pair's own error (6 absolute tolerances; 200 of 8(5,3), which is for small ones).
     """
     batch = advance(compiled, x, times, start, settings, stop)
     _fill_outcomes(compiled, np.atleast_2d(np.asarray(x, dtype=np.float64)), np.asarray(times, dtype=np.float64), batch)
@@ -52,7 +52,7 @@ def advance(compiled: Compiled, x: Floats, times: Floats, start: float, settings
 
 
 def prepare() -> bool:
-    """Whether the kernel must still be compiled on this machine, which the first `solve` then does (up to half a minute)."""
+    """Whether the kernel must still be compiled on this machine, which the first `solve` then does."""
     from uq.solve.kernel import is_compiled
 
     return not is_compiled()
